@@ -21,11 +21,12 @@ internal static class BandCutOff
     {
         FiniteElementSpace space = problem.Space;
         bool[] obstacle = Obstacles(problem);
+        bool[] outside = InsideOfSecondDisc(space);
         var distance = new double[space.NodeCount];
         double gap = double.PositiveInfinity;
         for (int node = 0; node < space.NodeCount; node++)
         {
-            distance[node] = aperture.DistanceTo(space.Places[node]);
+            distance[node] = outside[node] ? double.PositiveInfinity : aperture.DistanceTo(space.Places[node]);
             if (obstacle[node])
             {
                 gap = Math.Min(gap, distance[node]);
@@ -73,6 +74,25 @@ internal static class BandCutOff
         }
 
         return obstacle;
+    }
+
+    // The second disc lies over the first in the plane; only the rim, which both share, is near anything.
+    private static bool[] InsideOfSecondDisc(FiniteElementSpace space)
+    {
+        var outside = new bool[space.NodeCount];
+        Array.Fill(outside, true);
+        for (int e = 0; e < space.ElementCount; e++)
+        {
+            if (space.Mesh.Regions[e] != Mesh.Exterior)
+            {
+                foreach (int node in space.NodesOf(e))
+                {
+                    outside[node] = false;
+                }
+            }
+        }
+
+        return outside;
     }
 
     private static List<Point> NearObstacles(FiniteElementSpace space, bool[] obstacle, double[] distance, double reach)
