@@ -1,0 +1,97 @@
+using PoleField.Beam;
+using PoleField.Cli.Case;
+using PoleField.Drawing;
+using PoleField.Geometry;
+using PoleField.Magnetostatics;
+using PoleField.Materials;
+
+namespace PoleField.Cli;
+
+/// <summary>The steps of a run, each a call into the library; tests replace single steps.</summary>
+internal sealed record Pipeline
+{
+    /// <summary>Drawing file to sketch; the unit overrides the drawing's own.</summary>
+    public required Func<Stream, string, LengthUnit?, Sketch> ReadSketch { get; init; }
+
+    /// <summary>Sketch to section.</summary>
+    public required Func<Sketch, SectionRequest, SectionReading> Cut { get; init; }
+
+    /// <summary>Built-in materials by name, air first.</summary>
+    public required Func<IReadOnlyList<Material>> Materials { get; init; }
+
+    /// <summary>Table of a magnetisation curve to material.</summary>
+    public required Func<Stream, string, Material> ReadMaterial { get; init; }
+
+    /// <summary>Magnet to field and report.</summary>
+    public required Func<Magnet, Aperture, SolveOptions, Action<SolveProgress>, CancellationToken, SolvedMagnet> Solve { get; init; }
+
+    /// <summary>|B| of a solved magnet at any place, T; null where the model ends.</summary>
+    public Func<SolvedMagnet, Func<Point, double?>> FieldOf { get; init; } = solved => place => solved.Solution.At(place)?.Magnitude;
+
+    /// <summary>Result to the result file's JSON.</summary>
+    public required Action<Stream, SolveResult> WriteResult { get; init; }
+
+    /// <summary>Pictures of a section and of a solved magnet; null as long as there are none.</summary>
+    public Func<LoadedCase, IReadOnlyList<NamedPicture>>? SectionPictures { get; init; }
+
+    /// <inheritdoc cref="SectionPictures"/>
+    public Func<SolveResult, IReadOnlyList<NamedPicture>>? ResultPictures { get; init; }
+
+    /// <summary>The library's own steps.</summary>
+    public static Pipeline OfLibrary() => new()
+    {
+        ReadSketch = ReadDxf,
+        Cut = CutSection,
+        Materials = BuiltInMaterials,
+        ReadMaterial = ReadCurve,
+        Solve = (magnet, aperture, options, progress, cancellation) =>
+            MagnetSolver.Solve(magnet, aperture, options, progress, cancellation),
+        WriteResult = WriteResultJson,
+    };
+
+    // seam: PoleField.Drawing.DxfReader.Read(stream, name, new DxfReadOptions { Unit = unit })
+    private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
+        throw new NotImplementedException("seam: DxfReader.Read");
+
+    // seam: PoleField.Drawing.Sectioning.Read(sketch, request)
+    private static SectionReading CutSection(Sketch sketch, SectionRequest request) =>
+        throw new NotImplementedException("seam: Sectioning.Read");
+
+    // seam: PoleField.Materials.MaterialLibrary; air first
+    private static IReadOnlyList<Material> BuiltInMaterials() => [Material.Air];
+
+    // seam: PoleField.Materials.MaterialFile.Read(stream, name)
+    private static Material ReadCurve(Stream stream, string name) =>
+        throw new NotImplementedException("seam: MaterialFile.Read");
+
+    // seam: PoleField.Output.ResultJson.Write(stream, ...)
+    private static void WriteResultJson(Stream stream, SolveResult result) =>
+        throw new NotImplementedException("seam: ResultJson.Write");
+}
+
+/// <summary>A picture to be written: file name with extension, and what writes it.</summary>
+internal sealed record NamedPicture(string FileName, Action<Stream> Write);
+
+/// <summary>A solved case with all that its result file says.</summary>
+internal sealed record SolveResult
+{
+    public required LoadedCase Case { get; init; }
+
+    public required SolvedMagnet Solved { get; init; }
+
+    public required IReadOnlyList<Verdict> Verdicts { get; init; }
+
+    public required IReadOnlyList<string> Cautions { get; init; }
+
+    /// <summary>Warnings of drawing and solve.</summary>
+    public required IReadOnlyList<Finding> Warnings { get; init; }
+
+    public required double ReadSeconds { get; init; }
+
+    public required double TotalSeconds { get; init; }
+
+    public required double PeakMemoryMegabytes { get; init; }
+
+    /// <summary>True when the asked accuracy was reached and every requirement met.</summary>
+    public bool AllMet => Solved.Record.AccuracyMet && Verdicts.All(v => v.Met);
+}
