@@ -49,9 +49,8 @@ internal sealed record Pipeline
         WriteResult = WriteResultJson,
     };
 
-    // seam: PoleField.Drawing.DxfReader.Read(stream, name, new DxfReadOptions { Unit = unit })
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
-        throw new NotImplementedException("seam: DxfReader.Read");
+        DxfReader.Read(stream, name, new DxfReadOptions { Unit = unit });
 
     // seam: PoleField.Drawing.Sectioning.Read(sketch, request)
     private static SectionReading CutSection(Sketch sketch, SectionRequest request) =>
@@ -60,9 +59,7 @@ internal sealed record Pipeline
     // seam: PoleField.Materials.MaterialLibrary; air first
     private static IReadOnlyList<Material> BuiltInMaterials() => [Material.Air];
 
-    // seam: PoleField.Materials.MaterialFile.Read(stream, name)
-    private static Material ReadCurve(Stream stream, string name) =>
-        throw new NotImplementedException("seam: MaterialFile.Read");
+    private static Material ReadCurve(Stream stream, string name) => MaterialFile.Read(stream, name);
 
     // seam: PoleField.Output.ResultJson.Write(stream, ...)
     private static void WriteResultJson(Stream stream, SolveResult result) =>
