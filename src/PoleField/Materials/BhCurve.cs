@@ -77,10 +77,11 @@ public sealed class BhCurve : MagneticLaw
     /// </exception>
     public static BhCurve FromTable(BhTable table, BhCurveOptions? options = null)
     {
-        BhTableCheck check = BhTableCheck.Run(table, options ?? BhCurveOptions.Default);
+        options ??= BhCurveOptions.Default;
+        BhTableCheck check = BhTableCheck.Run(table, options);
         BhRow[] nodes = check.Nodes;
         SaturationTail tail = SaturationTail.Through(nodes[^2], nodes[^1], check.SaturationPolarisation);
-        MonotoneSlopes slopes = MonotoneSlopes.Through(nodes, tail.StartSlope);
+        MonotoneSlopes slopes = MonotoneSlopes.Through(nodes, tail.StartSlope, options.AnhystereticStart);
         Piece[] pieces = new Piece[nodes.Length - 1];
         double energy = 0;
         for (int k = 0; k < pieces.Length; k++)

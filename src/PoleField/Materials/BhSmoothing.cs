@@ -32,7 +32,7 @@ internal static class BhSmoothing
         BhRow[] nodes = [.. rows];
         int moved = 0;
         int at = 0;
-        foreach (Pool.Block block in falling.Blocks.Concat(rising.Blocks))
+        foreach (Pool.Block block in Rising([.. falling.Blocks, .. rising.Blocks]))
         {
             BhRow start = rows[at];
             for (int k = at + 1; k < at + block.Count; k++)
@@ -63,6 +63,26 @@ internal static class BhSmoothing
         // Two rows beyond the origin are the least the tail needs.
         best = Math.Min(best, nodes.Length - 2);
         return [nodes[0], .. nodes[best..]];
+    }
+
+    // Where noise makes H fall at the very minimum, its block joins the lower neighbour until H rises.
+    private static List<Pool.Block> Rising(List<Pool.Block> blocks)
+    {
+        while (blocks.Count > 1)
+        {
+            int lowest = blocks.IndexOf(blocks.MinBy(b => b.Value));
+            if (blocks[lowest].Value > 0)
+            {
+                break;
+            }
+
+            bool joinsBefore = lowest == blocks.Count - 1 || (lowest > 0 && blocks[lowest - 1].Value < blocks[lowest + 1].Value);
+            int first = joinsBefore ? lowest - 1 : lowest;
+            blocks[first] = blocks[first].Joined(blocks[first + 1]);
+            blocks.RemoveAt(first + 1);
+        }
+
+        return blocks;
     }
 
     // Number of secants in the falling part for which the two pooled parts together lie closest to the data.
@@ -107,8 +127,7 @@ internal static class BhSmoothing
                 double sum = before.Weight + last.Weight;
                 double difference = before.Value - last.Value;
                 SquaredChange += before.Weight * last.Weight / sum * difference * difference;
-                last = new(
-                    ((before.Value * before.Weight) + (last.Value * last.Weight)) / sum, sum, before.Count + last.Count);
+                last = before.Joined(last);
                 _blocks.RemoveAt(_blocks.Count - 1);
             }
 
@@ -117,6 +136,10 @@ internal static class BhSmoothing
 
         private bool Violates(double before, double after) => falling ? after > before : after < before;
 
-        public readonly record struct Block(double Value, double Weight, int Count);
+        public readonly record struct Block(double Value, double Weight, int Count)
+        {
+            public Block Joined(Block next) => new(
+                ((Value * Weight) + (next.Value * next.Weight)) / (Weight + next.Weight), Weight + next.Weight, Count + next.Count);
+        }
     }
 }

@@ -26,7 +26,10 @@ internal sealed class MonotoneSlopes
     public List<int> Kinks { get; } = [];
 
     /// <summary>Slopes through nodes that rise in both coordinates with secants in (0, 1/μ0), first node at the origin.</summary>
-    public static MonotoneSlopes Through(BhRow[] nodes, double endSlope)
+    /// <param name="nodes">The nodes.</param>
+    /// <param name="endSlope">Slope at the last node, m/H.</param>
+    /// <param name="straightStart">The first piece is the chord itself: H/B is constant on it.</param>
+    public static MonotoneSlopes Through(BhRow[] nodes, double endSlope, bool straightStart)
     {
         int pieces = nodes.Length - 1;
         MonotoneSlopes slopes = new(pieces);
@@ -36,7 +39,7 @@ internal sealed class MonotoneSlopes
         slopes.AtEnd[pieces - 1] = endSlope;
         for (int k = 1; k < pieces; k++)
         {
-            slopes.SetInterior(nodes, k);
+            slopes.SetInterior(nodes, k, straightStart && k == 1 ? Secant(nodes, 0) : HarmonicMean(nodes, k));
         }
 
         return slopes;
@@ -48,28 +51,29 @@ internal sealed class MonotoneSlopes
     private static (double Low, double High) Allowed(double secant) =>
         (Math.Max(0, (3 * secant) - (2 * Nu0)), Math.Min(Nu0, 3 * secant));
 
-    private void SetInterior(BhRow[] nodes, int k)
+    private static double HarmonicMean(BhRow[] nodes, int k)
     {
-        double before = Secant(nodes, k - 1);
-        double after = Secant(nodes, k);
         double lengthBefore = nodes[k].FluxDensity - nodes[k - 1].FluxDensity;
         double lengthAfter = nodes[k + 1].FluxDensity - nodes[k].FluxDensity;
         double w1 = (2 * lengthAfter) + lengthBefore;
         double w2 = lengthAfter + (2 * lengthBefore);
-        double mean = (w1 + w2) / ((w1 / before) + (w2 / after));
+        return (w1 + w2) / ((w1 / Secant(nodes, k - 1)) + (w2 / Secant(nodes, k)));
+    }
 
-        (double Low, double High) left = Allowed(before);
-        (double Low, double High) right = Allowed(after);
+    private void SetInterior(BhRow[] nodes, int k, double wanted)
+    {
+        (double Low, double High) left = Allowed(Secant(nodes, k - 1));
+        (double Low, double High) right = Allowed(Secant(nodes, k));
         double low = Math.Max(left.Low, right.Low);
         double high = Math.Min(left.High, right.High);
         if (low <= high)
         {
-            AtEnd[k - 1] = AtStart[k] = Math.Clamp(mean, low, high);
+            AtEnd[k - 1] = AtStart[k] = Math.Clamp(wanted, low, high);
             return;
         }
 
-        AtEnd[k - 1] = Math.Clamp(mean, left.Low, left.High);
-        AtStart[k] = Math.Clamp(mean, right.Low, right.High);
+        AtEnd[k - 1] = Math.Clamp(wanted, left.Low, left.High);
+        AtStart[k] = Math.Clamp(wanted, right.Low, right.High);
         Kinks.Add(k);
     }
 }

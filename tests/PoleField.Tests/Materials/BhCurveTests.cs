@@ -24,8 +24,8 @@ public sealed class BhCurveTests
     {
         MagneticState state = MildSteel().At(b);
 
-        // The reference states seven digits.
-        Assert.Equal(1, state.FieldStrength / h, 2e-7);
+        // The reference states seven digits of H, six or seven of the slope.
+        Assert.Equal(1, state.FieldStrength / h, 5e-7);
         Assert.Equal(1, state.Slope / slope, 2e-6);
         Assert.Equal(polarisation, b - (Mu0 * state.FieldStrength), 6e-7);
     }
@@ -133,12 +133,14 @@ public sealed class BhCurveTests
     {
         BhCurve curve = Froehlich(count);
         double error = 0;
-        for (double h = curve.Nodes[1].FieldStrength; h <= 2e5; h *= 1.003)
+
+        // Rows whose slope is within a tenth of that of vacuum (above 125 kA/m) belong to the tail.
+        for (double h = curve.Nodes[1].FieldStrength; h <= curve.Nodes[^1].FieldStrength; h *= 1.003)
         {
             error = Math.Max(error, Math.Abs(curve.FluxDensityAt(h) - FroehlichB(h)));
         }
 
-        Assert.InRange(error, 0.5 * worst, 1.05 * worst);
+        Assert.InRange(error, 0.9 * worst, 1.02 * worst);
     }
 
     [Fact]
@@ -146,7 +148,7 @@ public sealed class BhCurveTests
     {
         BhCurve curve = Froehlich(20);
 
-        for (double h = 2e5; h < 3e6; h *= 1.1)
+        for (double h = curve.Nodes[^1].FieldStrength; h < 3e6; h *= 1.1)
         {
             Assert.Equal(FroehlichB(h), curve.FluxDensityAt(h), 2e-3);
         }

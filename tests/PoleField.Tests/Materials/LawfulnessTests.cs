@@ -105,10 +105,15 @@ public sealed class LawfulnessTests
             double b = to * i / samples;
             MagneticState state = law.At(b);
             double j = b - (PhysicalConstants.Mu0 * state.FieldStrength);
-            Assert.True(state.Slope > 0 && state.Slope <= Nu0, FormattableString.Invariant($"slope {state.Slope} at {b} T"));
-            Assert.True(state.FieldStrength > previousH, FormattableString.Invariant($"H at {b} T"));
-            Assert.True(j >= previousJ - 1e-13 && j < law.SaturationPolarisation, FormattableString.Invariant($"J = {j} at {b} T"));
-            Assert.True(state.Energy > previousW, FormattableString.Invariant($"energy at {b} T"));
+            bool lawful = state.Slope > 0 && state.Slope <= Nu0
+                && state.FieldStrength > previousH
+                && j >= previousJ - 1e-13 && j < law.SaturationPolarisation
+                && state.Energy > previousW;
+            if (!lawful)
+            {
+                Assert.Fail(FormattableString.Invariant($"At {b} T: {state}, J = {j} T; before it H = {previousH}, J = {previousJ}, w = {previousW}."));
+            }
+
             (previousH, previousJ, previousW) = (state.FieldStrength, j, state.Energy);
         }
     }
