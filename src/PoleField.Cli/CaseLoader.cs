@@ -1,3 +1,4 @@
+using System.Diagnostics;
 using System.Security.Cryptography;
 using System.Text;
 using PoleField.Cli.Case;
@@ -15,6 +16,13 @@ internal sealed class CaseLoader(Pipeline pipeline)
 
     /// <summary>Loads the case at <paramref name="path"/>; faults are in the findings, not thrown.</summary>
     public LoadedCase Load(string path)
+    {
+        var clock = Stopwatch.StartNew();
+        LoadedCase loaded = LoadAll(path);
+        return loaded with { Seconds = clock.Elapsed.TotalSeconds };
+    }
+
+    private LoadedCase LoadAll(string path)
     {
         var findings = new List<Finding>();
         if (Catch(findings, () => ReadFile(path, "case file")) is not { } bytes || Catch(findings, () => Decode(bytes, path)) is not { } text)

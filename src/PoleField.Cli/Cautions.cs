@@ -7,7 +7,7 @@ namespace PoleField.Cli;
 /// <summary>What a person must know before the magnet is built or switched on, with this magnet's numbers.</summary>
 internal static class Cautions
 {
-    // Copper at 20 °C: the international annealed copper standard, 1/58 µΩ·m (IEC 60028).
+    // Copper at 20 °C: the international annealed copper standard, 1/58 µΩ·m (IEC 60028, recalled).
     private const double CopperResistivity = 1.0 / 58e6;
 
     // Common practice: about 2 A/mm² without, about 10 A/mm² with water cooling.

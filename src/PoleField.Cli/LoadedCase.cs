@@ -31,6 +31,9 @@ internal sealed record LoadedCase
     /// <summary>SHA-256 of the drawing; empty when it could not be read.</summary>
     public string SketchSha256 { get; init; } = string.Empty;
 
+    /// <summary>Time it took to load, s.</summary>
+    public double Seconds { get; init; }
+
     public bool HasFaults => Findings.Any(f => f.Severity == Severity.Fault);
 
     /// <summary>Name of the drawing unit, empty without a drawing.</summary>

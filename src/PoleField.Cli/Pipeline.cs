@@ -1,5 +1,6 @@
 using PoleField.Beam;
 using PoleField.Cli.Case;
+using PoleField.Cli.Commands;
 using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
@@ -32,10 +33,13 @@ internal sealed record Pipeline
     public required Action<Stream, SolveResult> WriteResult { get; init; }
 
     /// <summary>Pictures of a section and of a solved magnet; null as long as there are none.</summary>
-    public Func<LoadedCase, IReadOnlyList<NamedPicture>>? SectionPictures { get; init; }
+    public Func<LoadedCase, IReadOnlyList<NamedFile>>? SectionPictures { get; init; }
 
     /// <inheritdoc cref="SectionPictures"/>
-    public Func<SolveResult, IReadOnlyList<NamedPicture>>? ResultPictures { get; init; }
+    public Func<SolveResult, IReadOnlyList<NamedFile>>? ResultPictures { get; init; }
+
+    /// <summary>Verbs that solve a case and work something out of it; each is registered as it is listed here.</summary>
+    public IReadOnlyList<AnalysisStep> Analyses { get; init; } = [];
 
     /// <summary>The library's own steps.</summary>
     public static Pipeline OfLibrary() => new()
@@ -66,8 +70,8 @@ internal sealed record Pipeline
         throw new NotImplementedException("seam: ResultJson.Write");
 }
 
-/// <summary>A picture to be written: file name with extension, and what writes it.</summary>
-internal sealed record NamedPicture(string FileName, Action<Stream> Write);
+/// <summary>A file to be written: name with extension, and what writes it.</summary>
+internal sealed record NamedFile(string FileName, Action<Stream> Write);
 
 /// <summary>A solved case with all that its result file says.</summary>
 internal sealed record SolveResult

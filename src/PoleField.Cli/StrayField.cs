@@ -5,7 +5,7 @@ namespace PoleField.Cli;
 /// <summary>How far the field reaches around the magnet.</summary>
 internal static class StrayField
 {
-    /// <summary>0.5 mT: action level for active implanted devices such as pacemakers, directive 2013/35/EU, annex II, table B4.</summary>
+    /// <summary>0.5 mT: action level for active implanted devices such as pacemakers, directive 2013/35/EU, annex II, table B4 (recalled).</summary>
     public const double Limit = 0.5e-3;
 
     // Circles grow by a tenth up to thirty metres; directions every 7.5 degrees see any low-order far field's maxima.

@@ -48,7 +48,7 @@ internal sealed class CheckVerb
         string path = arguments.GetRequiredValue(_case);
         string? target = arguments.GetValue(_out) is { } output ? ResultName.For(path, Ending, output) : null;
         LoadedCase loaded = new CaseLoader(_tool.Pipeline).Load(path);
-        IReadOnlyList<NamedPicture> pictures = Pictures(arguments, loaded);
+        IReadOnlyList<NamedFile> pictures = Pictures(arguments, loaded);
         string folder = arguments.GetValue(_figures) ?? string.Empty;
         using OutputFiles files = OutputFiles.Plan(
             pictures.Select(p => Path.Combine(folder, p.FileName)).Concat(target is null ? [] : [target]),
@@ -59,7 +59,7 @@ internal sealed class CheckVerb
             files.Write(target, s => CheckJson.Write(s, loaded));
         }
 
-        foreach (NamedPicture picture in pictures)
+        foreach (NamedFile picture in pictures)
         {
             cancellation.ThrowIfCancellationRequested();
             files.Write(Path.Combine(folder, picture.FileName), picture.Write);
@@ -69,7 +69,7 @@ internal sealed class CheckVerb
         return loaded.HasFaults ? ExitStatus.WrongInput : ExitStatus.Done;
     }
 
-    private IReadOnlyList<NamedPicture> Pictures(ParseResult arguments, LoadedCase loaded) =>
+    private IReadOnlyList<NamedFile> Pictures(ParseResult arguments, LoadedCase loaded) =>
         _tool.Pipeline.SectionPictures is { } draw && arguments.GetValue(_figures) is not null && loaded.Reading is not null
             ? draw(loaded)
             : [];

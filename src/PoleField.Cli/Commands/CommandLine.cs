@@ -50,9 +50,14 @@ internal static class CommandLine
             tool.Verbose,
             CheckVerb.Create(tool),
             SolveVerb.Create(tool),
-            MaterialsVerb.Create(tool),
-            CompletionVerb.Create(tool),
         };
+        foreach (AnalysisStep step in tool.Pipeline.Analyses)
+        {
+            root.Subcommands.Add(AnalysisVerb.Create(tool, step));
+        }
+
+        root.Subcommands.Add(MaterialsVerb.Create(tool));
+        root.Subcommands.Add(CompletionVerb.Create(tool));
         HelpOption help = root.Options.OfType<HelpOption>().Single();
         help.Description = "Show help.";
         help.Action = new HelpText();

@@ -1,11 +1,9 @@
 using System.CommandLine;
-using System.Diagnostics;
 using System.Text;
 using PoleField.Beam;
 using PoleField.Cli.Case;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
-using PoleField.Magnetostatics;
 
 namespace PoleField.Cli.Commands;
 
@@ -16,15 +14,14 @@ internal sealed class SolveVerb
     private const string ResultFormat = "polefield-result/1";
 
     private readonly Tool _tool;
-    private readonly Argument<string> _case = CommonOptions.CaseFile();
-    private readonly Option<string?> _out = CommonOptions.Out("Result file, or folder for it. Default: CASE.result.json in the current folder.");
-    private readonly Option<bool> _json = CommonOptions.Json();
-    private readonly Option<double?> _accuracy = CommonOptions.Accuracy();
-    private readonly Option<int> _threads = CommonOptions.Threads();
-    private readonly Option<bool> _force = CommonOptions.Force();
+    private readonly CaseRun _run;
     private readonly Option<string?> _figures = CommonOptions.Figures();
 
-    private SolveVerb(Tool tool) => _tool = tool;
+    private SolveVerb(Tool tool)
+    {
+        _tool = tool;
+        _run = new CaseRun(tool, "Result file, or folder for it. Default: CASE.result.json in the current folder.");
+    }
 
     public static VerbCommand Create(Tool tool)
     {
@@ -43,12 +40,7 @@ internal sealed class SolveVerb
                 "[require] in the case knows: " + string.Join(", ", BeamQuantity.All.Select(q => q.Name)) + "; each with _min or _max.",
             ],
         };
-        command.Arguments.Add(verb._case);
-        foreach (Option option in new Option[] { verb._out, verb._json, verb._accuracy, verb._threads, verb._force })
-        {
-            command.Options.Add(option);
-        }
-
+        verb._run.AddTo(command, withJson: true);
         if (tool.Pipeline.ResultPictures is not null)
         {
             command.Options.Add(verb._figures);
@@ -60,16 +52,19 @@ internal sealed class SolveVerb
 
     private int Run(ParseResult arguments, CancellationToken cancellation)
     {
-        var clock = Stopwatch.StartNew();
-        string path = arguments.GetRequiredValue(_case);
-        LoadedCase loaded = new CaseLoader(_tool.Pipeline).Load(path);
-        if (_tool.ReportFaults(arguments, loaded))
+        if (_run.Load(arguments) is not { } loaded)
         {
             return ExitStatus.WrongInput;
         }
 
-        using OutputFiles files = PlanFiles(arguments, path, out string? target);
-        SolveResult result = Solve(arguments, loaded, clock, cancellation);
+        using OutputFiles files = PlanFiles(arguments, out string? target);
+        SolveOptions options = _run.OptionsOf(arguments, loaded);
+        SolveResult result;
+        using (ProgressLine progress = _run.Progress(arguments, options))
+        {
+            result = _run.Solve(loaded, options, progress, cancellation);
+        }
+
         if (target is not null)
         {
             files.Write(target, s => _tool.Pipeline.WriteResult(s, result));
@@ -81,49 +76,12 @@ internal sealed class SolveVerb
         return result.AllMet ? ExitStatus.Done : ExitStatus.NotMet;
     }
 
-    private OutputFiles PlanFiles(ParseResult arguments, string path, out string? target)
+    private OutputFiles PlanFiles(ParseResult arguments, out string? target)
     {
-        string? output = arguments.GetValue(_out);
-        target = output is null && arguments.GetValue(_json) ? null : ResultName.For(path, Ending, output);
+        string? output = _run.Out(arguments);
+        target = output is null && _run.Json(arguments) ? null : ResultName.For(_run.CasePath(arguments), Ending, output);
         bool replaceable = output is null && target is not null && ResultName.IsOwn(target, ResultFormat);
-        return OutputFiles.Plan(target is null ? [] : [target], arguments.GetValue(_force), replaceable ? [target!] : []);
-    }
-
-    private SolveResult Solve(ParseResult arguments, LoadedCase loaded, Stopwatch clock, CancellationToken cancellation)
-    {
-        (CaseFile file, Magnet magnet, Aperture aperture) = loaded.Ready();
-        double readSeconds = clock.Elapsed.TotalSeconds;
-        var options = new SolveOptions
-        {
-            Accuracy = arguments.GetValue(_accuracy) ?? file.Accuracy,
-            Threads = arguments.GetValue(_threads),
-        };
-        SolvedMagnet solved;
-        bool progress = !arguments.GetValue(_tool.Quiet) && !arguments.GetValue(_json);
-        using (var line = new ProgressLine(_tool.Terminal, progress, options.Accuracy, TimeProvider.System))
-        {
-            solved = _tool.Pipeline.Solve(magnet, aperture, options, line.Report, cancellation);
-        }
-
-        cancellation.ThrowIfCancellationRequested();
-        double? reach = magnet.AppliedField == default ? StrayField.Reach(_tool.Pipeline.FieldOf(solved), magnet.Section.Bounds) : null;
-        return new SolveResult
-        {
-            Case = loaded,
-            Solved = solved,
-            Verdicts = [.. file.Require.Select(r => r.Judge(solved.Report))],
-            Cautions = Cautions.Of(file, solved.Report, reach),
-            Warnings = [.. loaded.Findings.Concat(solved.Report.Findings).Where(f => f.Severity == Severity.Warning)],
-            ReadSeconds = readSeconds,
-            TotalSeconds = clock.Elapsed.TotalSeconds,
-            PeakMemoryMegabytes = PeakMemoryMegabytes(),
-        };
-    }
-
-    private static double PeakMemoryMegabytes()
-    {
-        using var process = Process.GetCurrentProcess();
-        return process.PeakWorkingSet64 / 1e6;
+        return OutputFiles.Plan(target is null ? [] : [target], _run.Force(arguments), replaceable ? [target!] : []);
     }
 
     private void WritePictures(ParseResult arguments, OutputFiles files, SolveResult result, CancellationToken cancellation)
@@ -133,7 +91,7 @@ internal sealed class SolveVerb
             return;
         }
 
-        foreach (NamedPicture picture in draw(result))
+        foreach (NamedFile picture in draw(result))
         {
             cancellation.ThrowIfCancellationRequested();
             files.Write(Path.Combine(folder, picture.FileName), picture.Write);
@@ -142,8 +100,8 @@ internal sealed class SolveVerb
 
     private void Print(ParseResult arguments, SolveResult result, string? target)
     {
-        bool quiet = arguments.GetValue(_tool.Quiet);
-        if (arguments.GetValue(_json))
+        bool quiet = _run.Quiet(arguments);
+        if (_run.Json(arguments))
         {
             using var stream = new MemoryStream();
             _tool.Pipeline.WriteResult(stream, result);
@@ -159,20 +117,6 @@ internal sealed class SolveVerb
             _tool.Terminal.Error.WriteLine($"Result: {target}");
         }
 
-        WriteNotMet(result);
-    }
-
-    private void WriteNotMet(SolveResult result)
-    {
-        foreach (Verdict verdict in result.Verdicts.Where(v => !v.Met))
-        {
-            _tool.Terminal.Error.WriteLine($"Not met: {verdict.Limit.Name}");
-        }
-
-        if (!result.Solved.Record.AccuracyMet)
-        {
-            _tool.Terminal.Error.WriteLine(
-                $"Not met: accuracy {Numbers.Significant(result.Solved.Record.AccuracyAsked, 2)}; reached {Numbers.Significant(result.Solved.Record.AccuracyReached, 2)}");
-        }
+        _run.ReportNotMet(result);
     }
 }

@@ -27,7 +27,7 @@ internal static class BeamTables
         var table = new TextTable("quantity", ">mean", string.Empty, ">min", ">max", ">spread", ">rms");
         Add(table, "field, T", report.Field, 0);
         Add(table, "gradient, T/m", report.Gradient, report.GradientMeanError);
-        Add(table, "field times gradient, T²/m", report.FieldTimesGradient, 0);
+        Add(table, "field × gradient, T²/m", report.FieldTimesGradient, 0);
         WriteTable(writer, table, ink);
     }
 

@@ -33,7 +33,7 @@ internal static class Numbers
     {
         if (!(error > 0) || !double.IsFinite(error) || !double.IsFinite(value))
         {
-            return Significant(value, 6);
+            return Significant(value);
         }
 
         int decimals = ErrorDigits - 1 - Exponent(error);
@@ -61,6 +61,9 @@ internal static class Numbers
             ? text.TrimEnd('0').TrimEnd('.')
             : text;
     }
+
+    /// <summary>Two digits with exponent, for accuracies: "1e-4".</summary>
+    public static string Accuracy(double value) => value.ToString("0.#e0", CultureInfo.InvariantCulture);
 
     public static string Millimetres(double metres, int decimals = 3) => Fixed(metres * 1e3, decimals);
 

@@ -58,7 +58,7 @@ internal sealed class ProgressLine(Terminal terminal, bool on, double asked, Tim
 
         if (double.IsFinite(progress.Accuracy))
         {
-            words.Add($"accuracy {Numbers.Significant(progress.Accuracy, 2)} of {Numbers.Significant(asked, 2)} asked");
+            words.Add($"accuracy {Numbers.Accuracy(progress.Accuracy)} of {Numbers.Accuracy(asked)} asked");
         }
 
         return string.Join(", ", words);

@@ -115,7 +115,7 @@ public sealed class SolveVerbTests
         Run run = await Run.Of(pipeline, "solve", folder.CasePath, "-o", folder["out.json"], "--accuracy", "0.01 %");
 
         Assert.Equal(3, run.Status);
-        Assert.Contains("accuracy 0.0010 of 0.00010 asked: not reached", run.Out, StringComparison.Ordinal);
+        Assert.Contains("accuracy 1e-3 of 1e-4 asked: not reached", run.Out, StringComparison.Ordinal);
     }
 
     [Fact]
