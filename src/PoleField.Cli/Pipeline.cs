@@ -56,12 +56,9 @@ internal sealed record Pipeline
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
         DxfReader.Read(stream, name, new DxfReadOptions { Unit = unit });
 
-    // seam: PoleField.Drawing.Sectioning.Read(sketch, request)
-    private static SectionReading CutSection(Sketch sketch, SectionRequest request) =>
-        throw new NotImplementedException("seam: Sectioning.Read");
+    private static SectionReading CutSection(Sketch sketch, SectionRequest request) => Sectioning.Read(sketch, request);
 
-    // seam: PoleField.Materials.MaterialLibrary; air first
-    private static IReadOnlyList<Material> BuiltInMaterials() => [Material.Air];
+    private static IReadOnlyList<Material> BuiltInMaterials() => [.. MaterialLibrary.Names.Select(MaterialLibrary.Get)];
 
     private static Material ReadCurve(Stream stream, string name) => MaterialFile.Read(stream, name);
 
