@@ -142,42 +142,45 @@ internal sealed class FaceNesting
         return tallest;
     }
 
-    // Looks from a general point of the component towards −y; −1 when nothing is there.
+    // Looks towards −y from where the component lies farthest that way on a general level; −1 when nothing is there.
     private int FacingCycle(int component, int tallest, BoxIndex index, List<int> near)
     {
         const double general = 0.41421356; // a share no drawing uses, so that the ray meets no corner
         Point from = _map.Edges[tallest].Curve.At(general);
-        double far = 0;
         near.Clear();
         index.FindOverlaps(new Box(new Point(double.NegativeInfinity, from.Z), from), near);
-        near.RemoveAll(e => _component[e] == component);
-        if (near.Count == 0)
-        {
-            return -1;
-        }
-
+        near.Sort();
+        double far = 0;
         foreach (int e in near)
         {
             far = Math.Max(far, from.Y - _map.Edges[e].Curve.Bounds.Min.Y);
         }
 
-        double best = double.NegativeInfinity;
-        int facing = -1;
+        if (!(far > 0))
+        {
+            return -1;
+        }
+
         Line ray = new(from, from - new Point(2 * far, 0));
-        foreach (int e in near.Order())
+        List<(double Y, int Cycle)> hits = [];
+        double own = from.Y;
+        foreach (int e in near)
         {
             Curve curve = _map.Edges[e].Curve;
             foreach ((double t, _) in CurveIntersection.Find(curve, ray, 1e-9 * far))
             {
                 double y = curve.At(t).Y;
-                if (y > best && y < from.Y)
+                if (_component[e] == component)
                 {
-                    best = y;
-                    facing = _cycleOfHalf[(2 * e) + (curve.Derivative(t).Z < 0 ? 0 : 1)];
+                    own = Math.Min(own, y);
+                }
+                else
+                {
+                    hits.Add((y, _cycleOfHalf[(2 * e) + (curve.Derivative(t).Z < 0 ? 0 : 1)]));
                 }
             }
         }
 
-        return facing;
+        return hits.Where(h => h.Y < own).DefaultIfEmpty((0, -1)).MaxBy(h => h.Item1).Item2;
     }
 }
