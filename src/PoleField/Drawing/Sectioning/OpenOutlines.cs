@@ -1,0 +1,54 @@
+using PoleField.Geometry;
+
+namespace PoleField.Drawing;
+
+/// <summary>Reports what of a layer does not close.</summary>
+internal static class OpenOutlines
+{
+    private const int Most = 50; // of a layer; more faults are not shown anyway
+
+    /// <summary>Adds a fault for each pair of loose ends, nearest first met, and for curves between outlines.</summary>
+    public static void Report(PlanarMap map, LayerCover cover, string layer, Reach reach, SectionLog log)
+    {
+        if (cover.OpenEdges.Count == 0)
+        {
+            return;
+        }
+
+        Dictionary<int, (int Ends, int Source)> at = [];
+        foreach (int e in cover.OpenEdges)
+        {
+            WovenEdge edge = map.Edges[e];
+            at[edge.Start] = (at.GetValueOrDefault(edge.Start).Ends + 1, edge.Source);
+            at[edge.End] = (at.GetValueOrDefault(edge.End).Ends + 1, edge.Source);
+        }
+
+        List<int> loose = [.. at.Where(p => p.Value.Ends == 1).Select(p => p.Key).Order()];
+        if (loose.Count == 0)
+        {
+            WovenEdge stray = map.Edges[cover.OpenEdges[0]];
+            log.Add(SectionMessages.LooseCurve(log, layer, stray.Curve.At(0.5), stray.Source), stray.Curve.At(0.5), stray.Source);
+            return;
+        }
+
+        HashSet<int> told = [];
+        foreach (int v in loose)
+        {
+            if (told.Count >= 2 * Most || !told.Add(v))
+            {
+                continue;
+            }
+
+            int mate = loose.Where(w => !told.Contains(w)).DefaultIfEmpty(-1).MinBy(w => w < 0 ? 0 : map.Points[v].DistanceTo(map.Points[w]));
+            if (mate < 0)
+            {
+                log.Add(SectionMessages.LooseCurve(log, layer, map.Points[v], at[v].Source), map.Points[v], at[v].Source);
+                continue;
+            }
+
+            told.Add(mate);
+            (Point a, Point b) = (map.Points[v], map.Points[mate]);
+            log.Add(SectionMessages.OpenOutline(log, layer, (a, b), (at[v].Source, at[mate].Source), reach.Join), a, at[v].Source);
+        }
+    }
+}

@@ -1,0 +1,228 @@
+using PoleField.Geometry;
+
+namespace PoleField.Drawing;
+
+/// <summary>Cuts curves where others end on them or cross them and lays equal pieces together, so that pieces meet only at common points.</summary>
+internal sealed class Weaving
+{
+    private readonly Net _net;
+    private readonly IReadOnlyList<UsedLayer> _layers;
+    private readonly Reach _reach;
+    private readonly SectionLog _log;
+    private readonly SortedDictionary<int, List<(double T, int Point)>> _cuts = [];
+
+    private Weaving(Net net, IReadOnlyList<UsedLayer> layers, Reach reach, SectionLog log)
+    {
+        (_net, _layers, _reach, _log) = (net, layers, reach, log);
+    }
+
+    /// <summary>The edges of the planar map; the net's points are their ends.</summary>
+    public static List<WovenEdge> Weave(Net net, IReadOnlyList<UsedLayer> layers, Reach reach, SectionLog log)
+    {
+        Weaving weaving = new(net, layers, reach, log);
+        weaving.CutAtPoints();
+        weaving.CutAtCrossings();
+        return weaving.LayTogether();
+    }
+
+    private void CutAtPoints()
+    {
+        BoxIndex index = new([.. _net.Pieces.Select(p => p.Curve.Bounds)]);
+        List<int>[] incident = IncidentPieces();
+        List<int> near = [];
+        for (int v = 0; v < _net.Points.Count; v++)
+        {
+            Point p = _net.Points[v];
+            near.Clear();
+            index.FindOverlaps(new Box(p, p).Inflated(_reach.Join), near);
+            near.Sort();
+            bool movable = incident[v].TrueForAll(i => _net.Pieces[i].Curve is Line) && !(_net.IsHalf && p.Y == 0);
+            foreach (int i in near)
+            {
+                Piece piece = _net.Pieces[i];
+                if (piece.Start == v || piece.End == v)
+                {
+                    continue;
+                }
+
+                double t = piece.Curve.ClosestParameter(p);
+                Point foot = piece.Curve.At(t);
+                double distance = foot.DistanceTo(p);
+                int own = incident[v].Count(k => _net.Pieces[k].Layer == piece.Layer);
+                double reach = own < 2 ? _reach.Join : _reach.Fine;
+                if (distance > reach || Math.Min(foot.DistanceTo(piece.Curve.Start), foot.DistanceTo(piece.Curve.End)) <= _reach.Fine)
+                {
+                    continue;
+                }
+
+                Cut(i, t, v);
+                if (distance > _reach.Exact)
+                {
+                    _log.Add(SectionMessages.HealedJoint(_log, p, distance), p, _net.Pieces[incident[v][0]].Source);
+                    if (movable)
+                    {
+                        _net.Points[v] = foot;
+                        movable = false;
+                    }
+                }
+            }
+        }
+
+        ApplyCuts();
+    }
+
+    private void CutAtCrossings()
+    {
+        BoxIndex index = new([.. _net.Pieces.Select(p => p.Curve.Bounds)]);
+        PointGrid crossings = new(_reach.Fine);
+        List<int> near = [], known = [];
+        for (int i = 0; i < _net.Pieces.Count; i++)
+        {
+            near.Clear();
+            index.FindOverlaps(_net.Pieces[i].Curve.Bounds.Inflated(_reach.Exact), near);
+            near.Sort();
+            foreach (int j in near.Where(j => j > i && !AreAlike(_net.Pieces[i], _net.Pieces[j])))
+            {
+                foreach ((double t, double u) in CurveIntersection.Find(_net.Pieces[i].Curve, _net.Pieces[j].Curve, _reach.Exact))
+                {
+                    Point p = _net.Pieces[i].Curve.At(t);
+                    if (IsAtEnd(_net.Pieces[i], p) || IsAtEnd(_net.Pieces[j], p))
+                    {
+                        continue;
+                    }
+
+                    if (_net.Pieces[i].Layer == _net.Pieces[j].Layer)
+                    {
+                        _log.Add(SectionMessages.SelfCrossing(_log, p, _net.Pieces[i], _net.Pieces[j]), p, _net.Pieces[i].Source);
+                    }
+
+                    known.Clear();
+                    crossings.FindNear(p, known);
+                    int v = known.Count > 0 ? known.Min() : _net.Points.Count;
+                    if (v == _net.Points.Count)
+                    {
+                        _net.Points.Add(p);
+                        crossings.Add(p, v);
+                    }
+
+                    Cut(i, t, v);
+                    Cut(j, u, v);
+                }
+            }
+        }
+
+        ApplyCuts();
+    }
+
+    private bool IsAtEnd(Piece piece, Point p) =>
+        p.DistanceTo(_net.Points[piece.Start]) <= _reach.Fine || p.DistanceTo(_net.Points[piece.End]) <= _reach.Fine;
+
+    private void Cut(int piece, double t, int point)
+    {
+        if (!_cuts.TryGetValue(piece, out List<(double, int)>? cuts))
+        {
+            _cuts[piece] = cuts = [];
+        }
+
+        if (!cuts.Exists(c => c.Item2 == point))
+        {
+            cuts.Add((t, point));
+        }
+    }
+
+    private void ApplyCuts()
+    {
+        List<Piece> pieces = new(_net.Pieces.Count + _cuts.Count);
+        for (int i = 0; i < _net.Pieces.Count; i++)
+        {
+            Piece piece = _net.Pieces[i];
+            if (!_cuts.TryGetValue(i, out List<(double T, int Point)>? cuts))
+            {
+                pieces.Add(piece);
+                continue;
+            }
+
+            cuts.Sort();
+            double from = 0;
+            int start = piece.Start;
+            foreach ((double t, int point) in cuts.Append((1.0, piece.End)))
+            {
+                // Two points may fall on one place of the curve; the piece between them is nothing.
+                if (t > from && _net.Points[start] != _net.Points[point])
+                {
+                    pieces.Add(piece with { Curve = piece.Curve.Part(from, t), Start = start, End = point, Whole = false });
+                    (from, start) = (t, point);
+                }
+            }
+        }
+
+        _cuts.Clear();
+        _net.Pieces = pieces;
+        _net.Refit();
+    }
+
+    private List<WovenEdge> LayTogether()
+    {
+        List<WovenEdge> edges = [];
+        IEnumerable<IGrouping<(int, int), Piece>> groups = _net.Pieces.GroupBy(p => (Math.Min(p.Start, p.End), Math.Max(p.Start, p.End)));
+        foreach (IGrouping<(int, int), Piece> group in groups)
+        {
+            List<Piece> rest = [.. group];
+            while (rest.Count > 0)
+            {
+                // A bent piece keeps its shape against a straight one; of equals the first drawn of the first layer.
+                Piece keep = rest.FirstOrDefault(p => p.Curve is not Line) ?? rest[0];
+                List<Piece> alike = rest.Count == 1 ? rest : [.. rest.Where(p => ReferenceEquals(p, keep) || AreAlike(keep, p))];
+                NoteRepeats(alike);
+                edges.Add(new WovenEdge(keep.Curve, keep.Start, keep.End, [.. alike.Select(p => p.Layer).Distinct().Order()], keep.Source));
+                rest = rest.Count == alike.Count ? [] : [.. rest.Where(p => !alike.Exists(a => ReferenceEquals(a, p)))];
+            }
+        }
+
+        return edges;
+    }
+
+    private void NoteRepeats(List<Piece> alike)
+    {
+        foreach (IGrouping<int, Piece> drawn in alike.GroupBy(p => p.Layer))
+        {
+            Piece? first = null;
+            foreach (Piece p in drawn)
+            {
+                if (first is not null)
+                {
+                    Point at = p.Curve.At(0.5);
+                    _log.Add(SectionMessages.Repeat(_log, at, p.Curve.Length, first.Whole && p.Whole), at, p.Source);
+                }
+
+                first ??= p;
+            }
+        }
+    }
+
+    // Same ends, and nowhere farther apart than the reach: sampled at the quarters, where arcs between two points differ most.
+    private bool AreAlike(Piece a, Piece b)
+    {
+        if (Math.Min(a.Start, a.End) != Math.Min(b.Start, b.End) || Math.Max(a.Start, a.End) != Math.Max(b.Start, b.End))
+        {
+            return false;
+        }
+
+        double reach = a.Layer == b.Layer ? _reach.Fine : _reach.Join;
+        return (a.Curve is Line && b.Curve is Line)
+            || (a.Curve.DistanceTo(b.Curve.At(0.25)) <= reach && a.Curve.DistanceTo(b.Curve.At(0.5)) <= reach
+                && a.Curve.DistanceTo(b.Curve.At(0.75)) <= reach);
+    }
+
+    private List<int>[] IncidentPieces()
+    {
+        List<int>[] incident = [.. _net.Points.Select(_ => new List<int>(2))];
+        for (int i = 0; i < _net.Pieces.Count; i++)
+        {
+            incident[_net.Pieces[i].Start].Add(i);
+            incident[_net.Pieces[i].End].Add(i);
+        }
+
+        return incident;
+    }
+}
