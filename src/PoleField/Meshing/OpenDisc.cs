@@ -12,8 +12,8 @@ internal static class OpenDisc
     private const double Growth = 0.35;
 
     /// <summary>
-    /// Meshes the disc after its rim's pieces in the first sheet; where good triangles need a rim edge halved, the first sheet
-    /// halves it too and refines on, until both agree.
+    /// Meshes the disc after its rim's pieces in the first sheet. Where a badly shaped triangle remains because the rim's edges
+    /// there differ too much, the first sheet halves the longest of them and refines on, until the disc is good as well.
     /// </summary>
     /// <param name="circle">The circle.</param>
     /// <param name="first">Mesh of the first sheet; its last curve is the circle.</param>
@@ -24,22 +24,56 @@ internal static class OpenDisc
     public static PlanarMesh Fill(
         OpenCircle circle, PlanarMesh first, Refinement firstRefinement, RefinementLimits limits, CancellationToken cancellation)
     {
-        // Halving ends by itself in a few rounds; the last round takes the rim as it is.
-        const int rounds = 20;
+        // Halving evens the rim out, one or two edges a round; after so many rounds a poor angle in the disc is accepted.
+        const int rounds = 30;
         int curve = first.Curves.Count - 1;
         for (int round = 1; ; round++)
         {
             List<CurvePiece> rim = [.. first.Pieces.Where(p => p.Curve == curve).OrderBy(p => p.TA)];
-            PlanarMesh disc = Fill(circle, first.Curves[curve].Curve, rim, limits with { PiecesFixed = round == rounds }, cancellation);
-            if (disc.Pieces.Count == rim.Count)
+            PlanarMesh disc = Fill(circle, first.Curves[curve].Curve, rim, limits with { PiecesFixed = true }, cancellation);
+            SortedSet<double> halves = RimEdgesToHalve(disc, rim, limits.SmallestAngleDegrees);
+            if (halves.Count == 0 || round == rounds)
             {
                 return disc;
             }
 
-            firstRefinement.SplitCurve(curve, disc.Pieces.Where(p => p.TA > 0).Select(p => p.TA).Order());
+            firstRefinement.SplitCurve(curve, halves);
             firstRefinement.Run(cancellation);
         }
     }
+
+    // Middle parameter of the longest rim edge at each badly shaped triangle that touches the rim.
+    private static SortedSet<double> RimEdgesToHalve(PlanarMesh disc, List<CurvePiece> rim, double smallestAngleDegrees)
+    {
+        SortedSet<double> halves = [];
+        double sin = Math.Sin(smallestAngleDegrees * Math.PI / 180);
+        for (int t = 0; t < disc.Triangulation.TriangleCount; t++)
+        {
+            int[] corners = [.. Enumerable.Range(3 * t, 3).Select(disc.Triangulation.Origin)];
+            if (Refinement.SmallestSineSquared(disc.Triangulation, t) >= sin * sin)
+            {
+                continue;
+            }
+
+            int longest = -1;
+            foreach (int v in corners.Where(v => v < rim.Count))
+            {
+                foreach (int i in new[] { v, (v + rim.Count - 1) % rim.Count })
+                {
+                    longest = longest < 0 || Extent(rim[i]) > Extent(rim[longest]) * (1 + 1e-9) ? i : longest;
+                }
+            }
+
+            if (longest >= 0)
+            {
+                halves.Add(0.5 * (rim[longest].TA + rim[longest].TB));
+            }
+        }
+
+        return halves;
+    }
+
+    private static double Extent(CurvePiece p) => p.TB - p.TA;
 
     private static PlanarMesh Fill(
         OpenCircle circle, Curve curve, List<CurvePiece> rim, RefinementLimits limits, CancellationToken cancellation)
@@ -60,7 +94,7 @@ internal static class OpenDisc
         return mesh;
     }
 
-    // Good triangles along the rim are laid out beforehand, an apex over every side, so that few sides need splitting.
+    // Good triangles along the rim are laid out beforehand, an apex over every side, so that few sides need halving.
     private static List<Point> FirstLayer(OpenCircle circle, Point[] rim)
     {
         const double height = 0.8; // over the side's length; 0.87 would be equilateral, the ring is narrower inside
