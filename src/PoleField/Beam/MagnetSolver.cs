@@ -75,7 +75,7 @@ public static class MagnetSolver
         public SolvedMagnet ToAccuracy(double clearance)
         {
             var samples = ApertureSamples.Of(aperture, _shape);
-            SizeField size = MeshSizing.For(magnet.Section, aperture.Outline);
+            SizeField size = MeshSizing.For(magnet.Section, aperture.Outline, MagneticParts(magnet));
             FieldSolution? previous = null;
             for (int step = 1; ; step++)
             {
@@ -121,6 +121,9 @@ public static class MagnetSolver
                 _evaluating.Stop();
             }
         }
+
+        private static int[] MagneticParts(Magnet magnet) =>
+            [.. Enumerable.Range(0, magnet.Roles.Count).Where(part => magnet.Roles[part].Material.IsMagnetic)];
 
         private (FieldSolution Solution, FieldEquations Equations) SolveOn(SizeField size, int step, FieldSolution? previous)
         {
