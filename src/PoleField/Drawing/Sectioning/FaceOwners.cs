@@ -42,7 +42,7 @@ internal sealed class FaceOwners
         _claims = [.. Enumerable.Range(0, map.Areas.Count).Select(Claims)];
         CountShared();
         Owner = [.. Enumerable.Range(0, map.Areas.Count).Select(OwnerOf)];
-        Report(log, reach);
+        Report(log);
     }
 
     /// <summary>For each face: its region in the common numbering, or <see cref="Air"/> or <see cref="Beyond"/>.</summary>
@@ -140,7 +140,7 @@ internal sealed class FaceOwners
         return owner;
     }
 
-    private void Report(SectionLog log, Reach reach)
+    private void Report(SectionLog log)
     {
         foreach (((int a, int b), (double area, int face)) in _overlaps.OrderBy(o => o.Key))
         {
@@ -152,12 +152,12 @@ internal sealed class FaceOwners
         {
             foreach (UsedLayer part in _layers.Where(l => l.Role == LayerRole.Part))
             {
-                List<int> out_ = [.. Enumerable.Range(1, _thin.Length - 1).Where(f =>
+                List<int> outside = [.. Enumerable.Range(1, _thin.Length - 1).Where(f =>
                     !_thin[f] && _covers[part.Index].RegionOfFace[f] >= 0 && _covers[rim.Index].RegionOfFace[f] < 0)];
-                if (out_.Count > 0 && _covers[rim.Index].Regions > 0)
+                if (outside.Count > 0 && _covers[rim.Index].Regions > 0)
                 {
-                    (Point at, int source) = Corner(out_[0]);
-                    log.Add(SectionMessages.OutsideRim(log, part.Name, rim.Name, out_.Sum(f => _map.Areas[f]), at), at, source);
+                    (Point at, int source) = Corner(outside[0]);
+                    log.Add(SectionMessages.OutsideRim(log, part.Name, rim.Name, outside.Sum(f => _map.Areas[f]), at), at, source);
                 }
             }
         }

@@ -51,4 +51,19 @@ internal static class OpenOutlines
             log.Add(SectionMessages.OpenOutline(log, layer, (a, b), (at[v].Source, at[mate].Source), reach.Join), a, at[v].Source);
         }
     }
+
+    /// <summary>Adds a fault when a layer has no closed outline, or a rim or beam more than one.</summary>
+    public static void ReportCount(UsedLayer layer, LayerCover cover, SectionLog log)
+    {
+        string what = UsedLayers.Purpose(layer.Role);
+        if (cover.Outlines == 0 && cover.OpenEdges.Count == 0)
+        {
+            log.Add(SectionMessages.NoOutline(layer.Name, what));
+        }
+
+        if (cover.Outlines > 1 && layer.Role != LayerRole.Part)
+        {
+            log.Add(SectionMessages.NotOneOutline(layer.Name, what, cover.Outlines));
+        }
+    }
 }
