@@ -15,6 +15,7 @@ internal sealed class FaceOwners
     private readonly IReadOnlyList<UsedLayer> _layers;
     private readonly IReadOnlyList<LayerCover> _covers;
     private readonly List<int> _offset = []; // of each layer's regions in the common numbering
+    private readonly double _exact;
     private readonly bool[] _thin;
     private readonly List<int>[] _claims;  // regions over each face, common numbering
     private readonly int[] _faces;         // number of faces of each region, thin ones not counted
@@ -29,7 +30,7 @@ internal sealed class FaceOwners
     /// <param name="log">Where overlaps go.</param>
     public FaceOwners(PlanarMap map, IReadOnlyList<UsedLayer> layers, IReadOnlyList<LayerCover> covers, Reach reach, SectionLog log)
     {
-        (_map, _layers, _covers) = (map, layers, covers);
+        (_map, _layers, _covers, _exact) = (map, layers, covers, reach.Exact);
         int regions = 0;
         foreach (LayerCover c in covers)
         {
@@ -176,7 +177,7 @@ internal sealed class FaceOwners
 
             foreach (Point p in new[] { _map.Points[_map.Edges[e].Start], _map.Points[_map.Edges[e].End] })
             {
-                if (p.Y < best.At.Y || (p.Y == best.At.Y && p.Z < best.At.Z))
+                if (p.Y < best.At.Y - _exact || (p.Y < best.At.Y + _exact && p.Z < best.At.Z))
                 {
                     best = (p, _map.Edges[e].Source);
                 }

@@ -76,11 +76,12 @@ internal sealed class HalfClosing
         double low = Math.Max(0, best - (1.0 / samples)), high = Math.Min(1, best + (1.0 / samples));
         for (int i = 0; i < steps; i++)
         {
-            double third = (high - low) / 3;
-            (low, high) = curve.At(low + third).Y < curve.At(high - third).Y ? (low, high - third) : (low + third, high);
+            double middle = 0.5 * (low + high);
+            (low, high) = curve.Derivative(middle).Y < 0 ? (middle, high) : (low, middle);
         }
 
-        return 0.5 * (low + high);
+        double found = 0.5 * (low + high);
+        return curve.At(found).Y < curve.At(best).Y ? found : best;
     }
 
     private void PutOnAxis()

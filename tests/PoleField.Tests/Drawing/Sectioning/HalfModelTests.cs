@@ -34,7 +34,7 @@ public sealed class HalfModelTests
         CrossSection with = Sound(Sketch(OpenPole(), [Line("POLE", 0, -4, 0, 10)]), Half("POLE"));
 
         Assert.Equal(without.Vertices.Order(ByPlace), with.Vertices.Order(ByPlace));
-        Assert.Equal(without.Regions[1].Area, with.Regions[1].Area, 18);
+        Assert.Equal(without.Regions[1].Area, with.Regions[1].Area, 15);
     }
 
     [Fact]
@@ -105,7 +105,7 @@ public sealed class HalfModelTests
         CrossSection s = Sound(Sketch([Circle("PIN", 3, 1, 3)]), Half("PIN"));
 
         Assert.Equal([9 * Math.PI, 9 * Math.PI], Areas(s, "PIN"), (a, b) => Math.Abs(a - b) < 1e-9);
-        Assert.Contains(new Point(0, 0.001), s.Vertices);
+        Assert.Equal(0.001, s.Vertices.Single(v => v.Y == 0).Z, 15);
     }
 
     [Fact]
