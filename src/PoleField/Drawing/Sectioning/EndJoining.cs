@@ -97,6 +97,7 @@ internal sealed class EndJoining
         PointGrid grid = new(clear * _reach.Join);
         loose.ForEach(e => grid.Add(End(e), e));
         Dictionary<int, int> nearest = [];
+        HashSet<int> told = [];
         List<int> near = [];
         foreach (int end in loose)
         {
@@ -112,6 +113,11 @@ internal sealed class EndJoining
             int second = candidates.FindIndex(1, c => c.Distance <= clear * distance && c.End != (first ^ 1));
             if (second > 0)
             {
+                if (!told.Add(end) | !told.Add(first) | !told.Add(candidates[second].End))
+                {
+                    continue;
+                }
+
                 _log.Add(SectionMessages.AmbiguousJoint(_log, End(end), End(first), End(candidates[second].End)), End(end), _curves[end >> 1].Source);
                 continue;
             }

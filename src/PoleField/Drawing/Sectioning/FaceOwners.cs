@@ -15,6 +15,7 @@ internal sealed class FaceOwners
     private readonly IReadOnlyList<UsedLayer> _layers;
     private readonly IReadOnlyList<LayerCover> _covers;
     private readonly List<int> _offset = []; // of each layer's regions in the common numbering
+    private readonly double _exact;
     private readonly bool[] _thin;
     private readonly List<int>[] _claims;  // regions over each face, common numbering
     private readonly int[] _faces;         // number of faces of each region, thin ones not counted
@@ -29,7 +30,7 @@ internal sealed class FaceOwners
     /// <param name="log">Where overlaps go.</param>
     public FaceOwners(PlanarMap map, IReadOnlyList<UsedLayer> layers, IReadOnlyList<LayerCover> covers, Reach reach, SectionLog log)
     {
-        (_map, _layers, _covers) = (map, layers, covers);
+        (_map, _layers, _covers, _exact) = (map, layers, covers, reach.Exact);
         int regions = 0;
         foreach (LayerCover c in covers)
         {
@@ -42,7 +43,7 @@ internal sealed class FaceOwners
         _claims = [.. Enumerable.Range(0, map.Areas.Count).Select(Claims)];
         CountShared();
         Owner = [.. Enumerable.Range(0, map.Areas.Count).Select(OwnerOf)];
-        Report(log, reach);
+        Report(log);
     }
 
     /// <summary>For each face: its region in the common numbering, or <see cref="Air"/> or <see cref="Beyond"/>.</summary>
@@ -140,7 +141,7 @@ internal sealed class FaceOwners
         return owner;
     }
 
-    private void Report(SectionLog log, Reach reach)
+    private void Report(SectionLog log)
     {
         foreach (((int a, int b), (double area, int face)) in _overlaps.OrderBy(o => o.Key))
         {
@@ -152,12 +153,12 @@ internal sealed class FaceOwners
         {
             foreach (UsedLayer part in _layers.Where(l => l.Role == LayerRole.Part))
             {
-                List<int> out_ = [.. Enumerable.Range(1, _thin.Length - 1).Where(f =>
+                List<int> outside = [.. Enumerable.Range(1, _thin.Length - 1).Where(f =>
                     !_thin[f] && _covers[part.Index].RegionOfFace[f] >= 0 && _covers[rim.Index].RegionOfFace[f] < 0)];
-                if (out_.Count > 0 && _covers[rim.Index].Regions > 0)
+                if (outside.Count > 0 && _covers[rim.Index].Regions > 0)
                 {
-                    (Point at, int source) = Corner(out_[0]);
-                    log.Add(SectionMessages.OutsideRim(log, part.Name, rim.Name, out_.Sum(f => _map.Areas[f]), at), at, source);
+                    (Point at, int source) = Corner(outside[0]);
+                    log.Add(SectionMessages.OutsideRim(log, part.Name, rim.Name, outside.Sum(f => _map.Areas[f]), at), at, source);
                 }
             }
         }
@@ -176,7 +177,7 @@ internal sealed class FaceOwners
 
             foreach (Point p in new[] { _map.Points[_map.Edges[e].Start], _map.Points[_map.Edges[e].End] })
             {
-                if (p.Y < best.At.Y || (p.Y == best.At.Y && p.Z < best.At.Z))
+                if (p.Y < best.At.Y - _exact || (p.Y < best.At.Y + _exact && p.Z < best.At.Z))
                 {
                     best = (p, _map.Edges[e].Source);
                 }

@@ -46,6 +46,9 @@ internal sealed class LayerCover
     /// <summary>Edges of the layer that bound nothing: parts of open outlines.</summary>
     public IReadOnlyList<int> OpenEdges { get; }
 
+    /// <summary>Edges of the layer that bound faces.</summary>
+    public IReadOnlyList<int> ClosedEdges => _edges;
+
     /// <summary>Covered region of each face, −1 where the layer covers nothing.</summary>
     public IReadOnlyList<int> RegionOfFace { get; }
 

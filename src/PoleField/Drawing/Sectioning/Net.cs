@@ -37,7 +37,7 @@ internal sealed class Net
     public List<Piece> Pieces { get; set; } = [];
 
     /// <summary>True when the net is the half y ≥ 0 of a symmetric section: points on y = 0 stay there.</summary>
-    public bool IsHalf { get; init; }
+    public bool IsHalf { get; set; }
 
     /// <summary>Gives every piece the exact places of its end points.</summary>
     public void Refit()
@@ -85,10 +85,21 @@ internal sealed record Reach(double Exact, double Fine, double Join, double Size
     private const double Ulps = 1e-15;     // of the coordinates: drawings far from zero cannot be finer
     private const double FineShare = 0.01; // of the join tolerance
 
-    public static Reach For(Box all, double join)
+    public static Reach For(IReadOnlyList<Piece> curves, double join)
     {
+        if (curves.Count == 0)
+        {
+            return new Reach(join, join, join, 0);
+        }
+
+        Box all = Box.Empty;
+        foreach (Piece p in curves)
+        {
+            all = all.Including(p.Curve.Bounds);
+        }
+
         double size = all.Diagonal;
-        double far = Math.Max(Math.Max(Math.Abs(all.Min.Y), Math.Abs(all.Max.Y)), Math.Max(Math.Abs(all.Min.Z), Math.Abs(all.Max.Z)));
+        double far = Math.Max(all.Min.Length, all.Max.Length);
         double exact = Math.Max(Relative * size, Ulps * far);
         return new Reach(exact, Math.Max(exact, FineShare * join), Math.Max(join, exact), size);
     }

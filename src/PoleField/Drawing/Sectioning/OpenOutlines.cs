@@ -5,7 +5,7 @@ namespace PoleField.Drawing;
 /// <summary>Reports what of a layer does not close.</summary>
 internal static class OpenOutlines
 {
-    private const int Most = 50; // of a layer; more faults are not shown anyway
+    private const int Most = 200; // ends of a layer that are looked at; far fewer are shown
 
     /// <summary>Adds a fault for each pair of loose ends, nearest first met, and for curves between outlines.</summary>
     public static void Report(PlanarMap map, LayerCover cover, string layer, Reach reach, SectionLog log)
@@ -23,7 +23,8 @@ internal static class OpenOutlines
             at[edge.End] = (at.GetValueOrDefault(edge.End).Ends + 1, edge.Source);
         }
 
-        List<int> loose = [.. at.Where(p => p.Value.Ends == 1).Select(p => p.Key).Order()];
+        HashSet<int> held = [.. cover.ClosedEdges.SelectMany(e => new[] { map.Edges[e].Start, map.Edges[e].End })];
+        List<int> loose = [.. at.Where(p => p.Value.Ends == 1 && !held.Contains(p.Key)).Select(p => p.Key).Order()];
         if (loose.Count == 0)
         {
             WovenEdge stray = map.Edges[cover.OpenEdges[0]];
@@ -34,7 +35,7 @@ internal static class OpenOutlines
         HashSet<int> told = [];
         foreach (int v in loose)
         {
-            if (told.Count >= 2 * Most || !told.Add(v))
+            if (told.Count >= Most || !told.Add(v))
             {
                 continue;
             }
@@ -49,6 +50,21 @@ internal static class OpenOutlines
             told.Add(mate);
             (Point a, Point b) = (map.Points[v], map.Points[mate]);
             log.Add(SectionMessages.OpenOutline(log, layer, (a, b), (at[v].Source, at[mate].Source), reach.Join), a, at[v].Source);
+        }
+    }
+
+    /// <summary>Adds a fault when a layer has no closed outline, or a rim or beam more than one.</summary>
+    public static void ReportCount(UsedLayer layer, LayerCover cover, SectionLog log)
+    {
+        string what = UsedLayers.Purpose(layer.Role);
+        if (cover.Outlines == 0 && cover.OpenEdges.Count == 0)
+        {
+            log.Add(SectionMessages.NoOutline(layer.Name, what));
+        }
+
+        if (cover.Outlines > 1 && layer.Role != LayerRole.Part)
+        {
+            log.Add(SectionMessages.NotOneOutline(layer.Name, what, cover.Outlines));
         }
     }
 }

@@ -97,11 +97,7 @@ internal sealed class SectionAssembly
         int ImageRegion(int r) => r < 0 ? r : image[r];
     }
 
-    private bool IsOnAxis(int e)
-    {
-        WovenEdge edge = _map.Edges[e];
-        return edge.Curve is Line && _map.Points[edge.Start].Y == 0 && _map.Points[edge.End].Y == 0;
-    }
+    private bool IsOnAxis(int e) => HalfClosing.IsOnAxis(_map.Edges[e].Curve);
 
     private int RegionOf(int face) =>
         _owners.Owner[face] == FaceOwners.Beyond ? CrossSection.Outside

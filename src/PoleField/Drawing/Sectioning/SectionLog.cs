@@ -12,6 +12,9 @@ internal sealed class SectionLog(Sketch sketch)
     private readonly Dictionary<(string What, string? Layer), int> _notes = [];
     private int _faults;
 
+    /// <summary>Unit of the sketch.</summary>
+    public LengthUnit Unit => sketch.Unit;
+
     /// <summary>True when something was found that forbids a section.</summary>
     public bool HasFaults => _faults > 0;
 

@@ -72,4 +72,60 @@ internal static class SectionMessages
         FormattableString.Invariant($"Layer {layer}, named as {what}, holds {outlines} closed outlines; exactly one is allowed."),
         "Leave one outline on the layer.")
     { Layer = layer };
+
+    public static Finding ClosedOnSymmetry(SectionLog log, string layer, Line line) => new(
+        Severity.Note,
+        "closed-on-symmetry",
+        $"An outline on layer {layer} was closed along the symmetry line from {log.Place(line.Start)} to {log.Place(line.End)}.",
+        "Nothing to do.")
+    { Layer = layer, Size = line.Length };
+
+    public static Finding ClosedByNeighbour(SectionLog log, string layer, Point at, double length) => new(
+        Severity.Note,
+        "closed-by-neighbour",
+        $"An open outline on layer {layer} leans on another part; {SectionLog.Length(length)} of that part's edge at {log.Place(at)} serve both.",
+        "Nothing to do.")
+    { Layer = layer, Size = length };
+
+    public static Finding AcrossSymmetry(SectionLog log, string layer, Point at) => new(
+        Severity.Fault,
+        "across-symmetry",
+        $"Layer {layer} reaches across the symmetry line, to {log.Place(at)}; a sketch that is mirrored left-right shows y >= 0 only.",
+        "Delete the left half, or set mirror = \"none\".")
+    { Layer = layer, Size = -at.Y };
+
+    public static Finding CoilOnSymmetry(SectionLog log, string layer, Point at) => new(
+        Severity.Fault,
+        "coil-on-symmetry",
+        $"The coil on layer {layer} touches the symmetry line at {log.Place(at)}; its image would carry the opposite current in the same place.",
+        "Draw the coil clear of y = 0.")
+    { Layer = layer };
+
+    public static Finding MissingLayer(string layer, string what, string? skipped, string? nearest, string found) => new(
+        Severity.Fault,
+        "missing-layer",
+        $"Layer {layer}, named as {what}, holds no curve of the sketch{(skipped is null ? "" : $" (skipped: {skipped})")}. Layers found: {found}.",
+        nearest is null ? "Name one of these layers." : $"Did you mean {nearest}?")
+    { Layer = layer };
+
+    public static Finding LayerTwice(string layer) => new(
+        Severity.Fault, "layer-twice", $"Layer {layer} is named for two purposes.", "Give each layer one purpose.")
+    { Layer = layer };
+
+    public static Finding LooksLike(string layer, string what) => new(
+        Severity.Note, "unused-layer", $"Layer {layer} looks like {what} and is not among the parts.", "Name it in the case if it belongs there.")
+    { Layer = layer };
+
+    public static Finding UnlikelySize(SectionLog log, Box box) => new(
+        Severity.Warning,
+        "unlikely-size",
+        FormattableString.Invariant($"The parts span {box.Width * 1e3:g4} x {box.Height * 1e3:g4} mm, read with 1 {log.Unit.Name} = {log.Unit.Metres * 1e3:g4} mm; magnets of 5 mm to 3 m are expected."),
+        "If the unit is wrong, state it in the case: [sketch] unit.")
+    { Size = Math.Max(box.Width, box.Height) };
+
+    public static Finding FarOrigin(SectionLog log, Point centre) => new(
+        Severity.Note,
+        "far-origin",
+        $"The sketch lies far from its origin, about {log.Place(centre)}; lengths are kept, to the digits its coordinates still hold.",
+        "Nothing to do; drawing about the origin keeps more digits.");
 }

@@ -1,3 +1,5 @@
+using PoleField.Geometry;
+
 namespace PoleField.Drawing;
 
 /// <summary>Turns a sketch into the cross-section a case asks for.</summary>
@@ -13,7 +15,18 @@ public static class Sectioning
     {
         SectionLog log = new(sketch);
         UsedLayers layers = new(sketch, request);
-        SectionReader reader = new(layers, request, log);
-        return reader.Read();
+        SectionRemarks.OnLayers(sketch, request, layers, log);
+        BeamReader beam = new(layers, request, log);
+        Outline? outline = beam.Read();
+        PartReader parts = new(layers, request, log);
+        CrossSection? section = parts.Read(out IReadOnlyList<PartShape> shapes);
+        return new SectionReading
+        {
+            Section = log.HasFaults ? null : section,
+            Beam = outline,
+            Parts = shapes,
+            IgnoredLayers = layers.Ignored,
+            Findings = log.Findings,
+        };
     }
 }

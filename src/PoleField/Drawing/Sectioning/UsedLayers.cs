@@ -8,6 +8,7 @@ internal sealed class UsedLayers
     private readonly Dictionary<string, int> _curves = new(StringComparer.OrdinalIgnoreCase);
     private readonly List<UsedLayer> _section = [];
     private readonly List<(string Layer, string For)> _missing = [];
+    private readonly List<string> _twice = [];
 
     /// <summary>Sorts the curves by layer.</summary>
     public UsedLayers(Sketch sketch, SectionRequest request)
@@ -44,9 +45,15 @@ internal sealed class UsedLayers
     /// <summary>Requested layers that hold no curve, with what each was wanted for.</summary>
     public IReadOnlyList<(string Layer, string For)> Missing => _missing;
 
+    /// <summary>Layers that were named for more than one purpose.</summary>
+    public IReadOnlyList<string> Twice => _twice;
+
     /// <summary>Layers that nobody asked for, by name.</summary>
     public IReadOnlyList<(string Layer, int Curves)> Ignored =>
         [.. _curves.Where(c => !_used.ContainsKey(c.Key)).Select(c => (c.Key, c.Value)).OrderBy(c => c.Key, StringComparer.Ordinal)];
+
+    /// <summary>What a layer is named as, in words.</summary>
+    public static string Purpose(LayerRole role) => role switch { LayerRole.Part => "a part", LayerRole.Rim => "the rim", _ => "the beam" };
 
     private UsedLayer? Take(string? name, LayerRole role, string key)
     {
@@ -55,9 +62,15 @@ internal sealed class UsedLayers
             return null;
         }
 
+        if (_used.ContainsKey(name))
+        {
+            _twice.Add(name);
+            return null;
+        }
+
         if (!_curves.ContainsKey(name))
         {
-            _missing.Add((name, role switch { LayerRole.Part => "a part", LayerRole.Rim => "the rim", _ => "the beam" }));
+            _missing.Add((name, Purpose(role)));
             return null;
         }
 
