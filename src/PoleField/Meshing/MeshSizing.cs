@@ -21,7 +21,7 @@ public sealed class MeshSizing
     private const double LipSize = 0.04; // in a, as all sizes below
     private const double TipCornerSize = 0.06;
     private const double RootSize = 0.12;
-    private const double PoleIronSize = 0.3;
+    private const double PoleIronSize = 0.27; // at the sources; 0.3 between them
     private const double PoleIronDepth = 2;
     private const double LipReach = 3; // lips are convex corners so near to the aperture, in a
     private const double TipReach = 12;
@@ -174,7 +174,7 @@ public sealed class MeshSizing
 
     private void AddPoleIron(Point p, Point inwards)
     {
-        const double step = 0.5;
+        const double step = 0.25;
         for (double depth = step; depth <= PoleIronDepth; depth += step)
         {
             Add(p + ((depth * Reach) * inwards), PoleIronSize * Reach);

@@ -146,6 +146,41 @@ public sealed class MesherTests
         Assert.Equal(1, AreaOf(mesh, left), 1e-12);
     }
 
+    [Theory]
+    [InlineData(0.1)]
+    [InlineData(0.004)]
+    public void CurvesOfAnyKindAreFollowedThroughTheirInflections(double gap)
+    {
+        // A wavy slit of air between two parts: the chords of one wave may not cross the other.
+        SineCurve lower = new(new Point(0, 0), 0.3), upper = new(new Point(0, gap), 0.3);
+        SectionFixture s = new();
+        int below = s.Region("below"), above = s.Region("above");
+        s.Edge(lower, CrossSection.Air, below).Edge(upper, above, CrossSection.Air);
+        s.Edge(new Line(lower.End, new Point(2, -1)), CrossSection.Air, below).Edge(new Line(new Point(2, -1), new Point(0, -1)), CrossSection.Air, below)
+            .Edge(new Line(new Point(0, -1), lower.Start), CrossSection.Air, below);
+        s.Edge(new Line(upper.End, new Point(2, 1)), above, CrossSection.Air).Edge(new Line(new Point(2, 1), new Point(0, 1)), above, CrossSection.Air)
+            .Edge(new Line(new Point(0, 1), upper.Start), above, CrossSection.Air);
+
+        Mesh mesh = Mesher.Mesh(s.Build(), SizeField.Uniform(0.3));
+
+        AssertSound(mesh);
+        Assert.True(MeshQuality.Of(mesh).SmallestAngleDegrees >= 22); // corners of waves and walls are sharper than 60 degrees
+    }
+
+    [Fact]
+    public void CirclesThatTouchAreMeshed()
+    {
+        Point touch = new(0, 0);
+        SectionFixture s = new();
+        s.Edge(new CircularArc(new Point(1, 0), 1, Math.PI, Math.Tau).WithEnds(touch, touch), s.Region("right"), CrossSection.Air);
+        s.Edge(new CircularArc(new Point(-0.3, 0), 0.3, 0, Math.Tau).WithEnds(touch, touch), s.Region("left"), CrossSection.Air);
+
+        Mesh mesh = Mesher.Mesh(s.Build(), SizeField.Uniform(0.2));
+
+        AssertSound(mesh);
+        Assert.InRange(mesh.TriangleCount, 300, 5_000);
+    }
+
     [Fact]
     public void ARimThatBulgesInwardsAndOutwardsIsFollowed()
     {
