@@ -1,5 +1,6 @@
 using PoleField.Beam;
 using PoleField.Cli.Case;
+using PoleField.Cli.Files;
 using PoleField.Cli.Commands;
 using PoleField.Drawing;
 using PoleField.Geometry;
@@ -50,7 +51,8 @@ internal sealed record Pipeline
         ReadMaterial = ReadCurve,
         Solve = (magnet, aperture, options, progress, cancellation) =>
             MagnetSolver.Solve(magnet, aperture, options, progress, cancellation),
-        WriteResult = WriteResultJson,
+        WriteResult = ResultOutput.WriteJson,
+        ResultPictures = ResultOutput.Pictures,
     };
 
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
@@ -61,10 +63,6 @@ internal sealed record Pipeline
     private static IReadOnlyList<Material> BuiltInMaterials() => [.. MaterialLibrary.Names.Select(MaterialLibrary.Get)];
 
     private static Material ReadCurve(Stream stream, string name) => MaterialFile.Read(stream, name);
-
-    // seam: PoleField.Output.ResultJson.Write(stream, ...)
-    private static void WriteResultJson(Stream stream, SolveResult result) =>
-        throw new NotImplementedException("seam: ResultJson.Write");
 }
 
 /// <summary>A file to be written: name with extension, and what writes it.</summary>
