@@ -55,7 +55,10 @@ public sealed partial class MeshCheck
         Severity.Fault,
         what,
         FormattableString.Invariant($"At ({at.Y:g9}, {at.Z:g9}) m: ") + FormattableString.Invariant(text),
-        "Report this with the drawing: the mesher broke its promise.") { At = at });
+        "Report this with the drawing: the mesher broke its promise.")
+    {
+        At = at,
+    });
 
     private int Corner(int triangle, int c) => _mesh.Triangles[(3 * triangle) + (c % 3)];
 

@@ -26,6 +26,19 @@ public sealed class MesherTests
         AssertEdgesFollow(mesh, size);
     }
 
+    [Theory]
+    [InlineData(20)]
+    [InlineData(7)]
+    public void NoEdgeTurnsMoreThanItMay(double degrees)
+    {
+        Mesh mesh = Mesher.Mesh(
+            ProblemP.Section(box: false), SizeField.Uniform(0.05), new MeshOptions { LargestTurnDegrees = degrees });
+
+        double[] turns = [.. mesh.CurveEdges.Where(e => e.Curve is CircularArc)
+            .Select(e => Math.Abs(((CircularArc)e.Curve).Sweep) * (e.TB - e.TA) * 180 / Math.PI)];
+        Assert.InRange(turns.Max(), degrees / 2, degrees * (1 + 1e-6));
+    }
+
     [Fact]
     public void SameInputGivesTheSameBytes()
     {
@@ -144,6 +157,46 @@ public sealed class MesherTests
         AssertSound(mesh);
         Assert.True(MeshQuality.Of(mesh).SmallestAngleDegrees >= 25);
         Assert.Equal(1, AreaOf(mesh, left), 1e-12);
+    }
+
+    [Theory]
+    [InlineData(1)]
+    [InlineData(2)]
+    [InlineData(3)]
+    public void APatchworkOfTouchingPartsFillsItsRim(int seed)
+    {
+        const int cells = 7;
+        Random random = new(seed);
+        Point[,] corner = new Point[cells + 1, cells + 1];
+        for (int i = 0; i <= cells; i++)
+        {
+            for (int j = 0; j <= cells; j++)
+            {
+                corner[i, j] = new Point(i + (0.7 * (random.NextDouble() - 0.5)), j + (0.7 * (random.NextDouble() - 0.5)));
+            }
+        }
+
+        SectionFixture s = new();
+        int[,] region = new int[cells, cells];
+        for (int k = 0; k < cells * cells; k++)
+        {
+            region[k / cells, k % cells] = s.Region(FormattableString.Invariant($"cell {k}"));
+        }
+
+        int At(int i, int j) => i >= 0 && j >= 0 && i < cells && j < cells ? region[i, j] : CrossSection.Outside;
+        for (int i = 0; i <= cells; i++)
+        {
+            for (int j = 0; j < cells; j++)
+            {
+                s.Edge(new Line(corner[i, j], corner[i, j + 1]), At(i - 1, j), At(i, j));
+                s.Edge(new Line(corner[j, i], corner[j + 1, i]), At(j, i), At(j, i - 1));
+            }
+        }
+
+        Mesh mesh = Mesher.Mesh(s.Build(), SizeField.FromSources(1, 0.35, [(new Point(3, 3), 0.05)]));
+
+        AssertSound(mesh);
+        Assert.Equal(cells * cells, mesh.Regions.Distinct().Count());
     }
 
     [Theory]
