@@ -47,9 +47,9 @@ internal sealed class FieldRaster
     }
 
     /// <summary>Evaluates a function at every pixel; not a number leaves the pixel empty.</summary>
-    public static FieldRaster OfFunction(Func<Point, double> value, Box view, int columns)
+    public static FieldRaster OfFunction(Func<Point, double> value, Box view, int columns, int rows)
     {
-        FieldRaster raster = new(view, columns, Math.Max(1, (int)Math.Round(columns * view.Height / view.Width)));
+        FieldRaster raster = new(view, columns, rows);
         for (int row = 0; row < raster.Rows; row++)
         {
             for (int column = 0; column < columns; column++)

@@ -43,14 +43,11 @@ internal sealed class PartLabels(CrossSection section, IReadOnlyList<LabelPlace>
             double left = Math.Clamp(box.Left, area.Left + 3, Math.Max(area.Left + 3, area.Right - 3 - box.Width));
             at = new ScreenPoint(left + (box.Width / 2), at.Y);
             box = Mark.LabelBox(at, text);
-            bool fits = box.Top >= area.Top && box.Bottom <= area.Bottom && !taken.Exists(t => Overlap(t, box));
+            bool fits = box.Top >= area.Top && box.Bottom <= area.Bottom && !taken.Exists(t => LevelLabels.Overlap(t, box));
             if (fits && (ampereTurns != 0.0 || named.Add(text)))
             {
                 taken.Add(Mark.Label(rc, at, text));
             }
         }
     }
-
-    private static bool Overlap(OxyRect a, OxyRect b) =>
-        a.Left < b.Right && b.Left < a.Right && a.Top < b.Bottom && b.Top < a.Bottom;
 }

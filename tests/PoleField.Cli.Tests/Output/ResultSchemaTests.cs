@@ -1,4 +1,5 @@
 // Truth: JSON Schema 2020-12 as another implementation (JsonSchema.Net) checks it.
+using System.Text.Json;
 using System.Text.Json.Nodes;
 using Json.Schema;
 using PoleField.Beam;
@@ -17,7 +18,7 @@ public sealed class ResultSchemaTests
     {
         EvaluationResults results = Evaluate(Written());
 
-        Assert.True(results.IsValid, string.Join("; ", results.Details.Where(d => d.HasErrors).Select(d => $"{d.InstanceLocation}: {string.Join(", ", d.Errors!.Values)}")));
+        Assert.True(results.IsValid, string.Join("; ", results.Details!.Where(d => d.Errors is not null).Select(d => $"{d.InstanceLocation}: {string.Join(", ", d.Errors!.Values)}")));
     }
 
     [Theory]
@@ -58,8 +59,11 @@ public sealed class ResultSchemaTests
         Assert.All(properties, p => Assert.False(string.IsNullOrEmpty((string?)p.Value!["description"])));
     }
 
-    private static EvaluationResults Evaluate(JsonNode node) =>
-        Schema.Evaluate(node, new EvaluationOptions { OutputFormat = OutputFormat.List });
+    private static EvaluationResults Evaluate(JsonNode node)
+    {
+        using JsonDocument document = JsonDocument.Parse(node.ToJsonString());
+        return Schema.Evaluate(document.RootElement, new EvaluationOptions { OutputFormat = OutputFormat.List });
+    }
 
     private static JsonNode Written()
     {
