@@ -18,62 +18,82 @@ internal static class LeaningOutlines
             return borrowed;
         }
 
-        HashSet<int> taken = [0];
-        foreach (UsedLayer layer in layers)
+        HashSet<int> taken = TakenFaces(map, layers, covers);
+        List<(int Layer, List<int> Halves)> waiting = [.. layers.Where(l => l.Role == LayerRole.Part)
+            .SelectMany(l => Chains(map, covers[l.Index].OpenEdges).Select(c => (l.Index, c)))];
+
+        // Closing one outline may leave only one meaning for the next.
+        while (waiting.FindIndex(w => FreeSide(map, w.Halves, taken) >= 0) is int next and >= 0)
         {
-            bool isRim = layer.Role == LayerRole.Rim;
-            for (int e = 0; isRim && e < map.Edges.Count; e++)
-            {
-                if (map.Edges[e].Layers.Contains(layer.Index))
-                {
-                    taken.UnionWith([map.Left(e), map.Right(e)]);
-                }
-            }
-
-            IReadOnlyList<int> regions = covers[layer.Index].RegionOfFace;
-            taken.UnionWith(Enumerable.Range(0, isRim ? 0 : regions.Count).Where(f => regions[f] >= 0));
-        }
-
-        foreach (UsedLayer layer in layers.Where(l => l.Role == LayerRole.Part))
-        {
-            foreach (List<int> chain in Chains(map, covers[layer.Index].OpenEdges))
-            {
-                HashSet<int> sides = [.. chain.SelectMany(e => new[] { map.Left(e), map.Right(e) })];
-                List<int> free = [.. sides.Where(f => !taken.Contains(f))];
-                if (sides.Count != 2 || free.Count != 1)
-                {
-                    continue;
-                }
-
-                int half = (2 * chain[0]) + (map.Left(chain[0]) == free[0] ? 0 : 1);
-                HashSet<int> foreign = [.. map.Walk(half).Select(h => h >> 1).Where(e => !map.Edges[e].Layers.Contains(layer.Index))];
-                borrowed[layer.Index].UnionWith(foreign);
-                WovenEdge first = map.Edges[foreign.Min()];
-                log.Add(
-                    SectionMessages.ClosedByNeighbour(log, layer.Name, first.Curve.At(0.5), foreign.Sum(e => map.Edges[e].Curve.Length)),
-                    first.Curve.At(0.5),
-                    map.Edges[chain[0]].Source);
-            }
+            (int layer, List<int> halves) = waiting[next];
+            waiting.RemoveAt(next);
+            int side = FreeSide(map, halves, taken);
+            taken.Add(map.FaceOf(side));
+            HashSet<int> foreign = [.. map.Walk(side).Select(h => h >> 1).Where(e => !map.Edges[e].Layers.Contains(layer))];
+            borrowed[layer].UnionWith(foreign);
+            Point at = map.Edges[foreign.Min()].Curve.At(0.5);
+            double length = foreign.Sum(e => map.Edges[e].Curve.Length);
+            log.Add(SectionMessages.ClosedByNeighbour(log, layers[layer].Name, at, length), at, map.Edges[halves[0] >> 1].Source);
         }
 
         return borrowed;
     }
 
-    private static IEnumerable<List<int>> Chains(PlanarMap map, IReadOnlyList<int> edges)
+    // The unbounded face, what touches the rim, and what other parts cover.
+    private static HashSet<int> TakenFaces(PlanarMap map, IReadOnlyList<UsedLayer> layers, IReadOnlyList<LayerCover> covers)
     {
-        UnionFind sets = new(edges.Count);
-        Dictionary<int, int> at = [];
-        for (int i = 0; i < edges.Count; i++)
+        HashSet<int> taken = [0];
+        foreach (UsedLayer layer in layers)
         {
-            foreach (int v in new[] { map.Edges[edges[i]].Start, map.Edges[edges[i]].End })
+            if (layer.Role == LayerRole.Rim)
             {
-                if (!at.TryAdd(v, i))
-                {
-                    sets.Union(at[v], i);
-                }
+                taken.UnionWith(covers[layer.Index].ClosedEdges.SelectMany(e => new[] { map.Left(e), map.Right(e) }));
+                continue;
             }
+
+            IReadOnlyList<int> regions = covers[layer.Index].RegionOfFace;
+            taken.UnionWith(Enumerable.Range(0, regions.Count).Where(f => regions[f] >= 0));
         }
 
-        return Enumerable.Range(0, edges.Count).GroupBy(sets.Find).Select(g => g.Select(i => edges[i]).ToList());
+        return taken;
+    }
+
+    // Half-edge with the one free face beside the whole chain on its left; −1 when there is none or a choice.
+    private static int FreeSide(PlanarMap map, List<int> halves, HashSet<int> taken)
+    {
+        bool IsFree(IEnumerable<int> side) => side.Select(map.FaceOf).Distinct().Take(2).ToList() is [int face] && !taken.Contains(face);
+        bool left = IsFree(halves), right = IsFree(halves.Select(h => h ^ 1));
+        return left == right ? -1 : left ? halves[0] : halves[0] ^ 1;
+    }
+
+    // Open edges strung from end to end; branched ones are left out.
+    private static IEnumerable<List<int>> Chains(PlanarMap map, IReadOnlyList<int> edges)
+    {
+        Dictionary<int, List<int>> leaving = [];
+        foreach (int h in edges.SelectMany(e => new[] { 2 * e, (2 * e) + 1 }))
+        {
+            (leaving.TryGetValue(map.StartOf(h), out List<int>? list) ? list : leaving[map.StartOf(h)] = []).Add(h);
+        }
+
+        HashSet<int> used = [];
+        foreach (int first in leaving.Where(l => l.Value.Count == 1).OrderBy(l => l.Key).Select(l => l.Value[0]))
+        {
+            List<int> halves = [];
+            int h = first;
+            while (used.Add(h >> 1))
+            {
+                halves.Add(h);
+                List<int> on = leaving[map.StartOf(h ^ 1)];
+                if (on.Count == 2)
+                {
+                    h = on[0] == (h ^ 1) ? on[1] : on[0];
+                }
+            }
+
+            if (halves.Count > 0 && leaving[map.StartOf(halves[^1] ^ 1)].Count == 1)
+            {
+                yield return halves;
+            }
+        }
     }
 }

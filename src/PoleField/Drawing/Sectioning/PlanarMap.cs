@@ -57,6 +57,9 @@ internal sealed class PlanarMap
     /// <summary>Face on the right of an edge.</summary>
     public int Right(int edge) => _faceOfHalf[(2 * edge) + 1];
 
+    /// <summary>Face on the left of a half-edge.</summary>
+    public int FaceOf(int half) => _faceOfHalf[half];
+
     /// <summary>Point where a half-edge starts.</summary>
     public int StartOf(int half) => (half & 1) == 0 ? Edges[half >> 1].Start : Edges[half >> 1].End;
 
