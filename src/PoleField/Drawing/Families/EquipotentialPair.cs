@@ -34,7 +34,7 @@ public abstract record EquipotentialPair : PoleFamily
     public double Tolerance { get; init; } = 1e-3;
 
     /// <summary>The beam's rectangle.</summary>
-    public BeamRectangle Beam { get; init; } = new();
+    public BeamExtent Beam { get; init; } = new();
 
     /// <summary>Poles, yoke and coils.</summary>
     public YokeFrame Frame { get; init; } = new();

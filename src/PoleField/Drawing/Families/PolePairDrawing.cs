@@ -66,7 +66,7 @@ internal sealed class PolePairDrawing
     ];
 
     /// <summary>Faults of the faces against each other, the frame and the beam.</summary>
-    public void Check(DimensionCheck check, BeamRectangle beam, Point at)
+    public void Check(DimensionCheck check, BeamExtent beam, Point at)
     {
         const string move = "Move the beam, or change the faces.";
         check.Less(("The ridge's apex", _ridge.Apex.Z), ("the beam's lower edge", at.Z - (beam.Height / 2)), move);

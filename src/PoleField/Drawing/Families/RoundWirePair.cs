@@ -24,7 +24,7 @@ public sealed record RoundWirePair : PoleFamily
     public double BeamPlace { get; init; } = 1.2;
 
     /// <summary>The beam's rectangle.</summary>
-    public BeamRectangle Beam { get; init; } = new();
+    public BeamExtent Beam { get; init; } = new();
 
     /// <inheritdoc/>
     public override StartingSketch Draw()

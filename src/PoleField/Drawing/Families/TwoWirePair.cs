@@ -42,7 +42,7 @@ public sealed record TwoWirePair : PoleFamily
     public double BeamPlace { get; init; } = 1.2;
 
     /// <summary>The beam's rectangle.</summary>
-    public BeamRectangle Beam { get; init; } = new();
+    public BeamExtent Beam { get; init; } = new();
 
     /// <summary>Poles, yoke and coils.</summary>
     public YokeFrame Frame { get; init; } = new();

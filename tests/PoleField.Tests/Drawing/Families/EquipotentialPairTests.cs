@@ -128,7 +128,7 @@ public sealed class EquipotentialPairTests
 
         Assert.Equal(5, Assert.Throws<InputException>(wrong.Draw).Findings.Count);
         Assert.Throws<InputException>((new ShiftedQuadrupolePair() with { GrooveDistance = 3 }).Draw);
-        Assert.Throws<InputException>((new ShiftedQuadrupolePair() with { Beam = new BeamRectangle(3, 2) }).Draw);
+        Assert.Throws<InputException>((new ShiftedQuadrupolePair() with { Beam = new BeamExtent(3, 2) }).Draw);
     }
 
     // The face alone: everything between the two ends of the flanks is arcs or short lines near the axis.

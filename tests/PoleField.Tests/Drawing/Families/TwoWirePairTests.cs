@@ -112,7 +112,7 @@ public sealed class TwoWirePairTests
             HalfSpacing = 4,
             RidgeRadius = 3,
             GrooveRadius = -1,
-            Beam = new BeamRectangle(double.NaN, 0.3),
+            Beam = new BeamExtent(double.NaN, 0.3),
             Frame = new YokeFrame { CoilOuter = 60, Thickness = 0 },
         };
 
@@ -137,7 +137,7 @@ public sealed class TwoWirePairTests
             "land" => good with { LandEdge = 3 },
             "beam-low" => good with { BeamPlace = 1.01 },
             "beam-high" => good with { BeamPlace = 1.8 },
-            "beam-wide" => good with { Beam = new BeamRectangle(7, 0.3) },
+            "beam-wide" => good with { Beam = new BeamExtent(7, 0.3) },
             "pole" => good with { LandEdge = 15 },
             "frame" => good with { Frame = good.Frame with { InnerBottom = -10, LowerCoil = (-9, -2) } },
             _ => good with { GrooveHalfAngle = 120, RidgeReach = 2.9, LandEdge = 14 },
