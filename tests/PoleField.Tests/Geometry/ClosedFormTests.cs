@@ -132,6 +132,7 @@ public sealed class ClosedFormTests
         Assert.Equal(0, curve.Derivative(0).DistanceTo(curve.Derivative(1)), 1e-12);
         Assert.Equal(0, curve.SecondDerivative(0).DistanceTo(curve.SecondDerivative(1)), 1e-10);
         Assert.Equal(Math.PI, curve.AreaTerm(default), 1e-4);
+        Assert.Equal(0, Outline.FromCurves([curve]).Centroid.Length, 1e-12);
     }
 
     [Theory]

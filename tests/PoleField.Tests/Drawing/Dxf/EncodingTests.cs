@@ -8,6 +8,7 @@ public sealed class EncodingTests
 {
     [Theory]
     [InlineData("ANSI_1252", 1252, "EISENKÖRPER")]
+    [InlineData("ANSI_1252", 1252, "Ã–")] // these bytes would be valid UTF-8 as well
     [InlineData("ANSI_1250", 1250, "ŻELAZO")]
     [InlineData("ANSI_1251", 1251, "ЖЕЛЕЗО")]
     [InlineData("ansi_932", 932, "鉄心")]
