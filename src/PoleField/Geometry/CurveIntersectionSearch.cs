@@ -4,7 +4,7 @@ namespace PoleField.Geometry;
 internal sealed class CurveIntersectionSearch
 {
     private const int MostPairs = 20_000; // curves that run along each other stop here instead of at the machine's precision
-    private const double CalmTurn = 0.3;  // radians; pieces that turn less and cross squarely meet once
+    private const double CalmTurn = 0.3;  // radians; pieces that turn less are fit for Newton's method
 
     private readonly Curve _a;
     private readonly Curve _b;
@@ -38,20 +38,21 @@ internal sealed class CurveIntersectionSearch
             }
 
             bool calm = a.Turn < CalmTurn && b.Turn < CalmTurn;
-            if (calm && TryNewton(a, b))
+            double leaf = Math.Max(Leaf(a), Leaf(b));
+            if (calm && IsSettled(a, b))
             {
                 continue;
             }
 
-            if (Math.Max(a.Box.Diagonal, b.Box.Diagonal) <= _tolerance)
+            if (Math.Max(a.Box.Diagonal, b.Box.Diagonal) <= leaf)
             {
-                Add(a.Middle, b.Middle);
+                AddTouch(a, b, leaf);
                 continue;
             }
 
-            foreach (Span p in a.Box.Diagonal > _tolerance ? a.Halves(_a) : [a])
+            foreach (Span p in a.Box.Diagonal > 0.5 * b.Box.Diagonal ? a.Halves(_a) : [a])
             {
-                foreach (Span q in b.Box.Diagonal > _tolerance ? b.Halves(_b) : [b])
+                foreach (Span q in b.Box.Diagonal > 0.5 * a.Box.Diagonal ? b.Halves(_b) : [b])
                 {
                     waiting.Enqueue((p, q));
                 }
@@ -59,46 +60,60 @@ internal sealed class CurveIntersectionSearch
         }
     }
 
-    // True when the pieces are settled: they meet squarely once, or their straight hulls cannot meet.
-    private bool TryNewton(Span a, Span b)
+    // Pieces so short that they leave their tangent by less than the tolerance cannot be told apart by halving.
+    private double Leaf(Span s) => Math.Max(2 * _tolerance, s.Turn > 0 ? Math.Sqrt(_tolerance * s.Box.Diagonal / s.Turn) : 0);
+
+    // True when the pieces meet once for certain: at an angle larger than all they turn.
+    private bool IsSettled(Span a, Span b)
     {
         double t = a.Middle, u = b.Middle;
         const int steps = 12;
-        const double square = 0.3; // sine of the crossing angle above which one crossing is all
         for (int i = 0; i < steps; i++)
         {
             Point gap = _b.At(u) - _a.At(t);
             Point d = _a.Derivative(t), e = _b.Derivative(u);
             double cross = d.Cross(e);
-            if (!(Math.Abs(cross) > square * d.Length * e.Length))
+            if (!(Math.Abs(cross) > 0))
             {
                 return false;
             }
 
-            double dt = gap.Cross(e) / cross, du = gap.Cross(d) / cross;
-            t = Math.Clamp(t + dt, 0, 1);
-            u = Math.Clamp(u + du, 0, 1);
+            t = Math.Clamp(t + (gap.Cross(e) / cross), 0, 1);
+            u = Math.Clamp(u + (gap.Cross(d) / cross), 0, 1);
         }
 
-        double miss = _a.At(t).DistanceTo(_b.At(u));
-        if (miss > _tolerance)
+        Point along = _a.Derivative(t), across = _b.Derivative(u);
+        double sine = Math.Abs(along.Cross(across)) / (along.Length * across.Length);
+        bool once = Math.Asin(Math.Min(1, sine)) > a.Turn + b.Turn;
+        if (!once || !a.Holds(t) || !b.Holds(u) || _a.At(t).DistanceTo(_b.At(u)) > _tolerance)
         {
-            // Stuck at an end: the pieces miss each other if the end lies outside both; halving decides.
             return false;
         }
 
-        if (a.Holds(t) && b.Holds(u))
-        {
-            Add(t, u);
-        }
-
+        Add(t, u, 4 * _tolerance);
         return true;
     }
 
-    private void Add(double t, double u)
+    private void AddTouch(Span a, Span b, double apart)
+    {
+        double t = a.Middle, u = b.Middle;
+        const int steps = 20;
+        for (int i = 0; i < steps; i++)
+        {
+            u = _b.ClosestParameter(_a.At(t));
+            t = _a.ClosestParameter(_b.At(u));
+        }
+
+        if (_a.At(t).DistanceTo(_b.At(u)) <= _tolerance)
+        {
+            Add(t, u, 4 * apart);
+        }
+    }
+
+    private void Add(double t, double u, double apart)
     {
         Point p = _a.At(t);
-        if (!_found.Exists(f => _a.At(f.Item1).DistanceTo(p) <= 4 * _tolerance) && p.DistanceTo(_b.At(u)) <= 2 * _tolerance)
+        if (!_found.Exists(f => _a.At(f.Item1).DistanceTo(p) <= apart))
         {
             _found.Add((t, u));
         }

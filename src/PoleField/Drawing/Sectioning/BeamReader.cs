@@ -20,7 +20,7 @@ internal sealed class BeamReader(UsedLayers layers, SectionRequest request, Sect
             HalfClosing.Close(net, [beam], reach, log);
         }
 
-        PlanarMap map = new(net.Points, Weaving.Weave(net, [beam], reach, log));
+        PlanarMap map = new(net.Points, Weaving.Weave(net, reach, log));
         LayerCover cover = new(map, 0, _ => true);
         OpenOutlines.Report(map, cover, beam.Name, reach, log);
         OpenOutlines.ReportCount(beam, cover, log);

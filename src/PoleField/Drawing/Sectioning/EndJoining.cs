@@ -110,7 +110,7 @@ internal sealed class EndJoining
             }
 
             (double distance, int first) = candidates[0];
-            int second = candidates.FindIndex(1, c => c.Distance <= clear * distance && c.End != (first ^ 1));
+            int second = candidates.FindIndex(1, c => c.Distance > _reach.Fine && c.Distance <= clear * distance && c.End != (first ^ 1));
             if (second > 0)
             {
                 if (!told.Add(end) | !told.Add(first) | !told.Add(candidates[second].End))
@@ -149,7 +149,7 @@ internal sealed class EndJoining
         _sets.Union(end, other);
         Point place = IsStraight(end) == IsStraight(other) ? Point.Between(a, b, 0.5) : IsStraight(end) ? b : a;
         (_moved[_sets.Find(end)], _bent[_sets.Find(end)]) = (place, !(IsStraight(end) && IsStraight(other)));
-        _log.Add(SectionMessages.HealedJoint(_log, place, a.DistanceTo(b)), place, _curves[end >> 1].Source);
+        _log.AddHealed(place, a.DistanceTo(b), _curves[end >> 1].Source);
     }
 
     // Corners of different layers within reach; of one layer only within the fine reach, since short edges may be meant.

@@ -52,7 +52,7 @@ internal static class LayerSurvey
         Piece[] pieces = [.. curves.Select(c => new Piece(CurveEnds.ToMetres(c.Curve.Curve, sketch.Unit.Metres), -1, -1, 0, c.Index))];
         Reach reach = Reach.For(pieces, join);
         Net net = EndJoining.Join([layer], pieces, reach, silent);
-        PlanarMap map = new(net.Points, Weaving.Weave(net, [layer], reach, silent));
+        PlanarMap map = new(net.Points, Weaving.Weave(net, reach, silent));
         LayerCover cover = new(map, 0, _ => true);
         string outlines = FormattableString.Invariant($"{cover.Outlines} closed outline{(cover.Outlines == 1 ? "" : "s")}");
         return cover.Outlines == 0 ? $"{name} ({count}, no closed outline)" : $"{name} ({count}, {outlines}, {SectionLog.Area(cover.Area)})";

@@ -16,7 +16,7 @@ internal sealed class PartReader(UsedLayers layers, SectionRequest request, Sect
             HalfClosing.Close(net, used, reach, log);
         }
 
-        PlanarMap map = new(net.Points, Weaving.Weave(net, used, reach, log));
+        PlanarMap map = new(net.Points, Weaving.Weave(net, reach, log));
         List<LayerCover> covers = Covers(map, reach);
         FaceOwners owners = new(map, used, covers, reach, log);
         CheckCoils(map, owners);

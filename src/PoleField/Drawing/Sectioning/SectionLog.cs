@@ -7,9 +7,11 @@ internal sealed class SectionLog(Sketch sketch)
 {
     private const int MostFaults = 50;
     private const int MostNotesOfAKind = 200;
+    private const double Listed = 1e-9; // metres
 
     private readonly List<Finding> _findings = [];
     private readonly Dictionary<(string What, string? Layer), int> _notes = [];
+    private readonly SortedDictionary<string, int> _tiny = new(StringComparer.Ordinal); // closed gaps too small to list, by layer
     private int _faults;
 
     /// <summary>Unit of the sketch.</summary>
@@ -27,6 +29,14 @@ internal sealed class SectionLog(Sketch sketch)
             if (_faults > MostFaults)
             {
                 all.Add(new Finding(Severity.Note, "more-faults", Invariant($"{_faults - MostFaults} more faults are not shown."), "Mend these first."));
+            }
+
+            foreach ((string layer, int count) in _tiny)
+            {
+                string ends = count == 1 ? "1 joint" : Invariant($"{count} joints");
+                all.Add(new Finding(
+                    Severity.Note, "healed-joint", $"{ends} with less than {Length(Listed)} between the ends closed on layer {layer}.", "Nothing to do.")
+                { File = sketch.Name, Layer = layer });
             }
 
             foreach (((string what, string? layer), int count) in _notes.Where(n => n.Value > MostNotesOfAKind))
@@ -69,6 +79,19 @@ internal sealed class SectionLog(Sketch sketch)
         }
 
         _findings.Add(full);
+    }
+
+    /// <summary>Adds a note about ends that were joined; gaps below a nanometre are only counted.</summary>
+    public void AddHealed(Point at, double gap, int source)
+    {
+        if (gap > Listed)
+        {
+            Add(SectionMessages.HealedJoint(this, at, gap), at, source);
+            return;
+        }
+
+        string layer = sketch.Curves[source].Layer;
+        _tiny[layer] = _tiny.GetValueOrDefault(layer) + 1;
     }
 
     /// <summary>"(22.000, -14.05) mm", in drawing units, and in millimetres too where those differ.</summary>

@@ -13,6 +13,12 @@ internal sealed class UsedLayers
     /// <summary>Sorts the curves by layer.</summary>
     public UsedLayers(Sketch sketch, SectionRequest request)
     {
+        if (request.MaterialKeys.Count != request.PartLayers.Count)
+        {
+            throw new ArgumentException(FormattableString.Invariant(
+                $"Each of the {request.PartLayers.Count} part layers needs a material key; got {request.MaterialKeys.Count}."), nameof(request));
+        }
+
         _sketch = sketch;
         foreach (SketchCurve c in sketch.Curves)
         {

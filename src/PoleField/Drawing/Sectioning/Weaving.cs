@@ -6,20 +6,19 @@ namespace PoleField.Drawing;
 internal sealed class Weaving
 {
     private readonly Net _net;
-    private readonly IReadOnlyList<UsedLayer> _layers;
     private readonly Reach _reach;
     private readonly SectionLog _log;
     private readonly SortedDictionary<int, List<(double T, int Point)>> _cuts = [];
 
-    private Weaving(Net net, IReadOnlyList<UsedLayer> layers, Reach reach, SectionLog log)
+    private Weaving(Net net, Reach reach, SectionLog log)
     {
-        (_net, _layers, _reach, _log) = (net, layers, reach, log);
+        (_net, _reach, _log) = (net, reach, log);
     }
 
     /// <summary>The edges of the planar map; the net's points are their ends.</summary>
-    public static List<WovenEdge> Weave(Net net, IReadOnlyList<UsedLayer> layers, Reach reach, SectionLog log)
+    public static List<WovenEdge> Weave(Net net, Reach reach, SectionLog log)
     {
-        Weaving weaving = new(net, layers, reach, log);
+        Weaving weaving = new(net, reach, log);
         weaving.CutAtPoints();
         weaving.CutAtCrossings();
         return weaving.LayTogether();
@@ -39,36 +38,46 @@ internal sealed class Weaving
             bool movable = incident[v].TrueForAll(i => _net.Pieces[i].Curve is Line) && !(_net.IsHalf && p.Y == 0);
             foreach (int i in near)
             {
-                Piece piece = _net.Pieces[i];
-                if (piece.Start == v || piece.End == v)
-                {
-                    continue;
-                }
-
-                double t = piece.Curve.ClosestParameter(p);
-                Point foot = piece.Curve.At(t);
-                double distance = foot.DistanceTo(p);
-                int own = incident[v].Count(k => _net.Pieces[k].Layer == piece.Layer);
-                double reach = own < 2 ? _reach.Join : _reach.Fine;
-                if (distance > reach || Math.Min(foot.DistanceTo(piece.Curve.Start), foot.DistanceTo(piece.Curve.End)) <= _reach.Fine)
-                {
-                    continue;
-                }
-
-                Cut(i, t, v);
-                if (distance > _reach.Exact)
-                {
-                    _log.Add(SectionMessages.HealedJoint(_log, p, distance), p, _net.Pieces[incident[v][0]].Source);
-                    if (movable)
-                    {
-                        _net.Points[v] = foot;
-                        movable = false;
-                    }
-                }
+                movable = CutAt(i, v, incident[v], movable);
             }
         }
 
         ApplyCuts();
+    }
+
+    // Cuts a piece at a point near it; a point that can move moves onto the piece, once. Tells whether it still can.
+    private bool CutAt(int i, int v, List<int> incident, bool movable)
+    {
+        Piece piece = _net.Pieces[i];
+        if (piece.Start == v || piece.End == v)
+        {
+            return movable;
+        }
+
+        Point p = _net.Points[v];
+        double t = piece.Curve.ClosestParameter(p);
+        Point foot = piece.Curve.At(t);
+        double distance = foot.DistanceTo(p);
+        bool loose = incident.Count(k => _net.Pieces[k].Layer == piece.Layer) < 2;
+        double toEnds = Math.Min(foot.DistanceTo(piece.Curve.Start), foot.DistanceTo(piece.Curve.End));
+        if (distance > (loose ? _reach.Join : _reach.Fine) || toEnds <= _reach.Fine)
+        {
+            return movable;
+        }
+
+        Cut(i, t, v);
+        if (distance <= _reach.Exact)
+        {
+            return movable;
+        }
+
+        _log.AddHealed(p, distance, _net.Pieces[incident[0]].Source);
+        if (movable)
+        {
+            _net.Points[v] = foot;
+        }
+
+        return false;
     }
 
     private void CutAtCrossings()
@@ -81,37 +90,50 @@ internal sealed class Weaving
             near.Clear();
             index.FindOverlaps(_net.Pieces[i].Curve.Bounds.Inflated(_reach.Exact), near);
             near.Sort();
-            foreach (int j in near.Where(j => j > i && !AreAlike(_net.Pieces[i], _net.Pieces[j])))
+            foreach (int j in near.Where(j => j > i && MayCross(_net.Pieces[i], _net.Pieces[j])))
             {
-                foreach ((double t, double u) in CurveIntersection.Find(_net.Pieces[i].Curve, _net.Pieces[j].Curve, _reach.Exact))
-                {
-                    Point p = _net.Pieces[i].Curve.At(t);
-                    if (IsAtEnd(_net.Pieces[i], p) || IsAtEnd(_net.Pieces[j], p))
-                    {
-                        continue;
-                    }
-
-                    if (_net.Pieces[i].Layer == _net.Pieces[j].Layer)
-                    {
-                        _log.Add(SectionMessages.SelfCrossing(_log, p, _net.Pieces[i], _net.Pieces[j]), p, _net.Pieces[i].Source);
-                    }
-
-                    known.Clear();
-                    crossings.FindNear(p, known);
-                    int v = known.Count > 0 ? known.Min() : _net.Points.Count;
-                    if (v == _net.Points.Count)
-                    {
-                        _net.Points.Add(p);
-                        crossings.Add(p, v);
-                    }
-
-                    Cut(i, t, v);
-                    Cut(j, u, v);
-                }
+                CutAtCrossing(i, j, crossings, known);
             }
         }
 
         ApplyCuts();
+    }
+
+    private void CutAtCrossing(int i, int j, PointGrid crossings, List<int> known)
+    {
+        (Piece a, Piece b) = (_net.Pieces[i], _net.Pieces[j]);
+        foreach ((double t, double u) in CurveIntersection.Find(a.Curve, b.Curve, _reach.Exact))
+        {
+            Point p = a.Curve.At(t);
+            if (IsAtEnd(a, p) || IsAtEnd(b, p))
+            {
+                continue;
+            }
+
+            if (a.Layer == b.Layer)
+            {
+                _log.Add(SectionMessages.SelfCrossing(_log, p, a, b), p, a.Source);
+            }
+
+            known.Clear();
+            crossings.FindNear(p, known);
+            int v = known.Count > 0 ? known.Min() : _net.Points.Count;
+            if (v == _net.Points.Count)
+            {
+                _net.Points.Add(p);
+                crossings.Add(p, v);
+            }
+
+            Cut(i, t, v);
+            Cut(j, u, v);
+        }
+    }
+
+    // Straight pieces with a common end meet only there.
+    private bool MayCross(Piece a, Piece b)
+    {
+        bool share = a.Start == b.Start || a.Start == b.End || a.End == b.Start || a.End == b.End;
+        return !share || !((a.Curve is Line && b.Curve is Line) || AreAlike(a, b));
     }
 
     private bool IsAtEnd(Piece piece, Point p) =>

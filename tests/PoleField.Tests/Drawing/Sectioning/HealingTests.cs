@@ -143,4 +143,21 @@ public sealed class HealingTests
 
         Assert.Equal([12, 12], Areas(s, "COIL"), (a, b) => Math.Abs(a - b) < 0.01);
     }
+
+    [Fact]
+    public void RoundedCoordinatesAreJoinedAndOnlyCounted()
+    {
+        // Six decimals of a millimetre, three curves of one layer at a point.
+        const double ulp = 1e-6;
+        Sketch sketch = Sketch(
+            Polygon("COIL", (0, 0), (4, 0), (8, 0), (8, 3), (4, 3), (0, 3)), [Line("COIL", 4 + ulp, 0, 4, 3 - ulp)],
+            [Line("PIN", 20, 0, 21, 0), Line("PIN", 21 + (0.5 * ulp), 0, 21, 1), Line("PIN", 21, 1, 20, 0)]);
+
+        SectionReading reading = PoleField.Drawing.Sectioning.Read(sketch, Parts("COIL", "PIN"));
+
+        Assert.Equal([12, 12], Areas(reading.Section!, "COIL"), (a, b) => Math.Abs(a - b) < 1e-4);
+        Assert.Equal(
+            "1 joint with less than 1 nm between the ends closed on layer PIN.",
+            reading.Findings.Single(f => f.What == "healed-joint" && f.Layer == "PIN").Text);
+    }
 }

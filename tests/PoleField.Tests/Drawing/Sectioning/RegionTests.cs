@@ -137,4 +137,56 @@ public sealed class RegionTests
         Assert.Equal(["missing-layer", "open-outline", "overlap"], Faults(reading).Order());
         Assert.Equal(8e-6, reading.Findings.Single(f => f.What == "overlap").Size!.Value, 12);
     }
+
+    [Fact]
+    public void PartsOfOneMaterialMayOverlap()
+    {
+        Sketch sketch = Sketch(Rectangle("LEFT", 0, 0, 10, 10), Rectangle("RIGHT", 8, 2, 14, 8));
+
+        CrossSection s = Sound(sketch, Parts("LEFT", "RIGHT") with { MaterialKeys = ["steel", "steel"] });
+
+        Assert.Equal(100, Areas(s, "LEFT").Single(), Digits);
+        Assert.Equal(24, Areas(s, "RIGHT").Single(), Digits);
+    }
+
+    [Fact]
+    public void OpenWindowOutlineWithTwoMeaningsIsNotClosed()
+    {
+        // A wall across a window: either half of the window could be meant.
+        Sketch sketch = Sketch(Rectangle("YOKE", 0, 0, 20, 20), Rectangle("YOKE", 5, 5, 15, 15), [Line("COIL", 10, 5, 10, 15)]);
+
+        Assert.Equal(["open-outline"], Faults(PoleField.Drawing.Sectioning.Read(sketch, Parts("YOKE", "COIL"))));
+    }
+
+    [Fact]
+    public void FreeFormOutlineKeepsItsArea()
+    {
+        // A cubic arch over its chord: the area under a Bezier curve with controls (0,0), (0,4), (6,4), (6,0) is 3/5·4·6.
+        Nurbs arch = new(3, [0, 0, 0, 0, 1, 1, 1, 1], [new(0, 0), new(0, 4), new(6, 4), new(6, 0)]);
+        Sketch sketch = Sketch([new SketchCurve(arch, "POLE", "SPLINE", null, 0), Line("POLE", 6, 0, 0, 0)], Rectangle("COIL", 2.5, 1, 3.5, 2));
+
+        CrossSection s = Sound(sketch, Parts("POLE", "COIL"));
+
+        Assert.Equal(14.4 - 1, Areas(s, "POLE").Single(), Digits);
+    }
+
+    [Fact]
+    public void EmptySketchIsToldPlainly()
+    {
+        SectionReading reading = PoleField.Drawing.Sectioning.Read(Sketch(), Parts("IRON") with { BeamLayer = "BEAM", RimLayer = "BOX" });
+
+        Assert.Equal(["missing-layer", "missing-layer", "missing-layer"], Faults(reading));
+        Assert.EndsWith("Layers found: none.", reading.Findings[0].Text, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void LayerNamesIgnoreCaseAndUnusedLayersAreListed()
+    {
+        Sketch sketch = Sketch(Rectangle("Iron", 0, 0, 10, 10), Rectangle("NOTES", 0, 0, 1, 1));
+
+        SectionReading reading = PoleField.Drawing.Sectioning.Read(sketch, Parts("IRON"));
+
+        Assert.Equal(["IRON"], reading.Section!.Parts);
+        Assert.Equal([("NOTES", 4)], reading.IgnoredLayers);
+    }
 }
