@@ -12,7 +12,7 @@ public sealed class MeshCheckTests
         ProblemP.Section(box: false), SizeField.FromSources(0.02, 0.5, [(ProblemP.Beam, 1e-3)]));
 
     [Fact]
-    public void AWholeMeshHasNoFindings() => Assert.Empty(MeshCheck.Of(Sound));
+    public void AWholeMeshHasNoFindings() => Assert.Empty(MeshCheck.Of(Sound).Select(f => f.What));
 
     [Fact]
     public void ATriangleTurnedOverIsSeen() => AssertSees("mesh-area", m => (m.Triangles[0], m.Triangles[1]) = (m.Triangles[1], m.Triangles[0]));
@@ -116,7 +116,7 @@ public sealed class MeshCheckTests
 
         IReadOnlyList<Finding> findings = MeshCheck.Of(new Mesh(section, [a, b, c], [0, 1, 2], [0], edges, null, -1));
 
-        Assert.Equal("mesh-bent", Assert.Single(findings).What);
+        Assert.Equal(["mesh-bent"], findings.Select(f => f.What));
     }
 
     private static void AssertSees(string what, Action<Draft> breakIt)
@@ -124,7 +124,7 @@ public sealed class MeshCheckTests
         Draft draft = new(Sound);
         breakIt(draft);
 
-        Assert.Contains(MeshCheck.Of(draft.ToMesh()), f => f.What == what && f.Severity == Severity.Fault);
+        Assert.Contains(what, MeshCheck.Of(draft.ToMesh()).Where(f => f.Severity == Severity.Fault).Select(f => f.What));
     }
 
     private static int FreeVertex(Draft m)

@@ -126,6 +126,25 @@ public sealed class MesherTests
         Assert.True(SmallestAngleOff(mesh, degrees < 60 ? [1] : []) >= 25);
     }
 
+    [Theory]
+    [InlineData(4)]
+    [InlineData(0.8)]
+    public void AnArcLeavesALineAtATinyAngle(double degrees)
+    {
+        // The arc bends away from the line; beyond the corner thin triangles would fold if the chords stayed long.
+        CircularArc arc = new(Point.Polar(1, (degrees * Math.PI / 180) + (Math.PI / 2)), 1, (degrees * Math.PI / 180) - (Math.PI / 2), 1);
+        Point tip = arc.Start, side = tip + new Point(1, 0);
+        SectionFixture s = new();
+        int part = s.Region("sliver");
+        s.Edge(new Line(tip, side), part, CrossSection.Air).Edge(new Line(side, arc.End), part, CrossSection.Air)
+            .Edge(arc.Reversed(), part, CrossSection.Air);
+
+        Mesh mesh = Mesher.Mesh(s.Build(), SizeField.Uniform(0.5));
+
+        AssertSound(mesh);
+        Assert.True(SmallestAngleOff(mesh, [part]) >= 25);
+    }
+
     [Fact]
     public void ACircleThatTouchesALineIsMeshedWithStraightFirstPieces()
     {
@@ -243,9 +262,11 @@ public sealed class MesherTests
         s.Edge(new Line(a, b), 0, -1).Edge(CircularArc.FromBulge(b, c, 0.4), 0, -1);
         s.Edge(new Line(c, d), 0, -1).Edge(CircularArc.FromBulge(d, a, -0.4), 0, -1);
 
-        // Sources beside the arcs make refinement split them after the first cut.
-        SizeField size = SizeField.FromSources(1, 0.5, [(new Point(0.42, 1), 0.02), (new Point(2.38, 1), 0.02)]);
-        Mesh mesh = Mesher.Mesh(s.Build(), size);
+        // Parts whose corners come close to the arcs make refinement split them after the first cut.
+        int part = s.Region("part");
+        s.Polygon(part, CrossSection.Air, new Point(0.43, 1), new Point(0.9, 0.7), new Point(0.9, 1.3));
+        s.Polygon(part, CrossSection.Air, new Point(2.37, 1), new Point(1.9, 1.3), new Point(1.9, 0.7));
+        Mesh mesh = Mesher.Mesh(s.Build(), SizeField.Uniform(1));
 
         AssertSound(mesh);
         Assert.True(MeshQuality.Of(mesh).SmallestAngleDegrees >= 25);
