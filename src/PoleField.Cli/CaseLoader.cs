@@ -33,7 +33,10 @@ internal sealed class CaseLoader(Pipeline pipeline)
         string folder = Path.GetDirectoryName(Path.GetFullPath(path))!;
         IReadOnlyList<Material> builtIn = pipeline.Materials();
         var around = new CaseSurroundings(
-            Path.GetFileName(path), [.. builtIn.Select(m => m.Name)], file => File.Exists(Path.Combine(folder, file)));
+            Path.GetFileName(path), [.. builtIn.Select(m => m.Name)], file => File.Exists(Path.Combine(folder, file)))
+        {
+            NonMagnetic = [.. builtIn.Where(m => !m.IsMagnetic).Select(m => m.Name)],
+        };
         CaseReading reading = CaseReader.Read(text, around);
         findings.AddRange(reading.Findings);
         var loaded = new LoadedCase { Path = path, Findings = findings, CaseSha256 = Sha256(bytes) };
@@ -83,7 +86,8 @@ internal sealed class CaseLoader(Pipeline pipeline)
         switch (part.Substance)
         {
             case NamedSubstance named:
-                material = builtIn.First(m => m.Name == named.Name);
+                material = builtIn.FirstOrDefault(m => m.Name == named.Name)
+                    ?? new Material(named.Name, LinearLaw.Vacuum, "Copper", "definition", "permeability taken as 1");
                 break;
             case CurveFileSubstance curve:
                 string path = Path.Combine(folder, curve.File);

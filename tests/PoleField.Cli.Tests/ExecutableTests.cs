@@ -37,15 +37,46 @@ public sealed class ExecutableTests
         Assert.DoesNotContain("\u001b", run.Out, StringComparison.Ordinal);
     }
 
+    [Fact]
+    public async Task CtrlCEndsARunWhoseStepIsDeaf()
+    {
+        if (OperatingSystem.IsWindows())
+        {
+            return; // no named pipes in the file system, no signals
+        }
+
+        using var folder = new CaseFolder();
+        string pipe = folder["never.toml"];
+        using (var made = Process.Start("mkfifo", pipe))
+        {
+            await made.WaitForExitAsync();
+        }
+
+        using Process process = Process.Start(Described("check", pipe))!;
+        Task<string> error = process.StandardError.ReadToEndAsync();
+
+        // Opening the writing end returns once the tool has opened the reading end, where it then waits for ever.
+        await using FileStream writing = await Task.Run(() => new FileStream(pipe, FileMode.Open, FileAccess.Write)).WaitAsync(TimeSpan.FromSeconds(60));
+        using (var kill = Process.Start("kill", ["-INT", process.Id.ToString(System.Globalization.CultureInfo.InvariantCulture)]))
+        {
+            await kill.WaitForExitAsync();
+        }
+
+        await process.WaitForExitAsync().WaitAsync(TimeSpan.FromSeconds(20));
+
+        Assert.Equal((130, "Interrupted; nothing was written.\n"), (process.ExitCode, await error));
+    }
+
+    private static ProcessStartInfo Described(params string[] args) => new("dotnet", [typeof(Terminal).Assembly.Location, .. args])
+    {
+        RedirectStandardOutput = true,
+        RedirectStandardError = true,
+        Environment = { ["LANG"] = "de_DE.UTF-8", ["LC_ALL"] = "de_DE.UTF-8" },
+    };
+
     private static async Task<Run> Start(params string[] args)
     {
-        var start = new ProcessStartInfo("dotnet", [typeof(Terminal).Assembly.Location, .. args])
-        {
-            RedirectStandardOutput = true,
-            RedirectStandardError = true,
-            Environment = { ["LANG"] = "de_DE.UTF-8", ["LC_ALL"] = "de_DE.UTF-8" },
-        };
-        using Process process = Process.Start(start)!;
+        using Process process = Process.Start(Described(args))!;
         Task<string> output = process.StandardOutput.ReadToEndAsync();
         Task<string> error = process.StandardError.ReadToEndAsync();
         await process.WaitForExitAsync();

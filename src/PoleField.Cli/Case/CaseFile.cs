@@ -70,6 +70,9 @@ internal abstract record Substance
 /// <summary>A built-in material, or air.</summary>
 internal sealed record NamedSubstance(string Name, Spot At) : Substance
 {
+    /// <summary>What coils are wound of.</summary>
+    public const string Copper = "copper";
+
     public override string Key => Name;
 }
 

@@ -6,7 +6,11 @@ namespace PoleField.Cli.Case;
 /// <param name="File">Name of the case file for messages.</param>
 /// <param name="MaterialNames">Built-in materials, "air" included.</param>
 /// <param name="FileExists">Tells whether a file named in the case exists.</param>
-internal sealed record CaseSurroundings(string File, IReadOnlyCollection<string> MaterialNames, Func<string, bool> FileExists);
+internal sealed record CaseSurroundings(string File, IReadOnlyCollection<string> MaterialNames, Func<string, bool> FileExists)
+{
+    /// <summary>Those of the materials that a coil may be made of.</summary>
+    public IReadOnlyCollection<string> NonMagnetic { get; init; } = ["air"];
+}
 
 /// <summary>A case file read: the case, or everything that is wrong with it.</summary>
 internal sealed record CaseReading(CaseFile? Case, IReadOnlyList<Finding> Findings);
@@ -134,7 +138,7 @@ internal static class CaseReader
             root.Faults.Add(
                 table.SpotOf("open"), "missing-key", "[surroundings] is closed and has no rim.", "Add rim = \"LAYER\" with a closed outline, or write open = true.");
         }
-        else if (rim is not null && layers.Contains(rim))
+        else if (rim is not null && layers.Contains(rim, StringComparer.OrdinalIgnoreCase))
         {
             root.Faults.Add(
                 table.SpotOf("rim"), "contradiction", $"The layer \"{rim}\" is a part and the rim.", "Draw the rim on a layer of its own.");
@@ -174,7 +178,7 @@ internal static class CaseReader
                 table.SpotOf("layer"), "contradiction", "[beam] has a layer and a rectangle.", "Keep layer, or keep centre, width and height.");
         }
 
-        if (layer is not null && layers.Contains(layer))
+        if (layer is not null && layers.Contains(layer, StringComparer.OrdinalIgnoreCase))
         {
             root.Faults.Add(
                 table.SpotOf("layer"), "contradiction", $"The layer \"{layer}\" is a part and the beam.", "Draw the beam's outline on a layer of its own.");

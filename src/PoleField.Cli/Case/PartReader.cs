@@ -20,6 +20,12 @@ internal static class PartReader
 
         foreach (TomlEntry entry in all.Entries())
         {
+            if (parts.Find(p => p.Layer.Equals(entry.Key, StringComparison.OrdinalIgnoreCase)) is { } same)
+            {
+                all.Faults.Add(
+                    entry.At, "same-layer", $"The layer \"{entry.Key}\" is listed already as \"{same.Layer}\".", "Keep one: drawings do not tell layers apart by capitals.");
+            }
+
             if (entry.Value is TomlTable table)
             {
                 parts.Add(ReadPart(all.Inside(table, Quoted(entry.Key)), entry, around));
@@ -65,8 +71,8 @@ internal static class PartReader
                 "A part has one of material, relative_permeability and remanence.");
         }
 
-        Substance substance = ReadMagnet(table) ?? ReadLinear(table) ?? ReadMaterial(table, around) ?? Air(table.At);
-        bool isAir = substance is NamedSubstance { Name: "air" };
+        Substance substance = ReadMagnet(table) ?? ReadLinear(table) ?? ReadMaterial(table, around) ?? Unstated(table.At, ampereTurns);
+        bool maySurround = substance is NamedSubstance named && (around.NonMagnetic.Contains(named.Name) || !around.MaterialNames.Contains(named.Name));
         if (stated.Length == 0 && ampereTurns is null)
         {
             table.Faults.Add(
@@ -76,7 +82,7 @@ internal static class PartReader
                 "Add material = \"...\", relative_permeability, remanence or ampere_turns; material = \"air\" for a hole.");
         }
 
-        if (ampereTurns is not null && stated.Length == 1 && !isAir)
+        if (ampereTurns is not null && stated.Length == 1 && !maySurround)
         {
             table.Faults.Add(
                 table.SpotOf("ampere_turns"), "contradiction", $"{table.Where("ampere_turns")} stands beside {stated[0]}.", "A part is a coil or magnetic, not both.");
@@ -84,6 +90,9 @@ internal static class PartReader
 
         return substance;
     }
+
+    // A coil is copper unless the case says otherwise.
+    private static NamedSubstance Unstated(Spot at, double? ampereTurns) => ampereTurns is null ? Air(at) : new(NamedSubstance.Copper, at);
 
     private static NamedSubstance Air(Spot at) => new("air", at);
 

@@ -65,7 +65,7 @@ internal static class TuneReader
 
     private static void CheckLayer(TableReader table, string layer, Spot at, List<string> layers)
     {
-        if (layer != "?" && !layers.Contains(layer))
+        if (layer != "?" && !layers.Contains(layer, StringComparer.OrdinalIgnoreCase))
         {
             table.Faults.Add(at, "unknown-layer", $"{table.Where("faces")} names \"{layer}\", which is no part.", NearestName.Advice(layer, layers));
         }

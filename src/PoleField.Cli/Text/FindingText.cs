@@ -1,27 +1,28 @@
+using System.Text.RegularExpressions;
 using PoleField.Geometry;
 
 namespace PoleField.Cli.Text;
 
 /// <summary>Prints findings: file, line, column; layer, handle, place in drawing units; what was found; what to do.</summary>
-internal static class FindingText
+internal static partial class FindingText
 {
     public static void Write(TextWriter writer, IEnumerable<Finding> findings, Ink ink, string drawingUnit = "")
     {
         foreach (Finding finding in findings)
         {
             writer.WriteLine($"{Where(finding)}{Weight(finding.Severity, ink)}: {Place(finding, drawingUnit)}{finding.Text}");
-            if (finding.Fix.Length > 0)
+            if (finding.Fix.Length > 0 && finding.Severity != Severity.Note)
             {
                 writer.WriteLine("  " + finding.Fix);
             }
         }
     }
 
-    /// <summary>Layer, handle and place of a finding, for tables and files.</summary>
-    public static string Place(Finding finding, string drawingUnit)
+    // Layer, handle and place, as far as the sentence itself does not name them.
+    private static string Place(Finding finding, string drawingUnit)
     {
         var parts = new List<string>();
-        if (finding.Layer is { } layer)
+        if (finding.Layer is { } layer && !finding.Text.Contains(layer, StringComparison.OrdinalIgnoreCase))
         {
             parts.Add($"layer \"{layer}\"");
         }
@@ -31,17 +32,21 @@ internal static class FindingText
             parts.Add("handle " + handle);
         }
 
-        if (finding.AtDrawing is { } at)
+        bool placed = PairPattern().IsMatch(finding.Text);
+        if (!placed && finding.AtDrawing is { } at)
         {
             parts.Add($"at {Pair(at)} {drawingUnit}".TrimEnd());
         }
-        else if (finding.At is { } metres)
+        else if (!placed && finding.At is { } metres)
         {
             parts.Add($"at {Pair(1e3 * metres)} mm");
         }
 
         return parts.Count == 0 ? string.Empty : string.Join(", ", parts) + ": ";
     }
+
+    [GeneratedRegex(@"\(-?[\d.]+(e-?\d+)?, -?[\d.]+(e-?\d+)?\)", RegexOptions.CultureInvariant)]
+    private static partial Regex PairPattern();
 
     private static string Pair(Point p) => $"({Numbers.Short(p.Y, 6)}, {Numbers.Short(p.Z, 6)})";
 

@@ -24,7 +24,8 @@ internal static class MaterialTables
         }
 
         writer.WriteLine();
-        writer.WriteLine(ink.Faint("A heat differs from its published curve: measure your own where the answer hangs on it."));
+        writer.WriteLine(ink.Faint("A heat differs from its published curve; where the answer hangs on it,"));
+        writer.WriteLine(ink.Faint("measure your own."));
     }
 
     public static void WriteOne(TextWriter writer, Material material, Ink ink)

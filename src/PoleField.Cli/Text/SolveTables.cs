@@ -86,7 +86,7 @@ internal static class SolveTables
         writer.WriteLine(FormattableString.Invariant(
             $"  {record.Triangles} triangles of order {record.Order}, {record.Unknowns} unknowns, smallest angle {record.SmallestAngleDegrees:F1}°"));
         writer.WriteLine(FormattableString.Invariant(
-            $"  {record.AdaptiveSteps} refinements, {record.NewtonSteps} Newton steps, {result.TotalSeconds:F1} s, {result.PeakMemoryMegabytes:F0} MB"));
+            $"  {record.AdaptiveSteps} {(record.AdaptiveSteps == 1 ? "refinement" : "refinements")}, {record.NewtonSteps} Newton steps, {result.TotalSeconds:F1} s, {result.PeakMemoryMegabytes:F0} MB"));
         string accuracy = $"accuracy {Numbers.Accuracy(record.AccuracyReached)} of {Numbers.Accuracy(record.AccuracyAsked)} asked: ";
         writer.WriteLine("  " + accuracy + (record.AccuracyMet ? ink.Good("reached") : ink.Bad("not reached")));
         writer.WriteLine();

@@ -38,6 +38,7 @@ public sealed class FaultTextTests
         ("no substance", "material = \"pure-iron\"", ""),
         ("permeability below one", "material = \"pure-iron\"", "relative_permeability = 0.5"),
         ("current in iron", "material = \"pure-iron\"", "material = \"pure-iron\"\nampere_turns = 100"),
+        ("layer listed twice", "[parts.COIL]", "[parts.ridge]\nmaterial = \"air\"\n[parts.COIL]"),
         ("fill without current", "material = \"pure-iron\"", "material = \"pure-iron\"\nfill = 0.5"),
         ("direction without remanence", "material = \"pure-iron\"", "material = \"air\"\ndirection = 90"),
         ("magnet without direction", "material = \"pure-iron\"", "remanence = \"1.2 T\""),

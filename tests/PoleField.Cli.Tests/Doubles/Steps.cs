@@ -67,7 +67,7 @@ internal static class Steps
             },
             new PartReport
             {
-                Layer = "COIL", Kind = "coil", Material = "air", Area = 6e-4, Outlines = 1, AmpereTurns = 2500, CurrentDensity = 6.94e6,
+                Layer = "COIL", Kind = "coil", Material = "copper", Area = 6e-4, Outlines = 1, AmpereTurns = 2500, CurrentDensity = 6.94e6,
             },
         ],
         Circuit = new CircuitReport(2500, 2300, 200, 14.2, 4.5e-6),
