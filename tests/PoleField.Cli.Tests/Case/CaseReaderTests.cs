@@ -61,7 +61,15 @@ public sealed class CaseReaderTests
         Assert.Equal(
             new ToleranceSection
             {
-                FormSize = 1e-5, FormLength = 0.002, PlaceY = 2e-5, PlaceZ = 2e-5, Turn = 0.0005, AmpereTurns = 0.001, Saturation = 0.01, BeamY = 5e-5, BeamZ = 5e-5,
+                FormSize = 1e-5,
+                FormLength = 0.002,
+                PlaceY = 2e-5,
+                PlaceZ = 2e-5,
+                Turn = 0.0005,
+                AmpereTurns = 0.001,
+                Saturation = 0.01,
+                BeamY = 5e-5,
+                BeamZ = 5e-5,
             },
             file.Tolerance);
         Assert.Equal(
