@@ -31,13 +31,13 @@ internal sealed record Pipeline
     public Func<SolvedMagnet, Func<Point, double?>> FieldOf { get; init; } = solved => place => solved.Solution.At(place)?.Magnitude;
 
     /// <summary>Result to the result file's JSON.</summary>
-    public required Action<Stream, SolveResult> WriteResult { get; init; }
+    public required Action<Stream, SolvedCase> WriteResult { get; init; }
 
     /// <summary>Pictures of a section and of a solved magnet; null as long as there are none.</summary>
     public Func<LoadedCase, IReadOnlyList<NamedFile>>? SectionPictures { get; init; }
 
     /// <inheritdoc cref="SectionPictures"/>
-    public Func<SolveResult, IReadOnlyList<NamedFile>>? ResultPictures { get; init; }
+    public Func<SolvedCase, IReadOnlyList<NamedFile>>? ResultPictures { get; init; }
 
     /// <summary>Verbs that solve a case and work something out of it; each is registered as it is listed here.</summary>
     public IReadOnlyList<AnalysisStep> Analyses { get; init; } = [];
@@ -60,7 +60,7 @@ internal sealed record Pipeline
 
     private static SectionReading CutSection(Sketch sketch, SectionRequest request) => Sectioning.Read(sketch, request);
 
-    private static IReadOnlyList<Material> BuiltInMaterials() => [.. MaterialLibrary.Names.Select(MaterialLibrary.Get)];
+    private static IReadOnlyList<Material> BuiltInMaterials() => [Material.Air, .. MaterialLibrary.Names.Where(n => n != Material.Air.Name).Select(MaterialLibrary.Get)];
 
     private static Material ReadCurve(Stream stream, string name) => MaterialFile.Read(stream, name);
 }
@@ -69,7 +69,7 @@ internal sealed record Pipeline
 internal sealed record NamedFile(string FileName, Action<Stream> Write);
 
 /// <summary>A solved case with all that its result file says.</summary>
-internal sealed record SolveResult
+internal sealed record SolvedCase
 {
     public required LoadedCase Case { get; init; }
 

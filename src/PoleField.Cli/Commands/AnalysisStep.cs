@@ -27,7 +27,7 @@ internal sealed record AnalysisStep(string Name, string Description)
 /// <summary>What an analysis starts from.</summary>
 internal sealed record AnalysisRequest
 {
-    public required SolveResult Solved { get; init; }
+    public required SolvedCase Solved { get; init; }
 
     /// <summary>For further solves.</summary>
     public required SolveOptions Options { get; init; }

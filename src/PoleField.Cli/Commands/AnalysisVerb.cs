@@ -44,7 +44,7 @@ internal sealed class AnalysisVerb
         List<string> targets = Targets(arguments);
         using OutputFiles files = OutputFiles.Plan(targets, _run.Force(arguments));
         SolveOptions options = _run.OptionsOf(arguments, loaded);
-        SolveResult solved;
+        SolvedCase solved;
         Analysis analysis;
         using (ProgressLine progress = _run.Progress(arguments, options))
         {

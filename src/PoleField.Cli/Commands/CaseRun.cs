@@ -61,7 +61,7 @@ internal sealed class CaseRun(Tool tool, string outDescription)
         new(tool.Terminal, !Quiet(arguments) && !Json(arguments), options.Accuracy, TimeProvider.System);
 
     /// <summary>Solves a sound case.</summary>
-    public SolveResult Solve(LoadedCase loaded, SolveOptions options, ProgressLine progress, CancellationToken cancellation)
+    public SolvedCase Solve(LoadedCase loaded, SolveOptions options, ProgressLine progress, CancellationToken cancellation)
     {
         var clock = Stopwatch.StartNew();
         (CaseFile file, Magnet magnet, Aperture aperture) = loaded.Ready();
@@ -71,7 +71,7 @@ internal sealed class CaseRun(Tool tool, string outDescription)
         // A uniform background never falls off.
         double? reach = magnet.AppliedField == default ? StrayField.Reach(tool.Pipeline.FieldOf(solved), magnet.Section.Bounds) : null;
         using var process = Process.GetCurrentProcess();
-        return new SolveResult
+        return new SolvedCase
         {
             Case = loaded,
             Solved = solved,
@@ -85,7 +85,7 @@ internal sealed class CaseRun(Tool tool, string outDescription)
     }
 
     /// <summary>Says on the error stream what was asked and not met.</summary>
-    public void ReportNotMet(SolveResult result)
+    public void ReportNotMet(SolvedCase result)
     {
         foreach (Verdict verdict in result.Verdicts.Where(v => !v.Met))
         {

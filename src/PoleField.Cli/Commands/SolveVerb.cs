@@ -59,7 +59,7 @@ internal sealed class SolveVerb
 
         using OutputFiles files = PlanFiles(arguments, out string? target);
         SolveOptions options = _run.OptionsOf(arguments, loaded);
-        SolveResult result;
+        SolvedCase result;
         using (ProgressLine progress = _run.Progress(arguments, options))
         {
             result = _run.Solve(loaded, options, progress, cancellation);
@@ -84,7 +84,7 @@ internal sealed class SolveVerb
         return OutputFiles.Plan(target is null ? [] : [target], _run.Force(arguments), replaceable ? [target!] : []);
     }
 
-    private void WritePictures(ParseResult arguments, OutputFiles files, SolveResult result, CancellationToken cancellation)
+    private void WritePictures(ParseResult arguments, OutputFiles files, SolvedCase result, CancellationToken cancellation)
     {
         if (_tool.Pipeline.ResultPictures is not { } draw || arguments.GetValue(_figures) is not { } folder)
         {
@@ -98,7 +98,7 @@ internal sealed class SolveVerb
         }
     }
 
-    private void Print(ParseResult arguments, SolveResult result, string? target)
+    private void Print(ParseResult arguments, SolvedCase result, string? target)
     {
         bool quiet = _run.Quiet(arguments);
         if (_run.Json(arguments))

@@ -15,13 +15,13 @@ internal static class ResultOutput
         typeof(ResultOutput).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()?.InformationalVersion ?? "unknown";
 
     /// <summary>Writes the result file.</summary>
-    public static void WriteJson(Stream stream, SolveResult result) => ResultJson.Write(Of(result), stream);
+    public static void WriteJson(Stream stream, SolvedCase result) => ResultJson.Write(Of(result), stream);
 
     /// <summary>What the result file says.</summary>
-    public static Output.Results.SolveResult Of(SolveResult result)
+    public static SolveResult Of(SolvedCase result)
     {
         SolveRecord record = result.Solved.Record;
-        return new Output.Results.SolveResult
+        return new SolveResult
         {
             Title = result.Case.Case?.Title ?? string.Empty,
             CaseSha256 = result.Case.CaseSha256,
@@ -39,7 +39,7 @@ internal static class ResultOutput
     }
 
     /// <summary>The pictures of a solved case, each as SVG and PNG.</summary>
-    public static IReadOnlyList<NamedFile> Pictures(SolveResult result)
+    public static IReadOnlyList<NamedFile> Pictures(SolvedCase result)
     {
         FieldScene scene = FieldScene.Of(result.Solved);
         return [.. Files([FieldFigure.Whole(scene), FieldFigure.Beam(scene)])];

@@ -19,7 +19,7 @@ internal static partial class FindingText
     }
 
     // Layer, handle and place, as far as the sentence itself does not name them.
-    private static string Place(Finding finding, string drawingUnit)
+    internal static string Place(Finding finding, string drawingUnit)
     {
         var parts = new List<string>();
         if (finding.Layer is { } layer && !finding.Text.Contains(layer, StringComparison.OrdinalIgnoreCase))

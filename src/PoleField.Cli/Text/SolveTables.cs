@@ -7,7 +7,7 @@ internal static class SolveTables
 {
     private const int Width = 80;
 
-    public static void Write(TextWriter writer, SolveResult result, Ink ink)
+    public static void Write(TextWriter writer, SolvedCase result, Ink ink)
     {
         BeamReport report = result.Solved.Report;
         writer.WriteLine(ink.Strong(result.Case.Case!.Title));
@@ -79,7 +79,7 @@ internal static class SolveTables
         BeamTables.WriteTable(writer, table, ink);
     }
 
-    private static void WriteRun(TextWriter writer, SolveResult result, Ink ink)
+    private static void WriteRun(TextWriter writer, SolvedCase result, Ink ink)
     {
         SolveRecord record = result.Solved.Record;
         writer.WriteLine(ink.Strong("Mesh and run"));
@@ -92,7 +92,7 @@ internal static class SolveTables
         writer.WriteLine();
     }
 
-    private static void WriteCautions(TextWriter writer, SolveResult result, Ink ink)
+    private static void WriteCautions(TextWriter writer, SolvedCase result, Ink ink)
     {
         if (result.Warnings.Count > 0)
         {

@@ -55,7 +55,11 @@ public sealed class Outline
                 }
             }
 
-            return origin + new Point(y / Area, z / Area);
+            // Rounding beside a middle of zero would show as a place of its own.
+            Point middle = origin + new Point(y / Area, z / Area);
+            double nothing = 1e-12 * Bounds.Diagonal;
+            return new Point(
+                Math.Abs(middle.Y) < nothing ? 0.0 : middle.Y, Math.Abs(middle.Z) < nothing ? 0.0 : middle.Z);
         }
     }
 
