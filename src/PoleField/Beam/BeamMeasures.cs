@@ -38,11 +38,11 @@ internal sealed record BeamMeasures
 
     /// <summary>Largest difference of |B| between two fields at all sample points, over the largest |B|.</summary>
     public double FieldDifference(BeamMeasures other) =>
-        Largest(other, v => v.Field) / Math.Max(Math.Abs(Field.Max), Math.Abs(Field.Min));
+        Largest(other, v => v.Field) / Field.Largest;
 
     /// <summary>Largest difference of G between two fields at all sample points, over the largest |G|.</summary>
     public double GradientDifference(BeamMeasures other) =>
-        Largest(other, v => v.Gradient) / Math.Max(Math.Abs(Gradient.Max), Math.Abs(Gradient.Min));
+        Largest(other, v => v.Gradient) / Gradient.Largest;
 
     private double Largest(BeamMeasures other, Func<BeamValues, double> quantity)
     {

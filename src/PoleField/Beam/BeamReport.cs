@@ -11,6 +11,9 @@ public sealed record ApertureStatistics(double Mean, double Min, double Max, dou
 {
     /// <summary>(max − min) / (2 |mean|), no unit.</summary>
     public double Spread => (Max - Min) / (2 * Math.Abs(Mean));
+
+    /// <summary>Largest size, without sign.</summary>
+    public double Largest => Math.Max(Math.Abs(Min), Math.Abs(Max));
 }
 
 /// <summary>What became of one part.</summary>
