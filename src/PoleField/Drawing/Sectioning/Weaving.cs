@@ -187,25 +187,36 @@ internal sealed class Weaving
 
     private List<WovenEdge> LayTogether()
     {
-        // Pieces sorted by their ends; a run of equal ends may hold pieces that lie on each other.
+        // Pieces sorted by their ends; a run of equal ends may hold pieces that lie on each other. Edges keep the order of drawing.
         Piece[] pieces = [.. _net.Pieces];
         long[] ends = [.. pieces.Select(p => ((long)Math.Min(p.Start, p.End) * _net.Points.Count) + Math.Max(p.Start, p.End))];
         int[] order = [.. Enumerable.Range(0, pieces.Length)];
         Array.Sort(order, (i, j) => ends[i] != ends[j] ? ends[i].CompareTo(ends[j]) : i.CompareTo(j));
-        List<WovenEdge> edges = new(pieces.Length);
+        SortedDictionary<int, List<Piece>> several = []; // by the first piece of the run
+        bool[] alone = new bool[pieces.Length];
         for (int from = 0, to; from < order.Length; from = to)
         {
             for (to = from + 1; to < order.Length && ends[order[to]] == ends[order[from]]; to++)
             {
             }
 
-            if (to == from + 1)
+            alone[order[from]] = to == from + 1;
+            if (!alone[order[from]])
             {
-                edges.Add(Edge(pieces[order[from]], [pieces[order[from]].Layer]));
+                several[order[from]] = [.. order[from..to].Select(i => pieces[i])];
             }
-            else
+        }
+
+        List<WovenEdge> edges = new(pieces.Length);
+        for (int i = 0; i < pieces.Length; i++)
+        {
+            if (alone[i])
             {
-                LayTogether([.. order[from..to].Select(i => pieces[i])], edges);
+                edges.Add(Edge(pieces[i], [pieces[i].Layer]));
+            }
+            else if (several.TryGetValue(i, out List<Piece>? run))
+            {
+                LayTogether(run, edges);
             }
         }
 
