@@ -35,9 +35,6 @@ public readonly record struct Point(double Y, double Z)
     /// <summary>The displacement of the given length at an angle counted from +y towards +z, radians.</summary>
     public static Point Polar(double length, double angle) => new(length * Math.Cos(angle), length * Math.Sin(angle));
 
-    /// <summary>Both coordinates, for messages while debugging.</summary>
-    public override string ToString() => FormattableString.Invariant($"({Y}, {Z})");
-
     /// <summary>Sum.</summary>
     public static Point operator +(Point a, Point b) => new(a.Y + b.Y, a.Z + b.Z);
 
@@ -49,4 +46,7 @@ public readonly record struct Point(double Y, double Z)
 
     /// <summary>Scaled displacement.</summary>
     public static Point operator *(double factor, Point a) => new(factor * a.Y, factor * a.Z);
+
+    /// <summary>The coordinates in parentheses, with all their digits.</summary>
+    public override string ToString() => FormattableString.Invariant($"({Y}, {Z})");
 }

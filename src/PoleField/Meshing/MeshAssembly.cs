@@ -6,8 +6,8 @@ namespace PoleField.Meshing;
 /// <summary>Turns finished sheets into a <see cref="Mesh"/>.</summary>
 internal static class MeshAssembly
 {
-    public static Mesh Join(
-        CrossSection section, PlanarMesh inside, OpenCircle? circle, RefinementLimits limits, CancellationToken cancellation)
+    /// <summary>Joins the first sheet and, for open surroundings, the disc with the same rim.</summary>
+    public static Mesh Join(CrossSection section, PlanarMesh inside, OpenCircle? circle, PlanarMesh? disc)
     {
         List<Point> vertices = [];
         List<int> triangles = new(3 * inside.Triangulation.TriangleCount);
@@ -15,10 +15,9 @@ internal static class MeshAssembly
         List<int> regions = [.. RegionFlood.Regions(inside.Triangulation, inside.Curves, inside.Pieces)];
         CurveEdge[] edges = Edges(inside, numbers);
         int infinity = -1;
-        if (circle is not null)
+        if (disc is not null)
         {
             int[] rim = [.. edges.Where(e => e.SectionEdge < 0).Select(e => e.A)];
-            PlanarMesh disc = OpenDisc.Fill(circle, [.. rim.Select(v => vertices[v])], limits, cancellation);
             int[] discNumbers = Append(disc.Triangulation, vertices, triangles, rim);
             infinity = discNumbers[rim.Length];
             regions.AddRange(Enumerable.Repeat(Mesh.Exterior, disc.Triangulation.TriangleCount));

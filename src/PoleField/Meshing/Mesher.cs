@@ -40,8 +40,10 @@ public static class Mesher
         List<(int Curve, double From, double To)> cuts = Polygonisation.Cut(curves, wanted, turn, cancellation);
         PlanarMesh inside = PlanarMesh.Start(corners, curves, cuts, []);
         RefinementLimits limits = new(options.SmallestAngleDegrees, options.MostTriangles, PiecesFixed: false);
-        Refinement.Run(inside, size, limits, cancellation);
-        return MeshAssembly.Join(section, inside, circle, limits, cancellation);
+        Refinement refinement = Refinement.Of(inside, size, limits);
+        refinement.Run(cancellation);
+        PlanarMesh? disc = circle is null ? null : OpenDisc.Fill(circle, inside, refinement, limits, cancellation);
+        return MeshAssembly.Join(section, inside, circle, disc);
     }
 
     private static void Check(MeshOptions o)

@@ -41,7 +41,6 @@ internal sealed class Polygonisation
     private void CutBySize(int c)
     {
         const int most = 2_000_000;
-        const double tolerated = 0.15; // of a piece: 1.15 wanted lengths are still one piece
         List<double> steps = [0];
         double t = 0, rest = 0;
         while (steps.Count < most)
@@ -60,7 +59,7 @@ internal sealed class Polygonisation
 
         double total = steps.Count - 1 + rest;
         bool closed = _curves[c].Start == _curves[c].End;
-        int pieces = Math.Max(closed ? 3 : 1, (int)Math.Ceiling(total - tolerated));
+        int pieces = Math.Max(closed ? 3 : 1, (int)Math.Ceiling(total * Margin(_curves[c])));
         double from = 0;
         for (int k = 1; k <= pieces; k++)
         {
@@ -73,6 +72,11 @@ internal sealed class Polygonisation
             from = to;
         }
     }
+
+    // Straight pieces may be a little longer than wanted, arcs are counted exactly, and the march over other curves needs
+    // some room so that no piece turns more than it may.
+    private static double Margin(BoundaryCurve curve) =>
+        curve.IsStraight ? 0.9 : curve.Curve is CircularArc ? 1 - 1e-9 : 1.05;
 
     private double Density(int c, double t)
     {
@@ -122,7 +126,7 @@ internal sealed class Polygonisation
         BoxTree tree = new([.. _spans.Select(s => s.Hull)]);
         for (int i = 0; i < _spans.Count; i++)
         {
-            if (_spans[i].Turn > 1.1 * _turn)
+            if (_spans[i].Turn > (1 + 1e-6) * _turn)
             {
                 splits[i] = _spans[i].Middle;
             }

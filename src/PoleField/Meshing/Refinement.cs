@@ -45,9 +45,8 @@ internal sealed partial class Refinement
         }
     }
 
-    /// <summary>Refines in place.</summary>
-    /// <exception cref="MeshingException">More triangles than allowed, or curves too close for the arithmetic.</exception>
-    public static void Run(PlanarMesh mesh, SizeField size, RefinementLimits limits, CancellationToken cancellation)
+    /// <summary>Prepares to refine a mesh in place.</summary>
+    public static Refinement Of(PlanarMesh mesh, SizeField size, RefinementLimits limits)
     {
         Refinement r = new(mesh, size, limits);
         for (int s = 0; s < mesh.Pieces.Count; s++)
@@ -60,10 +59,12 @@ internal sealed partial class Refinement
             r._triangles.Add(t);
         }
 
-        r.Work(cancellation);
+        return r;
     }
 
-    private void Work(CancellationToken cancellation)
+    /// <summary>Refines until nothing is left to better.</summary>
+    /// <exception cref="MeshingException">More triangles than allowed, or curves too close for the arithmetic.</exception>
+    public void Run(CancellationToken cancellation)
     {
         for (long step = 0; ; step++)
         {

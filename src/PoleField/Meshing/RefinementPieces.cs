@@ -43,7 +43,26 @@ internal sealed partial class Refinement
                 $"Curves come too close for the arithmetic near ({a.Y:g9}, {a.Z:g9}) m; move them apart or join them there."), a);
         }
 
-        double t = SplitParameter(p, curve, length);
+        SplitPiece(piece, SplitParameter(p, curve, length));
+    }
+
+    /// <summary>Splits the curve's pieces at further parameters (those that are ends already stay).</summary>
+    public void SplitCurve(int curve, IEnumerable<double> parameters)
+    {
+        foreach (double t in parameters)
+        {
+            int piece = _mesh.Pieces.FindIndex(p => p.Curve == curve && p.TA < t && t < p.TB);
+            if (piece >= 0)
+            {
+                SplitPiece(piece, t);
+            }
+        }
+    }
+
+    private void SplitPiece(int piece, double t)
+    {
+        CurvePiece p = _mesh.Pieces[piece];
+        BoundaryCurve curve = _mesh.Curves[p.Curve];
         int m = AddVertex(curve.Curve.At(t), p.Curve);
         int added = _mesh.Pieces.Count;
         _mesh.Pieces[piece] = p with { B = m, TB = t };

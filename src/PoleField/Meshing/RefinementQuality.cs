@@ -29,6 +29,17 @@ internal sealed partial class Refinement
         return (skinny && !SpansSharpCorner(p, q)) || BendsTooMuch(t, pa, pb, pc) || IsLongInside(a, b, c, pa, pb, pc);
     }
 
+    /// <summary>Square of the sine of the triangle's smallest angle.</summary>
+    public static double SmallestSineSquared(Triangulation triangulation, int t)
+    {
+        Point a = triangulation.Place(triangulation.Origin(3 * t));
+        Point b = triangulation.Place(triangulation.Origin((3 * t) + 1));
+        Point c = triangulation.Place(triangulation.Origin((3 * t) + 2));
+        double ab = (b - a).SquaredLength, bc = (c - b).SquaredLength, ca = (a - c).SquaredLength;
+        double twiceArea = (b - a).Cross(c - a);
+        return twiceArea * twiceArea * Math.Min(ab, Math.Min(bc, ca)) / (ab * bc * ca);
+    }
+
     private bool IsLong(int a, int b, double squaredLength)
     {
         double wanted = Stretch * 0.5 * (_sizeAt[a] + _sizeAt[b]);

@@ -31,7 +31,6 @@ internal sealed partial class Triangulation
         Constrain(a, m, piece);
         Constrain(m, b, newPiece);
         RemoveBehind(forward ? a : b, m);
-        RemoveBehind(m, forward ? b : a);
     }
 
     private void InsertBetween(int a, int m)

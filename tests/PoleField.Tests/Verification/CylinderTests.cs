@@ -34,7 +34,7 @@ public class CylinderTests
     [InlineData(1.5)]
     public void SaturatingCylinderIsUniformInsideAndADipoleOutside(double background)
     {
-        Material steel = MaterialLibrary.Find("mild-steel");
+        Material steel = MaterialLibrary.Get("mild-steel");
         SolvedMagnet solved = Solve(steel, background);
         double inside = InsideField(steel.Law, background);
         double k = (inside / background) - 1;
@@ -56,7 +56,7 @@ public class CylinderTests
     [InlineData(1.2, 2.2572283)]
     public void SaturatingCylinderAgreesWithThePublishedValues(double background, double inside)
     {
-        SolvedMagnet solved = Solve(MaterialLibrary.Find("mild-steel"), background);
+        SolvedMagnet solved = Solve(MaterialLibrary.Get("mild-steel"), background);
 
         FieldSample centre = Assert.NotNull(solved.Solution.At(default));
         Assert.Equal(1.0, centre.Bz / inside, 2e-3);

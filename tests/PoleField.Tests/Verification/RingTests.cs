@@ -16,7 +16,7 @@ public class RingTests
     [InlineData(3000, 2.1132802, 2.0419014, 1.9766658, 0.020430366)]
     public void FluxDensityAndFluxFollowAmperesLaw(double current, double at10, double at15, double at20, double flux)
     {
-        Material steel = MaterialLibrary.Find("mild-steel");
+        Material steel = MaterialLibrary.Get("mild-steel");
         Magnet magnet = new Drawn()
             .Circle("RING", 0, 0, 20).Circle("RING", 0, 0, 10).Circle("WIRE", 0, 0, 2)
             .Part("RING", steel).Part("WIRE", Material.Air, current)

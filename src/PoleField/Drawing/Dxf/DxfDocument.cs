@@ -28,7 +28,20 @@ internal sealed class DxfDocument
 internal sealed record DxfLayer(string Name, bool IsFrozen, bool IsOff, string LineType);
 
 /// <summary>A block: entities that INSERTs show.</summary>
-internal sealed record DxfBlock(string Name, Point Base, bool IsExternal, List<DxfItem> Items);
+internal sealed class DxfBlock(string name, Point basePoint, bool isExternal)
+{
+    /// <summary>Name.</summary>
+    public string Name => name;
+
+    /// <summary>The point that INSERTs place.</summary>
+    public Point Base => basePoint;
+
+    /// <summary>True when the content is in another file.</summary>
+    public bool IsExternal => isExternal;
+
+    /// <summary>Content.</summary>
+    public List<DxfItem> Items { get; } = [];
+}
 
 /// <summary>An entity.</summary>
 internal abstract record DxfItem(string Kind, DxfPlace Place)

@@ -5,10 +5,21 @@ namespace PoleField.Drawing;
 /// <summary>Shows what is visible: blocks expanded, hidden things left out and counted.</summary>
 internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLimits limits, double metresPerUnit)
 {
+    /// <summary>Reason of pieces that have no length.</summary>
+    public const string NoLength = "it has no length";
+
+    /// <summary>Beginning of the reason of centre lines.</summary>
+    public const string CentreLine = "it is drawn as a centre line, line type";
+
+    /// <summary>Reason of external references.</summary>
+    public const string External = "it is an external reference, which is not in the file";
+
+    private const string Continuous = "CONTINUOUS";
+
     private readonly List<SketchCurve> _curves = [];
     private readonly Dictionary<(string Layer, string Kind, string Why), int> _skipped = [];
     private readonly List<(string Layer, string Kind, string Why)> _skippedOrder = [];
-    private readonly Dictionary<string, string> _spelling = new(StringComparer.OrdinalIgnoreCase);
+    private readonly Dictionary<string, DxfLayer> _layers = new(document.Layers, StringComparer.OrdinalIgnoreCase);
     private readonly List<DxfBlock> _path = [];
     private readonly double _farthest = limits.Coordinate / metresPerUnit;
     private long _cost;
@@ -29,17 +40,18 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
 
     /// <summary>Expands the drawing.</summary>
     /// <exception cref="InputException">A limit was reached.</exception>
-    public void Run() => Show(document.Entities, new Surroundings(Affine.Identity, null, "CONTINUOUS"));
+    public void Run() => Show(document.Entities, new Surroundings(Affine.Identity, null, Continuous));
 
     /// <summary>What a block's content takes from the INSERTs around it.</summary>
-    private readonly record struct Surroundings(Affine Map, string? Layer, string LineType);
+    private readonly record struct Surroundings(Affine Map, DxfLayer? Layer, string LineType);
 
     private void Show(List<DxfItem> items, Surroundings around)
     {
         foreach (DxfItem item in items)
         {
-            string layer = LayerOf(item, around);
-            if (Hidden(item, layer) is { } why)
+            DxfLayer onLayer = LayerOf(item, around);
+            string layer = onLayer.Name;
+            if (Hidden(item, onLayer) is { } why)
             {
                 Skip(layer, item.Kind, why);
                 continue;
@@ -56,18 +68,19 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
             }
             else if (item is DxfInsert insert)
             {
-                Copy(insert, layer, around);
+                Copy(insert, onLayer, around);
             }
             else if (item is DxfShape shape)
             {
-                Show(shape, layer, around);
+                Show(shape, onLayer, around);
             }
         }
     }
 
-    private void Show(DxfShape shape, string layer, Surroundings around)
+    private void Show(DxfShape shape, DxfLayer onLayer, Surroundings around)
     {
-        string lineType = LineTypeOf(shape, layer, around);
+        string layer = onLayer.Name;
+        string lineType = LineTypeOf(shape, onLayer, around);
         if (DxfWords.IsCentreLine(lineType))
         {
             Skip(layer, shape.Kind, $"{CentreLine} {DxfReport.Shown(lineType)}");
@@ -106,14 +119,9 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
         }
     }
 
-    /// <summary>Reason of pieces that have no length.</summary>
-    public const string NoLength = "it has no length";
-
-    /// <summary>Beginning of the reason of centre lines.</summary>
-    public const string CentreLine = "it is drawn as a centre line, line type";
-
-    private void Copy(DxfInsert insert, string layer, Surroundings around)
+    private void Copy(DxfInsert insert, DxfLayer onLayer, Surroundings around)
     {
+        string layer = onLayer.Name;
         if (!document.Blocks.TryGetValue(insert.Block, out DxfBlock? block))
         {
             report.Fault(
@@ -139,7 +147,8 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
                 $"INSERT of block {DxfReport.Shown(block.Name)} asks for {columns} by {rows} copies; the limit is {limits.ArrayCells}."));
         }
 
-        string lineType = LineTypeOf(insert, layer, around);
+        string lineType = LineTypeOf(insert, onLayer, around);
+        Affine local = insert.ToParent.After(Affine.Shift(-block.Base));
         _path.Add(block);
         for (long row = 0; row < rows; row++)
         {
@@ -152,16 +161,13 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
                 }
 
                 Point shift = (column * columnShift) + (row * rowShift);
-                Affine map = around.Map.After(Affine.Shift(shift).After(insert.ToParent.After(Affine.Shift(-block.Base))));
-                Show(block.Items, new Surroundings(map, layer, lineType));
+                Affine here = local with { Y0 = local.Y0 + shift.Y, Z0 = local.Z0 + shift.Z };
+                Show(block.Items, new Surroundings(around.Map.After(here), onLayer, lineType));
             }
         }
 
         _path.RemoveAt(_path.Count - 1);
     }
-
-    /// <summary>Reason of external references.</summary>
-    public const string External = "it is an external reference, which is not in the file";
 
     private void CheckNesting(DxfInsert insert, DxfBlock block)
     {
@@ -193,7 +199,7 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
 
     private void Spend(Curve curve, DxfPlace place)
     {
-        _cost += curve is Nurbs nurbs ? nurbs.Knots.Count * (long)(nurbs.Degree + 1) / 4 : 1;
+        _cost += curve is Nurbs nurbs ? nurbs.Knots.Count * (long)(nurbs.Degree + 1) : 1;
         if (_cost > limits.Curves)
         {
             string within = _path.Count == 0 ? string.Empty : $"; limit reached at {Path()}";
@@ -240,31 +246,32 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
         }
     }
 
-    private string LayerOf(DxfItem item, Surroundings around)
+    // A layer exists by being used; its name is spelled as in the table, or else as at its first use.
+    private DxfLayer LayerOf(DxfItem item, Surroundings around)
     {
-        string written = item.Layer == "0" && around.Layer is not null ? around.Layer : item.Layer;
-        if (!_spelling.TryGetValue(written, out string? spelled))
+        if (item.Layer == "0" && around.Layer is not null)
         {
-            spelled = document.Layers.TryGetValue(written, out DxfLayer? layer) ? layer.Name : written;
-            _spelling.Add(written, spelled);
+            return around.Layer;
         }
 
-        return spelled;
-    }
-
-    private string LineTypeOf(DxfItem item, string layer, Surroundings around)
-    {
-        string written = item.LineType ?? "BYLAYER";
-        if (written.Equals("BYBLOCK", StringComparison.OrdinalIgnoreCase))
+        if (!_layers.TryGetValue(item.Layer, out DxfLayer? layer))
         {
-            return around.LineType;
+            layer = new DxfLayer(item.Layer, IsFrozen: false, IsOff: false, Continuous);
+            _layers.Add(item.Layer, layer);
         }
 
-        bool byLayer = written.Equals("BYLAYER", StringComparison.OrdinalIgnoreCase);
-        return byLayer && document.Layers.TryGetValue(layer, out DxfLayer? found) ? found.LineType : written;
+        return layer;
     }
 
-    private string? Hidden(DxfItem item, string layer)
+    private static string LineTypeOf(DxfItem item, DxfLayer layer, Surroundings around) => item.LineType switch
+    {
+        null => layer.LineType,
+        string written when written.Equals("BYBLOCK", StringComparison.OrdinalIgnoreCase) => around.LineType,
+        string written when written.Equals("BYLAYER", StringComparison.OrdinalIgnoreCase) => layer.LineType,
+        string written => written,
+    };
+
+    private static string? Hidden(DxfItem item, DxfLayer layer)
     {
         if (item.IsOnPaper)
         {
@@ -276,13 +283,8 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
             return "it is marked invisible";
         }
 
-        if (!document.Layers.TryGetValue(layer, out DxfLayer? found))
-        {
-            return null;
-        }
-
         // A layer that is off hides what lies on it, but not what an INSERT on it shows on other layers.
-        return found.IsFrozen ? "its layer is frozen" : found.IsOff && item is not DxfInsert ? "its layer is switched off" : null;
+        return layer.IsFrozen ? "its layer is frozen" : layer.IsOff && item is not DxfInsert ? "its layer is switched off" : null;
     }
 
     private void Skip(string layer, string kind, string why)

@@ -213,8 +213,7 @@ internal sealed class DxfParser(DxfPairs pairs, DxfReport report, DxfLimits limi
         var block = new DxfBlock(
             head.Name ?? string.Empty,
             new Point(head.Real(10, 0), head.Real(20, 0)),
-            (head.Integer(70) & 12) != 0,
-            []);
+            (head.Integer(70) & 12) != 0);
         if (!_document.Blocks.TryAdd(block.Name, block))
         {
             report.Warn(

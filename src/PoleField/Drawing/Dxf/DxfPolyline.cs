@@ -19,6 +19,7 @@ internal sealed class DxfPolyline
     private readonly List<(Point Place, double Bulge)> _vertices = [];
     private (double Low, double High) _heights = (double.PositiveInfinity, double.NegativeInfinity);
     private (string What, string Text, string Fix)? _problem;
+    private bool _isIncomplete;
 
     /// <summary>Starts from the POLYLINE entity.</summary>
     public DxfPolyline(DxfRecord record)
@@ -85,6 +86,7 @@ internal sealed class DxfPolyline
             _problem ??= DxfShapes.Climbs(vertex, _heights.Low, _heights.High);
         }
 
+        _isIncomplete |= vertex.IsIncomplete;
         _vertices.Add((place, bulge));
     }
 
@@ -96,7 +98,7 @@ internal sealed class DxfPolyline
             return new DxfOther("POLYFACE", _shape.Place) { IsInvisible = _shape.IsInvisible, IsOnPaper = _shape.IsOnPaper };
         }
 
-        if (_problem is not null)
+        if (_problem is not null || _isIncomplete)
         {
             return _shape with { Problem = _problem };
         }

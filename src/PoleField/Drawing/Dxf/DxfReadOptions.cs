@@ -22,7 +22,7 @@ public sealed record DxfLimits
     /// <summary>Pairs of group code and value.</summary>
     public long Pairs { get; init; } = 50_000_000;
 
-    /// <summary>Curves after expansion of all blocks; a spline counts as many times as it has control points.</summary>
+    /// <summary>Curves after expansion of all blocks; a spline counts its knots times (degree + 1), the memory it takes.</summary>
     public int Curves { get; init; } = 2_000_000;
 
     /// <summary>Copies of blocks, empty ones included.</summary>

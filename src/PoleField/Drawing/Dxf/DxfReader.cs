@@ -76,17 +76,16 @@ public static class DxfReader
             return (stated, UnitOrigin.InsertUnits);
         }
 
-        string unknown = code != 0 ? FormattableString.Invariant($"$INSUNITS={code} is no known unit; ") : string.Empty;
+        string unknown = code != 0 ? FormattableString.Invariant($"$INSUNITS={code} is no known unit. ") : string.Empty;
         const string state = "State the unit in the case file, or set it in the drawing.";
         if (document.Measurement == 1)
         {
-            string text = $"{unknown}the drawing unit is mm, from $MEASUREMENT=1.";
-            Action<string, string, string, DxfPlace> tell = unknown.Length > 0 ? report.Warn : report.Note;
-            tell("unit", char.ToUpperInvariant(text[0]) + text[1..], state, default);
+            Action<string, string, string, DxfPlace> tell = code != 0 ? report.Warn : report.Note;
+            tell("unit", $"{unknown}The drawing unit is mm, from $MEASUREMENT=1.", state, default);
             return (LengthUnit.Millimetre, UnitOrigin.Measurement);
         }
 
-        report.Warn("unit", $"{unknown}the drawing states no unit; mm is assumed.".Replace("; the drawing states no", "; no", StringComparison.Ordinal), state);
+        report.Warn("unit", $"{unknown}The drawing states no unit; mm is assumed.", state);
         return (LengthUnit.Millimetre, UnitOrigin.Assumed);
     }
 

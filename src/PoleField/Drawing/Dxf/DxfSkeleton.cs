@@ -16,9 +16,9 @@ internal sealed class DxfSkeleton(DxfPairWriter pairs, IReadOnlyList<string> lay
     public int FirstEntityHandle => FirstLayer + layers.Count;
 
     /// <summary>Everything before the entities.</summary>
-    public void WriteBefore(Sketch sketch)
+    public void WriteBefore(int entities)
     {
-        Header(sketch);
+        Header(entities);
         Section("CLASSES");
         End();
         Tables();
@@ -38,23 +38,14 @@ internal sealed class DxfSkeleton(DxfPairWriter pairs, IReadOnlyList<string> lay
 
     private void End() => pairs.Text(0, "ENDSEC");
 
-    private void Header(Sketch sketch)
+    private void Header(int entities)
     {
-        Box box = Box.Empty;
-        foreach (SketchCurve c in sketch.Curves)
-        {
-            box = box.Including(c.Curve.Bounds);
-        }
-
-        box = box.IsEmpty ? new Box(default, default) : box;
         Section("HEADER");
         pairs.Text(9, "$ACADVER").Text(1, "AC1015");
         pairs.Text(9, "$DWGCODEPAGE").Text(3, "ANSI_1252");
-        pairs.Text(9, "$HANDSEED").Handle(5, FirstEntityHandle + sketch.Curves.Count);
+        pairs.Text(9, "$HANDSEED").Handle(5, FirstEntityHandle + entities);
         pairs.Text(9, "$INSUNITS").Whole(70, unit);
         pairs.Text(9, "$MEASUREMENT").Whole(70, DxfUnits.IsImperial(unit) ? 0 : 1);
-        pairs.Text(9, "$EXTMIN").Place(10, box.Min);
-        pairs.Text(9, "$EXTMAX").Place(10, box.Max);
         End();
     }
 

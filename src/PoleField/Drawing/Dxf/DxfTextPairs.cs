@@ -50,13 +50,13 @@ internal sealed class DxfTextPairs(DxfBytes bytes, DxfReport report, DxfLimits l
 
             int length = FindLine(out int end);
             Line = _lines;
-            ReadCode(bytes.Ahead[..length]);
-            bytes.Skip(end);
-            if (!bytes.Need(1))
+            if (!bytes.Need(end + 1))
             {
-                _valueLength = 0;
                 throw Truncated("between a group code and its value");
             }
+
+            ReadCode(bytes.Ahead[..length]);
+            bytes.Skip(end);
 
             _valueLength = FindLine(out _valueEnd);
         }

@@ -6,8 +6,8 @@ namespace PoleField.Drawing;
 /// <summary>Writes sketches as DXF R2000 (AC1015) text.</summary>
 /// <remarks>
 /// <para>Lines become LINE, arcs ARC, whole circles CIRCLE, elliptic arcs ELLIPSE and splines SPLINE, on their layers and
-/// in the sketch's unit. Arcs so shallow, or so nearly whole, that their angles would lose digits become an LWPOLYLINE of
-/// one bulged piece.</para>
+/// in the sketch's unit. Arcs so shallow that their angles would lose digits become an LWPOLYLINE of one bulged piece; arcs
+/// that lack less than 2e-9 radians to a full turn become circles.</para>
 /// <para>An ARC runs counter-clockwise by definition: arcs travelled clockwise, and all circles, come back travelled
 /// counter-clockwise. Coordinates are written with all digits; angles are rounded to 1e-12 degrees so that reading and
 /// writing again gives the same bytes.</para>
@@ -18,9 +18,11 @@ public static class DxfWriter
     private const int DegreeDecimals = 12;
     private const int RadianDecimals = 14;
 
-    // Beyond these sweeps, radians, two angles say less than a bulge.
+    // Below this sweep, radians, two angles say less than a bulge.
     private const double ShallowSweep = 0.01;
-    private const double NearlyWhole = 1e-6;
+
+    // What lacks less than this to a full turn, radians, is read as a whole circle.
+    private const double NearlyWhole = 2e-9;
 
     /// <summary>Writes a sketch.</summary>
     /// <param name="sketch">What to write; layers and curves count, the origin of each curve does not.</param>
@@ -42,7 +44,7 @@ public static class DxfWriter
 
         using var pairs = new DxfPairWriter(stream);
         var frame = new DxfSkeleton(pairs, layers, unit);
-        frame.WriteBefore(sketch);
+        frame.WriteBefore(sketch.Curves.Count);
         int handle = frame.FirstEntityHandle;
         foreach (SketchCurve curve in sketch.Curves)
         {
@@ -60,14 +62,19 @@ public static class DxfWriter
             case Line line:
                 head.Write("LINE", "AcDbLine").Place(10, line.Start).Place(11, line.End);
                 break;
-            case CircularArc { IsFullCircle: true } circle:
+            case CircularArc circle when Math.Tau - Math.Abs(circle.Sweep) < NearlyWhole:
                 head.Write("CIRCLE", "AcDbCircle").Place(10, circle.Centre).Real(40, circle.Radius);
                 break;
-            case CircularArc arc when Math.Abs(arc.Sweep) < ShallowSweep || Math.Tau - Math.Abs(arc.Sweep) < NearlyWhole:
+            case CircularArc arc when Math.Abs(arc.Sweep) < ShallowSweep:
                 Bulged(head, arc);
                 break;
             case CircularArc arc:
                 Arc(head, arc);
+                break;
+            case EllipticArc arc when Ratio(arc) == 1.0:
+                // It is read as part of a circle, so it is written as one.
+                double start = Math.Atan2(arc.Major.Z, arc.Major.Y) + arc.StartAngle;
+                Write(pairs, drawn with { Curve = new CircularArc(arc.Centre, arc.Major.Length, start, arc.Sweep) }, handle);
                 break;
             case EllipticArc arc:
                 Ellipse(head, arc);
@@ -97,14 +104,17 @@ public static class DxfWriter
         // The format wants the longer half axis first.
         bool swapped = arc.MinorLength > arc.Major.Length;
         Point major = swapped ? arc.Minor : arc.Major;
-        double ratio = swapped ? arc.Major.Length / arc.MinorLength : arc.MinorLength / arc.Major.Length;
         double angle = swapped ? arc.StartAngle - (Math.PI / 2) : arc.StartAngle;
         double from = Math.Round(Turned(arc.Sweep > 0 ? angle : angle + arc.Sweep, Math.Tau), RadianDecimals);
+        from = from >= Math.Tau ? 0 : from;
         double to = Math.Round(from + Math.Abs(arc.Sweep), RadianDecimals);
         head.Write("ELLIPSE", "AcDbEllipse").Place(10, arc.Centre).Place(11, major)
             .Real(210, 0).Real(220, 0).Real(230, 1)
-            .Real(40, Math.Min(1, Digits(ratio))).Real(41, from).Real(42, to);
+            .Real(40, Ratio(arc)).Real(41, from).Real(42, to);
     }
+
+    private static double Ratio(EllipticArc arc) => Digits(
+        Math.Min(arc.MinorLength, arc.Major.Length) / Math.Max(arc.MinorLength, arc.Major.Length));
 
     private static void Spline(EntityHead head, Nurbs spline)
     {

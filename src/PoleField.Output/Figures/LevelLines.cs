@@ -1,0 +1,116 @@
+using PoleField.Geometry;
+
+namespace PoleField.Output.Figures;
+
+/// <summary>A triangle with a value at each corner, linear between.</summary>
+internal readonly record struct ValueTriangle(Point P0, Point P1, Point P2, double V0, double V1, double V2);
+
+/// <summary>A line of equal value.</summary>
+/// <param name="Level">The value.</param>
+/// <param name="Points">The line, metres; first equals last when closed.</param>
+internal sealed record LevelLine(double Level, IReadOnlyList<Point> Points);
+
+/// <summary>
+/// Lines of equal value through triangles by linear interpolation on their edges, chained to long polylines. Of the
+/// vector potential these are field lines, and equal steps of level enclose equal flux.
+/// </summary>
+internal static class LevelLines
+{
+    /// <summary>Traces all levels that are multiples of a step, shifted by an offset.</summary>
+    /// <param name="triangles">Triangles; neighbours meet edge to edge.</param>
+    /// <param name="step">Distance of levels, &gt; 0.</param>
+    /// <param name="tolerance">Largest distance, metres, between a line and its simplified form.</param>
+    public static IReadOnlyList<LevelLine> Trace(IEnumerable<ValueTriangle> triangles, double step, double tolerance)
+    {
+        SortedDictionary<long, LineChainer> chains = [];
+        foreach (ValueTriangle t in triangles)
+        {
+            double low = Math.Min(t.V0, Math.Min(t.V1, t.V2));
+            double high = Math.Max(t.V0, Math.Max(t.V1, t.V2));
+            for (long k = (long)Math.Ceiling(low / step); k * step <= high; k++)
+            {
+                if (!chains.TryGetValue(k, out LineChainer? chain))
+                {
+                    chain = new LineChainer(tolerance * 1e-2);
+                    chains.Add(k, chain);
+                }
+
+                Cut(t, k * step, chain);
+            }
+        }
+
+        return
+        [
+            .. chains.SelectMany(c => c.Value.Lines().Select(points => new LevelLine(c.Key * step, Simplify(points, tolerance)))),
+        ];
+    }
+
+    private static void Cut(in ValueTriangle t, double level, LineChainer chain)
+    {
+        Span<Point> ends = stackalloc Point[3];
+        int count = 0;
+        Cross(t.P0, t.V0, t.P1, t.V1, level, ends, ref count);
+        Cross(t.P1, t.V1, t.P2, t.V2, level, ends, ref count);
+        Cross(t.P2, t.V2, t.P0, t.V0, level, ends, ref count);
+        if (count == 2)
+        {
+            chain.Add(ends[0], ends[1]);
+        }
+    }
+
+    private static void Cross(Point p, double vp, Point q, double vq, double level, Span<Point> ends, ref int count)
+    {
+        if ((vp >= level) == (vq >= level))
+        {
+            return;
+        }
+
+        // From the lower place always, so that both triangles of an edge find the same point.
+        bool swap = p.Y > q.Y || (p.Y == q.Y && p.Z > q.Z);
+        ends[count++] = swap
+            ? Point.Between(q, p, (level - vq) / (vp - vq))
+            : Point.Between(p, q, (level - vp) / (vq - vp));
+    }
+
+    /// <summary>Leaves out points that lie within the tolerance of the line without them (Douglas and Peucker 1973).</summary>
+    public static IReadOnlyList<Point> Simplify(IReadOnlyList<Point> points, double tolerance)
+    {
+        if (points.Count < 3)
+        {
+            return points;
+        }
+
+        bool[] kept = new bool[points.Count];
+        kept[0] = kept[^1] = true;
+        Stack<(int From, int To)> open = new([(0, points.Count - 1)]);
+        while (open.TryPop(out (int From, int To) piece))
+        {
+            (double worst, int at) = (tolerance, -1);
+            for (int i = piece.From + 1; i < piece.To; i++)
+            {
+                double distance = DistanceToSegment(points[i], points[piece.From], points[piece.To]);
+                if (distance > worst)
+                {
+                    (worst, at) = (distance, i);
+                }
+            }
+
+            if (at >= 0)
+            {
+                kept[at] = true;
+                open.Push((piece.From, at));
+                open.Push((at, piece.To));
+            }
+        }
+
+        return [.. points.Where((_, i) => kept[i])];
+    }
+
+    private static double DistanceToSegment(Point p, Point a, Point b)
+    {
+        Point along = b - a;
+        double squared = along.SquaredLength;
+        double t = squared > 0 ? Math.Clamp((p - a).Dot(along) / squared, 0, 1) : 0;
+        return p.DistanceTo(Point.Between(a, b, t));
+    }
+}

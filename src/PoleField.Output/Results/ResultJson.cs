@@ -1,0 +1,187 @@
+using System.Text.Encodings.Web;
+using System.Text.Json;
+using System.Text.Json.Serialization.Metadata;
+using PoleField.Beam;
+using PoleField.Geometry;
+
+namespace PoleField.Output.Results;
+
+/// <summary>
+/// Writes and reads the result file <c>polefield-result/1</c>: UTF-8 without byte order mark, two-space indentation, fixed
+/// key order, doubles with the fewest digits that read back to the same bits, null where there is no finite number.
+/// </summary>
+public static class ResultJson
+{
+    /// <summary>Name and version of the format.</summary>
+    public const string Format = "polefield-result/1";
+
+    internal static JsonSerializerOptions Options { get; } = MakeOptions();
+
+    /// <summary>Turns a result (SI) into the file's sections (mm).</summary>
+    public static ResultFile ToFile(SolveResult result)
+    {
+        BeamReport report = result.Report;
+        SolveRecord record = result.Record;
+        return new ResultFile(
+            Format,
+            result.Title,
+            result.CaseSha256,
+            result.SketchSha256,
+            result.ProgramVersion,
+            Beam(report),
+            Aperture(report),
+            [.. report.Parts.Select(Part)],
+            Circuit(report.Circuit),
+            new MeshSection(record.Triangles, record.Unknowns, record.Order, Finite(record.SmallestAngleDegrees)),
+            Run(result),
+            [.. result.Requirements.Select(r => new RequireSection(r.Name, r.Unit, Finite(r.Wanted), Finite(r.Found), r.Met))],
+            result.Cautions,
+            [.. result.Warnings.Select(w => new WarningSection(w.Where, w.Text))]);
+    }
+
+    /// <summary>Writes a result.</summary>
+    public static void Write(SolveResult result, Stream stream) => Write(ToFile(result), stream);
+
+    /// <summary>Writes the sections of a result file.</summary>
+    public static void Write(ResultFile file, Stream stream)
+    {
+        JsonSerializer.Serialize(stream, file, Options);
+        stream.WriteByte((byte)'\n');
+    }
+
+    /// <summary>The text <see cref="Write(ResultFile, Stream)"/> writes.</summary>
+    public static string Text(ResultFile file) => JsonSerializer.Serialize(file, Options) + "\n";
+
+    /// <summary>Reads a result file; keys it does not know are skipped.</summary>
+    /// <exception cref="InputException">Not JSON, a required key is missing or of the wrong type, or another format.</exception>
+    public static ResultFile Read(Stream stream, string fileName = "result")
+    {
+        try
+        {
+            ResultFile? file = JsonSerializer.Deserialize<ResultFile>(stream, Options);
+            return file is { Format: Format }
+                ? file
+                : throw Unreadable(fileName, null, $"it has the format '{file?.Format ?? "null"}'");
+        }
+        catch (JsonException e)
+        {
+            int? line = e.LineNumber is long n ? (int)n + 1 : null;
+            string place = string.IsNullOrEmpty(e.Path) ? "" : $" at {e.Path}";
+            throw Unreadable(fileName, line, $"it is not in that form{place}");
+        }
+    }
+
+    private static InputException Unreadable(string fileName, int? line, string what) => new(
+    [
+        new Finding(
+            Severity.Fault,
+            "result-unreadable",
+            $"{fileName} cannot be read as {Format}: {what}.",
+            "Give a result file written by this version, or solve again.") { File = fileName, Line = line },
+    ]);
+
+    private static BeamSection Beam(BeamReport report)
+    {
+        BeamValues b = report.Beam;
+        return new BeamSection(
+            Millimetres(b.At.Y),
+            Millimetres(b.At.Z),
+            Finite(b.Field),
+            Finite(report.FieldError),
+            Finite(b.By),
+            Finite(b.Bz),
+            Finite(b.Gradient),
+            Finite(report.GradientError),
+            Finite(b.DBzDz),
+            Finite(b.DByDz),
+            Finite(b.TransverseGradient));
+    }
+
+    private static ApertureSection Aperture(BeamReport report)
+    {
+        ApertureStatistics f = report.Field;
+        ApertureStatistics g = report.Gradient;
+        ApertureStatistics p = report.FieldTimesGradient;
+        return new ApertureSection(
+            Finite(report.ApertureArea * 1e6),
+            Millimetres(report.Clearance),
+            new FieldStatistics(Finite(f.Mean), Finite(f.Min), Finite(f.Max), Finite(f.Spread), Finite(f.Rms)),
+            new GradientStatistics(
+                Finite(g.Mean), Finite(g.Min), Finite(g.Max), Finite(g.Spread), Finite(g.Rms), Finite(report.GradientMeanError)),
+            new ProductStatistics(Finite(p.Mean), Finite(p.Spread), Finite(p.Rms)),
+            [.. report.ProfileY.Select(v => new ProfileAlongY(Millimetres(v.At.Y), Finite(v.Field), Finite(v.Gradient)))],
+            [.. report.ProfileZ.Select(v => new ProfileAlongZ(Millimetres(v.At.Z), Finite(v.Field), Finite(v.Gradient)))]);
+    }
+
+    private static PartSection Part(PartReport p) => new(
+        p.Layer,
+        p.Kind,
+        p.Material,
+        Finite(p.Area * 1e6),
+        p.Outlines,
+        Finite(p.AmpereTurns),
+        Finite(p.CurrentDensity / 1e6),
+        Finite(p.FieldMax),
+        p.FieldMaxAt is Point at ? Pair(1e3 * at) : null,
+        Finite(p.FieldP99),
+        Finite(p.SaturatedShare),
+        Finite(p.MmfDrop),
+        p.ForcePerMetre is Point force ? Pair(force) : null);
+
+    private static CircuitSection Circuit(CircuitReport c) => new(
+        Finite(c.AmpereTurns),
+        Finite(c.GapAmpereTurns),
+        Finite(c.IronAmpereTurns),
+        Finite(c.Efficiency),
+        Finite(c.EnergyPerMetre),
+        Finite(c.InductancePerMetre * 1e6));
+
+    private static RunSection Run(SolveResult result)
+    {
+        RunSeconds s = result.Seconds;
+        return new RunSection(
+            result.Record.NewtonSteps,
+            result.Record.AdaptiveSteps,
+            new SecondsSection(Finite(s.Read), Finite(s.Mesh), Finite(s.Solve), Finite(s.Evaluate), Finite(s.Total)),
+            Finite(result.PeakMemoryMB),
+            Finite(result.Record.AccuracyReached),
+            Finite(result.Record.AccuracyAsked));
+    }
+
+    private static double? Finite(double? value) => value is double v && double.IsFinite(v) ? v : null;
+
+    private static double? Millimetres(double metres) => Finite(metres * 1e3);
+
+    private static double[]? Pair(Point p) => p.IsFinite ? [p.Y, p.Z] : null;
+
+    private static JsonSerializerOptions MakeOptions()
+    {
+        JsonSerializerOptions options = new()
+        {
+            WriteIndented = true,
+            NewLine = "\n",
+            RespectNullableAnnotations = true,
+            RespectRequiredConstructorParameters = true,
+
+            // Names in any script stay readable; quotes and control characters are still escaped. HTML pages escape on their own.
+            Encoder = JavaScriptEncoder.UnsafeRelaxedJsonEscaping,
+            TypeInfoResolver = new DefaultJsonTypeInfoResolver { Modifiers = { LeaveOutWhatDoesNotApply } },
+        };
+        options.MakeReadOnly();
+        return options;
+    }
+
+    // Keys of a part that do not apply to its kind are left out; everywhere else null says "there is no number".
+    private static void LeaveOutWhatDoesNotApply(JsonTypeInfo type)
+    {
+        if (type.Type != typeof(PartSection))
+        {
+            return;
+        }
+
+        foreach (JsonPropertyInfo property in type.Properties.Where(p => !p.IsRequired))
+        {
+            property.ShouldSerialize = static (_, value) => value is not null;
+        }
+    }
+}
