@@ -166,7 +166,8 @@ public static class CrossSectionCheck
         }
     }
 
-    private static int Turns(CrossSection s, int region, Point p)
+    /// <summary>How often the edges of a region wind around a place: once inside it, not at all outside.</summary>
+    internal static int Turns(CrossSection s, int region, Point p)
     {
         double angle = 0;
         foreach (SectionEdge e in s.Edges)
