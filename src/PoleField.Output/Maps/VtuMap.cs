@@ -100,7 +100,8 @@ public static class VtuMap
         BitConverter.TryWriteBytes(run, (ulong)data.Length);
         data.CopyTo(run.AsSpan(sizeof(ulong)));
         string several = components == 1 ? "" : $" NumberOfComponents=\"{components.ToString(CultureInfo.InvariantCulture)}\"";
-        writer.WriteLine($"<DataArray type=\"{type}\" Name=\"{SecurityElement.Escape(name)}\"{several} format=\"binary\">");
+        string tuples = (values.Count / components).ToString(CultureInfo.InvariantCulture); // field data are read as empty without it
+        writer.WriteLine($"<DataArray type=\"{type}\" Name=\"{SecurityElement.Escape(name)}\"{several} NumberOfTuples=\"{tuples}\" format=\"binary\">");
         writer.WriteLine(Convert.ToBase64String(run));
         writer.WriteLine("</DataArray>");
     }
