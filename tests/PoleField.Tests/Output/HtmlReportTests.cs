@@ -102,17 +102,6 @@ public sealed partial class HtmlReportTests
         Assert.Equal(text, ResultTables.WithError(value, error));
 
     [Fact]
-    public void TheCautionsCarryTheForcesAndTheEnergyOfTheMagnet()
-    {
-        IReadOnlyList<string> cautions = UsualCautions.For(SampleResult.Make().Report, 0.2);
-
-        Assert.Contains(cautions, c => c.Contains("RIDGE is pulled with 250 N over 200 mm", StringComparison.Ordinal)); // 1250 N/m
-        Assert.Contains(cautions, c => c.Contains("stores 2.5 J", StringComparison.Ordinal)); // 12.5 J/m
-        Assert.Contains(cautions, c => c.Contains("magnet's ends", StringComparison.Ordinal));
-        Assert.Contains(cautions, c => c.Contains("hysteresis", StringComparison.Ordinal));
-    }
-
-    [Fact]
     public void TheColoursOfAMapRiseInLightness()
     {
         // Relative luminance of IEC 61966-2-1 (sRGB); a grey print keeps the order of the values from a sixteenth of the scale on.
