@@ -30,7 +30,7 @@ internal readonly record struct PlotRoom(double Width, double Height, double Lef
 internal sealed class FigureFrame : Annotation
 {
     private const double Edge = 14;
-    private const double KeySample = 30;
+    private const double KeySample = 27; // ends with a whole dash of the aperture's pen
     private readonly FrameText _text;
     private readonly IReadOnlyList<string> _title;
     private readonly List<IReadOnlyList<KeyEntry>> _keyRows;
