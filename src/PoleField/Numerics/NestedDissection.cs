@@ -59,7 +59,7 @@ internal sealed class NestedDissection
 
         if (sizes[0] == 0 || sizes[1] == 0)
         {
-            _leaves.Order(own);
+            // All are (nearly) neighbours of all; no order is much better than another.
             return;
         }
 
