@@ -18,7 +18,8 @@ internal sealed class GraphBisection(int vertices)
     private const int Passes = 6;
 
     // Separators grown from several places compete, fewer in a small graph (there are many of them); the coarse graph of at
-    // most the size of decision tells which is the lightest. Twice as many tries saved 2 % of the operations.
+    // most the size of decision tells which is the lightest. With four tries in small ones too there were 0.3 % fewer
+    // operations, with one 2 % more (quadratic triangles, 196 000 unknowns).
     private const int Tries = 4;
     private const int TriesWhenSmall = 2;
     private const int Small = 1500;
