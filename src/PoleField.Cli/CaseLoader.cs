@@ -73,6 +73,7 @@ internal sealed class CaseLoader(Pipeline pipeline)
     {
         PartLayers = [.. file.Parts.Select(p => p.Layer)],
         MaterialKeys = [.. file.Parts.Select(p => p.AmpereTurns is { } a ? FormattableString.Invariant($"coil {p.Layer} {a:R}") : p.Substance.Key)],
+        CurrentLayers = [.. file.Parts.Where(p => p.AmpereTurns is not null).Select(p => p.Layer)],
         BeamLayer = (file.Beam as BeamOnLayer)?.Layer,
         RimLayer = file.Surroundings.RimLayer,
         MirrorLeftRight = file.MirrorLeftRight,

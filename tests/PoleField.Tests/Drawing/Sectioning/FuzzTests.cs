@@ -36,7 +36,7 @@ public sealed class FuzzTests
         {
             for (double z = -4.31; z < 16; z += 1.67)
             {
-                int covers = Enumerable.Range(1, s.Regions.Count - 1).Sum(r => CrossSectionCheck.Turns(s, r, new Point(1e-3 * y, 1e-3 * z)));
+                int covers = Enumerable.Range(1, s.Regions.Count - 1).Sum(r => SectionPoint.Turns(s, r, new Point(1e-3 * y, 1e-3 * z)));
                 Assert.Equal(figures.Exists(f => f.Holds(y, z)) ? 1 : 0, covers);
             }
         }
