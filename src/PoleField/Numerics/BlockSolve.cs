@@ -98,7 +98,8 @@ internal static unsafe class BlockSolve
                 int height = Math.Min(8, rows.Length - first);
                 for (int i = 0; i < height; i++)
                 {
-                    new ReadOnlySpan<double>(x + ((long)Width * rows[first + i]), 8).CopyTo(new Span<double>(known + (8 * i), 8));
+                    var row = new ReadOnlySpan<double>(x + ((long)Width * rows[first + i]), Width);
+                    row.CopyTo(new Span<double>(known + (8 * i), Width));
                 }
 
                 SubtractTransposed(below, known, front.Columns, own);
