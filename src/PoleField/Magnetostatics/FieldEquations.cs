@@ -100,14 +100,14 @@ internal sealed class FieldEquations
         return new FieldState(energy, product + product2, residual);
     }
 
-    /// <summary>Factored tangent ∂²W/∂A² at a potential.</summary>
-    public TangentSystem TangentAt(double[] potential) => Factor(potential, null);
+    /// <summary>Factored tangent ∂²W/∂A² at a potential; <paramref name="spent"/> is a system no longer needed, whose memory is used.</summary>
+    public TangentSystem TangentAt(double[] potential, TangentSystem? spent = null) => Factor(potential, null, spent);
 
     /// <summary>Factored tangent with every saturating material replaced by one of constant permeability.</summary>
     public TangentSystem LinearTangent(double relativePermeability) =>
-        Factor(null, PhysicalConstants.Nu0 / relativePermeability);
+        Factor(null, PhysicalConstants.Nu0 / relativePermeability, null);
 
-    private TangentSystem Factor(double[]? potential, double? reluctivity)
+    private TangentSystem Factor(double[]? potential, double? reluctivity, TangentSystem? spent)
     {
         var values = (double[])_linearValues.Clone();
         Condensation condensation = _linearCondensation;
@@ -117,7 +117,18 @@ internal sealed class FieldEquations
             _sweep.AssembleTangent(_nonlinear, potential, reluctivity, values, condensation);
         }
 
-        return new TangentSystem(Problem.Space, _unknownOfNode, UnknownCount, condensation, Analysis.Factor(values, Threads));
+        CholeskyFactor factor;
+        if (spent is null)
+        {
+            factor = Analysis.Factor(values, Threads);
+        }
+        else
+        {
+            factor = spent.CholeskyFactor;
+            factor.Refactor(values, Threads);
+        }
+
+        return new TangentSystem(Problem.Space, _unknownOfNode, UnknownCount, condensation, factor);
     }
 
     private static int[] NumberUnknowns(FiniteElementSpace space, out int count)
@@ -204,31 +215,8 @@ internal sealed class FieldEquations
         }
 
         SymmetricPattern pattern = SymmetricPattern.FromElements(UnknownCount, start, unknowns);
-        scatter = ScatterMap(pattern, unknowns, boundary);
+        scatter = pattern.ScatterMap();
         return pattern;
-    }
-
-    private static int[] ScatterMap(SymmetricPattern pattern, int[] unknowns, int boundary)
-    {
-        int packed = boundary * (boundary + 1) / 2;
-        int elements = unknowns.Length / boundary;
-        var map = new int[elements * packed];
-        int k = 0;
-        for (int e = 0; e < elements; e++)
-        {
-            ReadOnlySpan<int> own = unknowns.AsSpan(e * boundary, boundary);
-            for (int i = 0; i < boundary; i++)
-            {
-                for (int j = 0; j <= i; j++, k++)
-                {
-                    map[k] = own[i] < 0 || own[j] < 0
-                        ? -1
-                        : pattern.PositionOf(Math.Max(own[i], own[j]), Math.Min(own[i], own[j]));
-                }
-            }
-        }
-
-        return map;
     }
 
     // Unknowns of the second disc are unfolded to where they are in space, so that cuts of the plane separate them too.
