@@ -46,7 +46,7 @@ public static class GradientMapFigure
                 Caption = Caption(gradient, stretch),
                 Key =
                 [
-                    new("mean", MeanPen), new("above the mean", FigureStyle.Contour), new("below the mean", BelowPen),
+                    new("mean", MeanPen), new("stronger than the mean", FigureStyle.Contour), new("weaker than the mean", BelowPen),
                 ],
             },
             new PlotRoom(PlotWidth, height, Right: ColourBar.Room + 8));

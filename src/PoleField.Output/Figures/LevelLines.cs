@@ -16,11 +16,16 @@ internal sealed record LevelLine(double Level, IReadOnlyList<Point> Points);
 /// </summary>
 internal static class LevelLines
 {
-    /// <summary>Traces all levels that are multiples of a step, shifted by an offset.</summary>
+    /// <summary>Traces all levels that are multiples of a step.</summary>
     /// <param name="triangles">Triangles; neighbours meet edge to edge.</param>
     /// <param name="step">Distance of levels, &gt; 0.</param>
     /// <param name="tolerance">Largest distance, metres, between a line and its simplified form.</param>
-    public static IReadOnlyList<LevelLine> Trace(IEnumerable<ValueTriangle> triangles, double step, double tolerance)
+    /// <param name="join">
+    /// Ends closer than this, metres, are joined; null for values that are the same on both sides of an edge. Values that jump
+    /// a little from element to element, such as |B|, need about the width of a line.
+    /// </param>
+    public static IReadOnlyList<LevelLine> Trace(
+        IEnumerable<ValueTriangle> triangles, double step, double tolerance, double? join = null)
     {
         SortedDictionary<long, LineChainer> chains = [];
         foreach (ValueTriangle t in triangles)
@@ -41,8 +46,24 @@ internal static class LevelLines
 
         return
         [
-            .. chains.SelectMany(c => c.Value.Lines().Select(points => new LevelLine(c.Key * step, Simplify(points, tolerance)))),
+            .. chains.SelectMany(c => Joined(c.Value, join).Select(points => new LevelLine(c.Key * step, Simplify(points, tolerance)))),
         ];
+    }
+
+    private static IEnumerable<IReadOnlyList<Point>> Joined(LineChainer pieces, double? join)
+    {
+        if (join is not double distance)
+        {
+            return pieces.Lines();
+        }
+
+        LineChainer joined = new(distance);
+        foreach (IReadOnlyList<Point> piece in pieces.Lines())
+        {
+            joined.Add(piece);
+        }
+
+        return joined.Lines();
     }
 
     private static void Cut(in ValueTriangle t, double level, LineChainer chain)
@@ -61,7 +82,7 @@ internal static class LevelLines
 
         if (count == 2)
         {
-            chain.Add(ends[0], ends[1]);
+            chain.Add([ends[0], ends[1]]);
         }
     }
 

@@ -13,8 +13,8 @@ public static class SaturationFigure
     /// <summary>Draws |B| in the iron parts; air and coils stay white.</summary>
     public static Figure Draw(FieldScene scene)
     {
-        Box seen = scene.Section.Bounds.Inflated(0.03 * scene.Section.Bounds.Diagonal);
-        double height = Math.Clamp(PlotWidth * seen.Height / seen.Width, 300, 700);
+        Box seen = SectionDrawing.WholeView(scene.Section, scene.Aperture);
+        double height = Math.Clamp(PlotWidth * seen.Height / seen.Width, 220, 700);
         Box view = SectionDrawing.View(seen, PlotWidth / height);
         double point = view.Width / PlotWidth;
         FieldTriangle[] iron = [.. scene.Triangles.Where(t => IsIron(scene, t.Region))];
@@ -23,7 +23,7 @@ public static class SaturationFigure
         double top = Math.Max(Math.Min(peak.Field, 1.03 * raster.Quantile(0.999)), 1e-6); // a sharp corner must not set the scale
         double step = FigureStyle.NiceStep(top / 4);
         IReadOnlyList<LevelLine> lines = LevelLines.Trace(
-            iron.Select(t => new ValueTriangle(t.P0, t.P1, t.P2, t.S0.Magnitude, t.S1.Magnitude, t.S2.Magnitude)), step, 0.15 * point);
+            iron.Select(t => new ValueTriangle(t.P0, t.P1, t.P2, t.S0.Magnitude, t.S1.Magnitude, t.S2.Magnitude)), step, 0.15 * point, join: point);
 
         Figure figure = FigureFrame.Begin(
             new FrameText
@@ -39,7 +39,7 @@ public static class SaturationFigure
         FieldFigure.AddImage(model, raster.Image(0, top, FigureStyle.Unsigned), view);
         model.Annotations.Add(new Strokes([.. lines.Select(l => l.Points)], FigureStyle.Contour, rim: 0));
         model.Annotations.Add(new Strokes(SectionDrawing.Outlines(scene.Section, 0.1 * point), FigureStyle.Outline, rim: 0));
-        model.Annotations.Add(new Strokes([SectionDrawing.Flatten(scene.Aperture.Outline, 0.1 * point)], FigureStyle.Aperture, rim: 0));
+        FieldFigure.AddAperture(model, scene, point);
         model.Annotations.Add(LevelLabels.Of(lines, v => FigureStyle.Number(v, 3) + " T"));
         if (iron.Length > 0)
         {

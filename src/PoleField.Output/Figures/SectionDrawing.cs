@@ -67,6 +67,13 @@ internal static class SectionDrawing
         return new Box(seen.Centre - half, seen.Centre + half);
     }
 
+    /// <summary>The section and the aperture with a little room, inside the circle that is meshed around them.</summary>
+    public static Box WholeView(CrossSection section, Aperture aperture)
+    {
+        Box all = section.Bounds.Including(aperture.Outline.Bounds);
+        return all.Inflated(0.045 * all.Diagonal);
+    }
+
     /// <summary>Part around the aperture worth a closer look: the faces on both sides of the beam.</summary>
     public static Box BeamView(CrossSection section, Aperture aperture)
     {
