@@ -1,3 +1,5 @@
+using PoleField.Geometry;
+
 namespace PoleField.Beam;
 
 /// <summary>The beam's numbers of one extracted field; comparing two of them gives the errors of all numbers at once.</summary>
@@ -19,20 +21,22 @@ internal sealed record BeamMeasures
 
     public required BeamValues[] ProfileZ { get; init; }
 
-    public static BeamMeasures Of(BeamField field, ApertureSamples samples)
+    public static BeamMeasures Of(BeamField field, ApertureSamples samples) => Of(field.At, samples);
+
+    public static BeamMeasures Of(Func<Point, BeamValues> field, ApertureSamples samples)
     {
-        BeamValues[] inside = [.. samples.Inside.Select(field.At)];
-        BeamValues[] edge = [.. samples.Edge.Select(field.At)];
+        BeamValues[] inside = [.. samples.Inside.Select(field)];
+        BeamValues[] edge = [.. samples.Edge.Select(field)];
         return new BeamMeasures
         {
-            Centre = field.At(samples.Centre),
+            Centre = field(samples.Centre),
             Field = Statistics(inside, edge, samples.Weights, v => v.Field),
             Gradient = Statistics(inside, edge, samples.Weights, v => v.Gradient),
             FieldTimesGradient = Statistics(inside, edge, samples.Weights, v => v.Field * v.Gradient),
             Inside = inside,
             Edge = edge,
-            ProfileY = [.. samples.ProfileY.Select(field.At)],
-            ProfileZ = [.. samples.ProfileZ.Select(field.At)],
+            ProfileY = [.. samples.ProfileY.Select(field)],
+            ProfileZ = [.. samples.ProfileZ.Select(field)],
         };
     }
 
