@@ -49,6 +49,14 @@ internal sealed class ApertureSamples
             Profile(shape.Along(centre.Y), centre.Z, z => new Point(centre.Y, z)));
     }
 
+    /// <summary>The same pattern at a shifted beam.</summary>
+    public ApertureSamples ShiftedBy(Point by)
+    {
+        Point[] Shifted(Point[] places) => [.. places.Select(p => p + by)];
+        return new ApertureSamples(
+            Centre + by, Shifted(Inside), Weights, Shifted(Edge), Shifted(ProfileY), Shifted(ProfileZ));
+    }
+
     // Strips between the heights of the outline's corners; in each the width is a smooth function of z.
     private static (Point[] Inside, double[] Weights) Strips(Aperture aperture, ApertureShape shape)
     {

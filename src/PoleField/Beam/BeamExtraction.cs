@@ -89,7 +89,10 @@ internal sealed class BeamExtraction
     }
 
     /// <summary>Derivative by the nodes' potentials of Re(first·F′ + second·F″) at a place.</summary>
-    public double[] Functional(Point at, Complex first, Complex second)
+    public double[] Functional(Point at, Complex first, Complex second) => Functional([new BeamTerm(at, first, second)]);
+
+    /// <summary>Derivative by the nodes' potentials of a sum of Re(first·F′ + second·F″) over places.</summary>
+    public double[] Functional(IReadOnlyList<BeamTerm> terms)
     {
         var derivative = new double[_space.NodeCount];
         for (int k = 0; k < _elements.Length; k++)
@@ -98,19 +101,26 @@ internal sealed class BeamExtraction
             for (int q = 0; q < _table.Count; q++)
             {
                 int p = (k * _table.Count) + q;
-                Complex inverse = 1.0 / new Complex(_y[p] - at.Y, _z[p] - at.Z);
-                var chi = new Complex(_chiY[p], _chiZ[p]);
-                Complex onGradient = -((first * inverse) + (second * inverse * inverse)) / Math.Tau;
-                Complex onValue = -((first * inverse * inverse) + (2 * second * inverse * inverse * inverse)) * chi / Math.Tau;
+                Complex onGradient = 0;
+                Complex onValue = 0;
+                foreach (BeamTerm term in terms)
+                {
+                    Complex inverse = 1.0 / new Complex(_y[p] - term.At.Y, _z[p] - term.At.Z);
+                    Complex square = inverse * inverse;
+                    onGradient -= (term.First * inverse) + (term.Second * square);
+                    onValue -= (term.First * square) + (2 * term.Second * square * inverse);
+                }
+
+                double onPotential = (onValue * new Complex(_chiY[p], _chiZ[p])).Real / Math.Tau;
                 Jacobian j = _space.JacobianAt(_elements[k], _table.XiRow(q), _table.EtaRow(q));
                 (double pullXi, double pullEta) = j.Pull(new Point(_chiY[p], _chiZ[p]));
-                double scale = onGradient.Real / j.Determinant;
+                double scale = onGradient.Real / (Math.Tau * j.Determinant);
                 ReadOnlySpan<double> values = _table.ValueRow(q);
                 ReadOnlySpan<double> xi = _table.XiRow(q);
                 ReadOnlySpan<double> eta = _table.EtaRow(q);
                 for (int i = 0; i < nodes.Length; i++)
                 {
-                    derivative[nodes[i]] += (scale * ((pullXi * xi[i]) + (pullEta * eta[i]))) + (onValue.Real * values[i]);
+                    derivative[nodes[i]] += (scale * ((pullXi * xi[i]) + (pullEta * eta[i]))) + (onPotential * values[i]);
                 }
             }
         }
@@ -176,3 +186,6 @@ internal sealed class BeamExtraction
         }
     }
 }
+
+/// <summary>Re(First·F′ + Second·F″) at a place.</summary>
+internal readonly record struct BeamTerm(Point At, Complex First, Complex Second);

@@ -28,22 +28,29 @@ internal static class BeamGoals
     }
 
     /// <summary>Derivative of |B| at a place, times a factor.</summary>
-    public static double[] FieldDerivative(BeamExtraction extraction, BeamValues v, double factor)
-    {
-        // dB = (By dBy + Bz dBz)/B with By = −Im F′ = Re(i F′), Bz = −Re F′.
-        var first = new Complex(-v.Bz, v.By) * (factor / v.Field);
-        return extraction.Functional(v.At, first, 0);
-    }
+    public static double[] FieldDerivative(BeamExtraction extraction, BeamValues v, double factor) =>
+        extraction.Functional([FieldTerm(v, factor)]);
 
     /// <summary>Derivative of d|B|/dz at a place, times a factor.</summary>
-    public static double[] GradientDerivative(BeamExtraction extraction, BeamValues v, double factor)
+    public static double[] GradientDerivative(BeamExtraction extraction, BeamValues v, double factor) =>
+        extraction.Functional([GradientTerm(v, factor)]);
+
+    /// <summary>|B| at a place to first order, times a factor.</summary>
+    public static BeamTerm FieldTerm(BeamValues v, double factor)
+    {
+        // dB = (By dBy + Bz dBz)/B with By = −Im F′ = Re(i F′), Bz = −Re F′.
+        return new BeamTerm(v.At, new Complex(-v.Bz, v.By) * (factor / v.Field), 0);
+    }
+
+    /// <summary>d|B|/dz at a place to first order, times a factor.</summary>
+    public static BeamTerm GradientTerm(BeamValues v, double factor)
     {
         // G = (By ∂zBy + Bz ∂zBz)/B with ∂zBy = −Re F″, ∂zBz = Im F″ = Re(−i F″).
         double byField = v.DByDz - (v.Gradient * v.By / v.Field);
         double bzField = v.DBzDz - (v.Gradient * v.Bz / v.Field);
         var first = new Complex(-bzField, byField) * (factor / v.Field);
         var second = new Complex(-v.By, -v.Bz) * (factor / v.Field);
-        return extraction.Functional(v.At, first, second);
+        return new BeamTerm(v.At, first, second);
     }
 
     // In a field without gradient along z the transverse one sets the scale.
