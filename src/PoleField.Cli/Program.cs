@@ -1,1 +1,4 @@
-return 0;
+using PoleField.Cli;
+using PoleField.Cli.Commands;
+
+return await CommandLine.RunAsync(args, Terminal.OfProcess(), Pipeline.OfLibrary());

@@ -20,6 +20,9 @@ public sealed record SectionRequest
     /// <summary>The sketch shows y ≥ 0 only and is completed by its mirror image.</summary>
     public bool MirrorLeftRight { get; init; }
 
+    /// <summary>Part layers that carry current: in a half model they must keep clear of y = 0.</summary>
+    public IReadOnlyList<string> CurrentLayers { get; init; } = [];
+
     /// <summary>End points closer than this are one point, metres.</summary>
     public double Join { get; init; } = 2e-6;
 }

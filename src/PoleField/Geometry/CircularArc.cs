@@ -3,6 +3,9 @@ namespace PoleField.Geometry;
 /// <summary>A piece of a circle, or a whole one, travelled either way at constant speed.</summary>
 public sealed record CircularArc : Curve
 {
+    // Below this sweep, radians, the chord says more about the arc than the centre does.
+    private const double ShallowSweep = 0.5;
+
     private readonly Point _start;
     private readonly Point _end;
 
@@ -99,8 +102,27 @@ public sealed record CircularArc : Curve
     public override double AreaTerm(Point origin)
     {
         // Chord triangle about the origin plus the circular segment; the segment is exact for any sweep.
-        double segment = 0.5 * Radius * Radius * (Sweep - Math.Sin(Sweep));
+        double segment = 0.5 * Radius * Radius * SweepMinusSine(Sweep);
         return (0.5 * (_start - origin).Cross(_end - origin)) + segment;
+    }
+
+    /// <summary>x − sin x without cancellation: shallow arcs keep the digits of their segment.</summary>
+    internal static double SweepMinusSine(double x)
+    {
+        if (Math.Abs(x) > 1.0)
+        {
+            return x - Math.Sin(x);
+        }
+
+        double term = x * x * x / 6;
+        double sum = 0;
+        for (int k = 4; Math.Abs(term) > 1e-18 * Math.Abs(sum); k += 2)
+        {
+            sum += term;
+            term *= -x * x / (k * (k + 1));
+        }
+
+        return sum;
     }
 
     /// <inheritdoc/>
@@ -111,7 +133,21 @@ public sealed record CircularArc : Curve
             return _start;
         }
 
-        return t >= 1.0 ? _end : Centre + Point.Polar(Radius, StartAngle + (t * Sweep));
+        if (t >= 1.0)
+        {
+            return _end;
+        }
+
+        if (Math.Abs(Sweep) > ShallowSweep)
+        {
+            return Centre + Point.Polar(Radius, StartAngle + (t * Sweep));
+        }
+
+        // Inscribed angles from the start: the far centre of a shallow arc would cost digits.
+        double half = 0.5 * Sweep;
+        Point chord = (Math.Sin(t * half) / Math.Sin(half)) * (_end - _start);
+        (double s, double c) = Math.SinCos((t - 1) * half);
+        return _start + (c * chord) + (s * chord.Perpendicular);
     }
 
     /// <inheritdoc/>

@@ -36,22 +36,30 @@ public sealed class Outline
             double y = 0, z = 0;
             foreach (Curve c in Curves)
             {
-                const int pieces = 16;
-                for (int i = 0; i < pieces; i++)
+                // Pieces never straddle a knot, where a spline's higher derivatives jump.
+                const int pieces = 4;
+                double[] breaks = c is Nurbs spline ? spline.Breaks() : [0.0, 0.25, 0.5, 0.75, 1.0];
+                for (int i = 0; i < pieces * (breaks.Length - 1); i++)
                 {
+                    double from = breaks[i / pieces];
+                    double width = (breaks[(i / pieces) + 1] - from) / pieces;
                     foreach ((double node, double weight) in Gauss5)
                     {
-                        double t = (i + (0.5 * (1 + node))) / pieces;
+                        double t = from + (width * ((i % pieces) + (0.5 * (1 + node))));
                         Point p = c.At(t) - origin;
                         Point d = c.Derivative(t);
-                        double w = 0.5 * weight / pieces;
+                        double w = 0.5 * weight * width;
                         y += w * 0.5 * p.Y * p.Y * d.Z;
                         z -= w * 0.5 * p.Z * p.Z * d.Y;
                     }
                 }
             }
 
-            return origin + new Point(y / Area, z / Area);
+            // Rounding beside a middle of zero would show as a place of its own.
+            Point middle = origin + new Point(y / Area, z / Area);
+            double nothing = 1e-12 * Bounds.Diagonal;
+            return new Point(
+                Math.Abs(middle.Y) < nothing ? 0.0 : middle.Y, Math.Abs(middle.Z) < nothing ? 0.0 : middle.Z);
         }
     }
 

@@ -46,4 +46,7 @@ public readonly record struct Point(double Y, double Z)
 
     /// <summary>Scaled displacement.</summary>
     public static Point operator *(double factor, Point a) => new(factor * a.Y, factor * a.Z);
+
+    /// <summary>The coordinates in parentheses, with all their digits.</summary>
+    public override string ToString() => FormattableString.Invariant($"({Y}, {Z})");
 }

@@ -35,4 +35,18 @@ public sealed class LinearLaw : MagneticLaw
     /// <inheritdoc/>
     public override MagneticState At(double b) =>
         new(InitialReluctivity * b, InitialReluctivity, 0.5 * InitialReluctivity * b * b);
+
+    /// <inheritdoc/>
+    public override double FluxDensityAt(double h) => h / InitialReluctivity;
+
+    /// <inheritdoc/>
+    public override MagneticLaw WithPolarisationScaled(double factor)
+    {
+        if (!(factor > 0.0) || !double.IsFinite(factor))
+        {
+            throw new ArgumentOutOfRangeException(nameof(factor), factor, "The factor on the polarisation must be a positive finite number.");
+        }
+
+        return new LinearLaw(1 + (factor * (RelativePermeability - 1)));
+    }
 }

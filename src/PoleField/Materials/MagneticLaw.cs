@@ -23,4 +23,53 @@ public abstract class MagneticLaw
 
     /// <summary>Values at flux density <paramref name="b"/> ≥ 0, T.</summary>
     public abstract MagneticState At(double b);
+
+    /// <summary>The inverse: B, T, at field strength <paramref name="h"/> ≥ 0, A/m.</summary>
+    public virtual double FluxDensityAt(double h)
+    {
+        double lowest = PhysicalConstants.Mu0 * h;
+        return Inverse(h, lowest, lowest + SaturationPolarisation);
+    }
+
+    /// <summary>
+    /// The law with the polarisation J multiplied by <paramref name="factor"/> at every H: B = μ0 H + factor · J(H). It is
+    /// what a batch of other saturation does to first order, and makes the derivative by saturation well defined.
+    /// </summary>
+    /// <exception cref="ArgumentOutOfRangeException">The factor is not a positive finite number.</exception>
+    public virtual MagneticLaw WithPolarisationScaled(double factor) => new ScaledPolarisationLaw(this, factor);
+
+    // H(B) is increasing, so a bracket always shrinks: Newton where its step stays inside, halving where not.
+    private protected double Inverse(double h, double low, double high)
+    {
+        const int mostSteps = 200;
+        double b = 0.5 * (low + high);
+        for (int step = 0; step < mostSteps; step++)
+        {
+            MagneticState state = At(b);
+            double excess = state.FieldStrength - h;
+            if (excess > 0)
+            {
+                high = b;
+            }
+            else
+            {
+                low = b;
+            }
+
+            double next = b - (excess / state.Slope);
+            if (!(next > low && next < high))
+            {
+                next = 0.5 * (low + high);
+            }
+
+            if (Math.Abs(next - b) <= 1e-15 * high)
+            {
+                return next;
+            }
+
+            b = next;
+        }
+
+        throw new InvalidOperationException(FormattableString.Invariant($"No flux density found for H = {h} A/m; the law does not rise."));
+    }
 }

@@ -11,6 +11,20 @@ public sealed record Material(string Name, MagneticLaw Law, string Description, 
     /// <summary>Air, and everything non-magnetic.</summary>
     public static Material Air { get; } = new("air", LinearLaw.Vacuum, "Air or vacuum", "definition", "exact");
 
+    /// <summary>What the numbers cannot promise: range, spread between batches, recalled values; null when there is nothing to say.</summary>
+    public string? Caution { get; init; }
+
+    /// <summary>Notes and warnings from laying the curve through the table.</summary>
+    public IReadOnlyList<Finding> Findings => Law is BhCurve curve ? curve.Findings : [];
+
     /// <summary>True for materials that carry flux: permeability above that of air.</summary>
     public bool IsMagnetic => Law is not LinearLaw { RelativePermeability: 1.0 };
+
+    /// <summary>The material with its polarisation J multiplied by <paramref name="factor"/> at every H (see <see cref="MagneticLaw.WithPolarisationScaled"/>).</summary>
+    /// <exception cref="ArgumentOutOfRangeException">The factor is not a positive finite number.</exception>
+    public Material WithSaturationScaled(double factor) => this with
+    {
+        Law = Law.WithPolarisationScaled(factor),
+        State = FormattableString.Invariant($"{State}, polarisation times {factor}"),
+    };
 }

@@ -6,7 +6,10 @@ namespace PoleField.Meshing;
 /// <summary>A mesh edge that lies on a curve: the vertices A and B sit at parameters TA and TB of it.</summary>
 /// <param name="A">Vertex index.</param>
 /// <param name="B">Vertex index.</param>
-/// <param name="Curve">The curve: that of a section edge, or the circle of the open surroundings.</param>
+/// <param name="Curve">
+/// The curve: that of a section edge, or the circle of the open surroundings. Where two curves touch without an angle no
+/// element can follow both; the edge there is the chord, a line from A to B with parameters 0 and 1.
+/// </param>
 /// <param name="TA">Parameter of A in [0, 1].</param>
 /// <param name="TB">Parameter of B in [0, 1] (for a closed curve's last piece: 1, not 0).</param>
 /// <param name="SectionEdge">Index of the section edge, or −1 for the circle of the open surroundings.</param>

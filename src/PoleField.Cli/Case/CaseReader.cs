@@ -1,0 +1,227 @@
+using PoleField.Drawing;
+
+namespace PoleField.Cli.Case;
+
+/// <summary>What a case file may refer to.</summary>
+/// <param name="File">Name of the case file for messages.</param>
+/// <param name="MaterialNames">Built-in materials, "air" included.</param>
+/// <param name="FileExists">Tells whether a file named in the case exists.</param>
+internal sealed record CaseSurroundings(string File, IReadOnlyCollection<string> MaterialNames, Func<string, bool> FileExists)
+{
+    /// <summary>Those of the materials that a coil may be made of.</summary>
+    public IReadOnlyCollection<string> NonMagnetic { get; init; } = ["air"];
+}
+
+/// <summary>A case file read: the case, or everything that is wrong with it.</summary>
+internal sealed record CaseReading(CaseFile? Case, IReadOnlyList<Finding> Findings);
+
+/// <summary>Reads a case file whole and reports all its faults at once, in the order of the file.</summary>
+internal static class CaseReader
+{
+    private const int Format = 1;
+
+    // Two micrometres: below any pole's form error, above the rounding of drawing programs.
+    private const double DefaultJoin = 2e-6;
+
+    public static CaseReading Read(string text, CaseSurroundings around)
+    {
+        var faults = new Faults(around.File);
+        TomlTable root = TomlDocument.Parse(text, around.File, faults);
+        CaseFile file = Bind(new TableReader(root, string.Empty, faults), around);
+        faults.DropConsequencesOfBrokenSyntax();
+        return faults.Any ? new CaseReading(null, faults.Sorted) : new CaseReading(file, []);
+    }
+
+    private static CaseFile Bind(TableReader root, CaseSurroundings around)
+    {
+        CheckFormat(root);
+        string title = root.Text("title") ?? Path.GetFileNameWithoutExtension(around.File);
+        SketchSection sketch = ReadSketch(root, around);
+        IReadOnlyList<PartSection> parts = PartReader.ReadAll(root, around);
+        var layers = parts.Select(p => p.Layer).ToList();
+        var file = new CaseFile
+        {
+            Title = title,
+            Sketch = sketch,
+            Parts = parts,
+            Surroundings = ReadSurroundings(root, layers),
+            MirrorLeftRight = ReadMirror(root),
+            Beam = ReadBeam(root, layers),
+            Length = ReadSingle(root, "magnet", t => t.RequiredQuantity("length", Dimension.Length, Allowed.Positive)),
+            Accuracy = ReadSingle(root, "accuracy", t => t.RequiredQuantity("relative", Dimension.Ratio, AccuracyRange)) ?? 1e-4,
+            Require = LimitReader.ReadRequire(root),
+            TwoWire = AnalysisReader.ReadTwoWire(root),
+            Ramp = AnalysisReader.ReadRamp(root),
+            Map = AnalysisReader.ReadMap(root),
+            Tune = TuneReader.Read(root, layers),
+            Tolerance = AnalysisReader.ReadTolerance(root),
+            Flight = FlightReader.Read(root),
+        };
+        root.Close();
+        return file;
+    }
+
+    /// <summary>Accuracies the solver can be asked for.</summary>
+    public static Allowed AccuracyRange { get; } = new(1e-7, 1e-2);
+
+    private static void CheckFormat(TableReader root)
+    {
+        switch (root.Find("format"))
+        {
+            case TomlNumber { IsInteger: true, Value: Format }:
+                return;
+            case null:
+                root.Missing("format", "1");
+                return;
+            case var other:
+                root.Faults.Add(
+                    other.At, "unknown-format", $"format is {other.Kind}; this program reads format 1.", "Write format = 1.");
+                return;
+        }
+    }
+
+    private static SketchSection ReadSketch(TableReader root, CaseSurroundings around)
+    {
+        if (root.Table("sketch") is not { } table)
+        {
+            MissingTable(root, "sketch", "file = \"poles.dxf\"");
+            return new SketchSection("?", null, DefaultJoin, root.At);
+        }
+
+        string file = table.RequiredText("file", "poles.dxf");
+        if (file != "?" && !around.FileExists(file))
+        {
+            root.Faults.Add(
+                table.SpotOf("file"), "missing-file", $"The sketch \"{file}\" is not there.", "Paths count from the folder of the case file.");
+        }
+
+        LengthUnit? unit = ReadUnit(table);
+        double join = table.Quantity("join", Dimension.Length, Allowed.Positive) ?? DefaultJoin;
+        table.Close();
+        return new SketchSection(file, unit, join, table.SpotOf("file"));
+    }
+
+    private static LengthUnit? ReadUnit(TableReader table)
+    {
+        string? name = table.Text("unit");
+        if (name is null or "?")
+        {
+            return null;
+        }
+
+        if (Dimension.Length.Find(name) is not { } unit)
+        {
+            table.Faults.Add(
+                table.SpotOf("unit"), "unknown-unit", $"{table.Where("unit")} is \"{name}\".", $"Units of length are {Dimension.Length.Allowed}.");
+            return null;
+        }
+
+        return new LengthUnit(unit.Name, unit.ToSi(1));
+    }
+
+    private static SurroundingsSection ReadSurroundings(TableReader root, List<string> layers)
+    {
+        if (root.Table("surroundings") is not { } table)
+        {
+            return new SurroundingsSection(null, default);
+        }
+
+        bool open = table.Flag("open") ?? !table.Has("rim");
+        string? rim = table.Text("rim");
+        if (open && rim is not null)
+        {
+            root.Faults.Add(
+                table.SpotOf("rim"), "contradiction", "[surroundings] is open and has a rim.", "Write open = false to bound the model by the rim, or leave rim out.");
+        }
+        else if (!open && rim is null)
+        {
+            root.Faults.Add(
+                table.SpotOf("open"), "missing-key", "[surroundings] is closed and has no rim.", "Add rim = \"LAYER\" with a closed outline, or write open = true.");
+        }
+        else if (rim is not null && layers.Contains(rim, StringComparer.OrdinalIgnoreCase))
+        {
+            root.Faults.Add(
+                table.SpotOf("rim"), "contradiction", $"The layer \"{rim}\" is a part and the rim.", "Draw the rim on a layer of its own.");
+        }
+
+        Geometry.Point applied = table.Pair("applied_field", Dimension.Field) ?? default;
+        table.Close();
+        return new SurroundingsSection(rim, applied);
+    }
+
+    private static bool ReadMirror(TableReader root)
+    {
+        if (root.Table("symmetry") is not { } table)
+        {
+            return false;
+        }
+
+        string? mirror = table.Choice("mirror", "none", "left-right");
+        table.Close();
+        return mirror == "left-right";
+    }
+
+    private static BeamSection ReadBeam(TableReader root, List<string> layers)
+    {
+        if (root.Table("beam") is not { } table)
+        {
+            MissingTable(root, "beam", "layer = \"BEAM\", or centre, width and height");
+            return new BeamOnLayer("?");
+        }
+
+        BeamSection beam;
+        string? layer = table.Text("layer");
+        bool rectangle = table.Has("centre") | table.Has("width") | table.Has("height");
+        if (layer is not null && rectangle)
+        {
+            root.Faults.Add(
+                table.SpotOf("layer"), "contradiction", "[beam] has a layer and a rectangle.", "Keep layer, or keep centre, width and height.");
+        }
+
+        if (layer is not null && layers.Contains(layer, StringComparer.OrdinalIgnoreCase))
+        {
+            root.Faults.Add(
+                table.SpotOf("layer"), "contradiction", $"The layer \"{layer}\" is a part and the beam.", "Draw the beam's outline on a layer of its own.");
+        }
+
+        if (layer is not null)
+        {
+            beam = new BeamOnLayer(layer);
+        }
+        else
+        {
+            if (!table.Has("centre"))
+            {
+                table.Missing("centre", "[\"0 mm\", \"3.6 mm\"]");
+            }
+
+            beam = new BeamRectangle(
+                table.Pair("centre", Dimension.Length) ?? default,
+                table.RequiredQuantity("width", Dimension.Length, Allowed.Positive),
+                table.RequiredQuantity("height", Dimension.Length, Allowed.Positive));
+        }
+
+        table.Close();
+        return beam;
+    }
+
+    private static double? ReadSingle(TableReader root, string name, Func<TableReader, double> read)
+    {
+        if (root.Table(name) is not { } table)
+        {
+            return null;
+        }
+
+        double value = read(table);
+        table.Close();
+        return value;
+    }
+
+    internal static void MissingTable(TableReader root, string name, string content)
+    {
+        if (!root.Has(name))
+        {
+            root.Faults.Add(root.At, "missing-key", $"The case has no [{name}].", $"Add [{name}] with {content}.");
+        }
+    }
+}

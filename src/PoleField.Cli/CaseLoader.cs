@@ -1,0 +1,168 @@
+using System.Diagnostics;
+using System.Security.Cryptography;
+using System.Text;
+using PoleField.Cli.Case;
+using PoleField.Drawing;
+using PoleField.Geometry;
+using PoleField.Magnetostatics;
+using PoleField.Materials;
+
+namespace PoleField.Cli;
+
+/// <summary>Loads a case with its curves and sketch, and goes as far as it can so that all faults come out at once.</summary>
+internal sealed class CaseLoader(Pipeline pipeline)
+{
+    private static readonly UTF8Encoding StrictUtf8 = new(false, throwOnInvalidBytes: true);
+
+    /// <summary>Loads the case at <paramref name="path"/>; faults are in the findings, not thrown.</summary>
+    public LoadedCase Load(string path)
+    {
+        var clock = Stopwatch.StartNew();
+        LoadedCase loaded = LoadAll(path);
+        return loaded with { Seconds = clock.Elapsed.TotalSeconds };
+    }
+
+    private LoadedCase LoadAll(string path)
+    {
+        var findings = new List<Finding>();
+        if (Catch(findings, () => ReadFile(path, "case file")) is not { } bytes || Catch(findings, () => Decode(bytes, path)) is not { } text)
+        {
+            return new LoadedCase { Path = path, Findings = findings };
+        }
+
+        string folder = Path.GetDirectoryName(Path.GetFullPath(path))!;
+        IReadOnlyList<Material> builtIn = pipeline.Materials();
+        var around = new CaseSurroundings(
+            Path.GetFileName(path), [.. builtIn.Select(m => m.Name)], file => File.Exists(Path.Combine(folder, file)))
+        {
+            NonMagnetic = [.. builtIn.Where(m => !m.IsMagnetic).Select(m => m.Name)],
+        };
+        CaseReading reading = CaseReader.Read(text, around);
+        findings.AddRange(reading.Findings);
+        var loaded = new LoadedCase { Path = path, Findings = findings, CaseSha256 = Sha256(bytes) };
+        if (reading.Case is not { } file)
+        {
+            return loaded;
+        }
+
+        var roles = file.Parts.Select(p => Catch(findings, () => RoleOf(p, folder, builtIn))).ToList();
+        loaded = loaded with { Case = file, Roles = [.. roles.OfType<PartRole>()] };
+        return WithSketch(loaded, file, Path.Combine(folder, file.Sketch.File), findings);
+    }
+
+    private LoadedCase WithSketch(LoadedCase loaded, CaseFile file, string path, List<Finding> findings)
+    {
+        if (Catch(findings, () => ReadFile(path, "sketch")) is not { } bytes)
+        {
+            return loaded;
+        }
+
+        loaded = loaded with { SketchSha256 = Sha256(bytes) };
+        if (Catch(findings, () => pipeline.ReadSketch(new MemoryStream(bytes), file.Sketch.File, file.Sketch.Unit)) is not { } sketch)
+        {
+            return loaded;
+        }
+
+        findings.AddRange(sketch.Findings);
+        SectionReading? reading = Catch(findings, () => pipeline.Cut(sketch, RequestOf(file)));
+        findings.AddRange(reading?.Findings ?? []);
+        return loaded with { Sketch = sketch, Reading = reading };
+    }
+
+    private static SectionRequest RequestOf(CaseFile file) => new()
+    {
+        PartLayers = [.. file.Parts.Select(p => p.Layer)],
+        MaterialKeys = [.. file.Parts.Select(p => p.AmpereTurns is { } a ? FormattableString.Invariant($"coil {p.Layer} {a:R}") : p.Substance.Key)],
+        BeamLayer = (file.Beam as BeamOnLayer)?.Layer,
+        RimLayer = file.Surroundings.RimLayer,
+        MirrorLeftRight = file.MirrorLeftRight,
+        Join = file.Sketch.Join,
+    };
+
+    private PartRole RoleOf(PartSection part, string folder, IReadOnlyList<Material> builtIn)
+    {
+        Point remanence = default;
+        Material material;
+        switch (part.Substance)
+        {
+            case NamedSubstance named:
+                material = builtIn.FirstOrDefault(m => m.Name == named.Name)
+                    ?? new Material(named.Name, LinearLaw.Vacuum, "Copper", "definition", "permeability taken as 1");
+                break;
+            case CurveFileSubstance curve:
+                string path = Path.Combine(folder, curve.File);
+                material = pipeline.ReadMaterial(new MemoryStream(ReadFile(path, "magnetisation curve")), curve.File);
+                break;
+            case LinearSubstance linear:
+                material = Linear("linear", linear.RelativePermeability, "constant permeability");
+                break;
+            case MagnetSubstance magnet:
+                material = Linear("permanent magnet", magnet.RecoilPermeability, "straight demagnetisation line");
+                remanence = Point.Polar(magnet.Remanence, magnet.Direction);
+                break;
+            default:
+                throw new InvalidOperationException($"Unknown substance {part.Substance}.");
+        }
+
+        return new PartRole(part.Layer, material) { AmpereTurns = part.AmpereTurns ?? 0, Fill = part.Fill, Remanence = remanence };
+    }
+
+    private static Material Linear(string name, double permeability, string description) =>
+        new(FormattableString.Invariant($"{name}, mu_r {permeability}"), new LinearLaw(permeability), description, "case file", "as stated");
+
+    /// <summary>A file's bytes.</summary>
+    /// <exception cref="InputException">It is not there or cannot be read.</exception>
+    public static byte[] ReadFile(string path, string role)
+    {
+        try
+        {
+            return File.ReadAllBytes(path);
+        }
+        catch (Exception e) when (e is IOException or UnauthorizedAccessException or NotSupportedException)
+        {
+            string why = e is FileNotFoundException or DirectoryNotFoundException
+                ? "is not there"
+                : Directory.Exists(path) ? "is a folder" : $"cannot be read ({e.Message.TrimEnd('.')})";
+            throw new InputException(
+            [
+                new Finding(Severity.Fault, "missing-file", $"The {role} {path} {why}.", "Check the name and the folder."),
+            ]);
+        }
+    }
+
+    private static string Decode(byte[] bytes, string path)
+    {
+        try
+        {
+            return StrictUtf8.GetString(bytes).TrimStart('\ufeff');
+        }
+        catch (DecoderFallbackException e)
+        {
+            int line = bytes.AsSpan(0, Math.Max(0, e.Index)).Count((byte)'\n') + 1;
+            throw new InputException(
+            [
+                new Finding(Severity.Fault, "not-utf8", "The case file is not UTF-8 text.", "Save it as UTF-8.")
+                {
+                    File = Path.GetFileName(path),
+                    Line = line,
+                },
+            ]);
+        }
+    }
+
+    private static string Sha256(byte[] bytes) => Convert.ToHexStringLower(SHA256.HashData(bytes));
+
+    private static T? Catch<T>(List<Finding> findings, Func<T> step)
+        where T : class
+    {
+        try
+        {
+            return step();
+        }
+        catch (InputException e)
+        {
+            findings.AddRange(e.Findings);
+            return null;
+        }
+    }
+}

@@ -1,0 +1,46 @@
+using System.CommandLine;
+using PoleField.Beam;
+using PoleField.Cli.Text;
+
+namespace PoleField.Cli.Commands;
+
+/// <summary>A verb that solves a case and works something out of it: its words, its files and its step.</summary>
+/// <param name="Name">Verb.</param>
+/// <param name="Description">What it does, one sentence.</param>
+internal sealed record AnalysisStep(string Name, string Description)
+{
+    /// <summary>Command lines for the help, each with what it does.</summary>
+    public required IReadOnlyList<(string Line, string Does)> Examples { get; init; }
+
+    /// <summary>Options of its own.</summary>
+    public IReadOnlyList<Option> Options { get; init; } = [];
+
+    /// <summary>Endings of the files it will write, after the case's name: ".ramp.json". Checked before the solve.</summary>
+    public required Func<ParseResult, IReadOnlyList<string>> Endings { get; init; }
+
+    /// <summary>True when the first file is JSON, which <c>--json</c> prints.</summary>
+    public bool FirstIsJson { get; init; } = true;
+
+    public required Func<AnalysisRequest, Analysis> Run { get; init; }
+}
+
+/// <summary>What an analysis starts from.</summary>
+internal sealed record AnalysisRequest
+{
+    public required SolvedCase Solved { get; init; }
+
+    /// <summary>For further solves.</summary>
+    public required SolveOptions Options { get; init; }
+
+    public required ParseResult Arguments { get; init; }
+
+    public required Action<SolveProgress> Progress { get; init; }
+
+    public required CancellationToken Cancellation { get; init; }
+}
+
+/// <summary>What came out of an analysis.</summary>
+/// <param name="Print">Prints it for people.</param>
+/// <param name="Files">Contents of the files, in the order of <see cref="AnalysisStep.Endings"/>.</param>
+/// <param name="Met">What it was asked to reach, it reached.</param>
+internal sealed record Analysis(Action<TextWriter, Ink> Print, IReadOnlyList<Action<Stream>> Files, bool Met = true);

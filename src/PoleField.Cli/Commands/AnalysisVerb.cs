@@ -1,0 +1,108 @@
+using System.CommandLine;
+using System.Text;
+using PoleField.Beam;
+using PoleField.Cli.Files;
+using PoleField.Cli.Text;
+
+namespace PoleField.Cli.Commands;
+
+/// <summary>Runs an <see cref="AnalysisStep"/> as a verb: load, check the targets, solve, work out, write, print.</summary>
+internal sealed class AnalysisVerb
+{
+    private readonly Tool _tool;
+    private readonly AnalysisStep _step;
+    private readonly CaseRun _run;
+
+    private AnalysisVerb(Tool tool, AnalysisStep step)
+    {
+        _tool = tool;
+        _step = step;
+        _run = new CaseRun(tool, $"File, or folder for the files. Default: CASE.{step.Name}.* in the current folder.");
+    }
+
+    public static VerbCommand Create(Tool tool, AnalysisStep step)
+    {
+        var verb = new AnalysisVerb(tool, step);
+        var command = new VerbCommand(step.Name, step.Description) { Examples = step.Examples };
+        verb._run.AddTo(command, step.FirstIsJson);
+        foreach (Option option in step.Options)
+        {
+            command.Options.Add(option);
+        }
+
+        tool.SetRun(command, verb.Run);
+        return command;
+    }
+
+    private int Run(ParseResult arguments, CancellationToken cancellation)
+    {
+        if (_run.Load(arguments) is not { } loaded)
+        {
+            return ExitStatus.WrongInput;
+        }
+
+        List<string> targets = Targets(arguments);
+        using OutputFiles files = OutputFiles.Plan(targets, _run.Force(arguments));
+        SolveOptions options = _run.OptionsOf(arguments, loaded);
+        SolvedCase solved;
+        Analysis analysis;
+        using (ProgressLine progress = _run.Progress(arguments, options))
+        {
+            solved = _run.Solve(loaded, options, progress, cancellation);
+            analysis = _step.Run(new AnalysisRequest
+            {
+                Solved = solved,
+                Options = options,
+                Arguments = arguments,
+                Progress = progress.Report,
+                Cancellation = cancellation,
+            });
+        }
+
+        for (int i = 0; i < targets.Count; i++)
+        {
+            cancellation.ThrowIfCancellationRequested();
+            files.Write(targets[i], analysis.Files[i]);
+        }
+
+        files.Commit(cancellation);
+        Print(arguments, analysis, targets);
+        _run.ReportNotMet(solved);
+        return solved.AllMet && analysis.Met ? ExitStatus.Done : ExitStatus.NotMet;
+    }
+
+    // As with solve: JSON on standard output needs no file beside it unless one is named.
+    private List<string> Targets(ParseResult arguments)
+    {
+        string? output = _run.Out(arguments);
+        if (output is null && _run.Json(arguments))
+        {
+            return [];
+        }
+
+        IReadOnlyList<string> endings = _step.Endings(arguments);
+        string? place = endings.Count > 1 && output is not null && !Path.EndsInDirectorySeparator(output)
+            ? output + Path.DirectorySeparatorChar
+            : output;
+        return [.. endings.Select(e => ResultName.For(_run.CasePath(arguments), e, place))];
+    }
+
+    private void Print(ParseResult arguments, Analysis analysis, List<string> targets)
+    {
+        if (_run.Json(arguments))
+        {
+            using var stream = new MemoryStream();
+            analysis.Files[0](stream);
+            _tool.Terminal.Out.Write(Encoding.UTF8.GetString(stream.ToArray()));
+        }
+        else if (!_run.Quiet(arguments))
+        {
+            analysis.Print(_tool.Terminal.Out, _tool.OutInk(arguments));
+        }
+
+        foreach (string target in targets.Where(_ => !_run.Quiet(arguments)))
+        {
+            _tool.Terminal.Error.WriteLine($"Result: {target}");
+        }
+    }
+}

@@ -1,0 +1,102 @@
+using System.CommandLine;
+using System.Diagnostics;
+using PoleField.Beam;
+using PoleField.Cli.Case;
+using PoleField.Cli.Text;
+using PoleField.Magnetostatics;
+
+namespace PoleField.Cli.Commands;
+
+/// <summary>The options and the course of every verb that solves a case.</summary>
+internal sealed class CaseRun(Tool tool, string outDescription)
+{
+    private readonly Option<double?> _accuracy = CommonOptions.Accuracy();
+    private readonly Option<int> _threads = CommonOptions.Threads();
+    private readonly Argument<string> _case = CommonOptions.CaseFile();
+    private readonly Option<string?> _out = CommonOptions.Out(outDescription);
+    private readonly Option<bool> _json = CommonOptions.Json();
+    private readonly Option<bool> _force = CommonOptions.Force();
+
+    /// <summary>Adds case and options to a command.</summary>
+    public void AddTo(Command command, bool withJson)
+    {
+        command.Arguments.Add(_case);
+        command.Options.Add(_out);
+        if (withJson)
+        {
+            command.Options.Add(_json);
+        }
+
+        command.Options.Add(_accuracy);
+        command.Options.Add(_threads);
+        command.Options.Add(_force);
+    }
+
+    public string CasePath(ParseResult arguments) => arguments.GetRequiredValue(_case);
+
+    public string? Out(ParseResult arguments) => arguments.GetValue(_out);
+
+    public bool Json(ParseResult arguments) => arguments.GetResult(_json) is not null && arguments.GetValue(_json);
+
+    public bool Force(ParseResult arguments) => arguments.GetValue(_force);
+
+    public bool Quiet(ParseResult arguments) => arguments.GetValue(tool.Quiet);
+
+    /// <summary>Loads the case; null after its faults have been printed.</summary>
+    public LoadedCase? Load(ParseResult arguments)
+    {
+        LoadedCase loaded = new CaseLoader(tool.Pipeline).Load(CasePath(arguments));
+        return tool.ReportFaults(arguments, loaded) ? null : loaded;
+    }
+
+    /// <summary>How to solve: the command line goes before the case.</summary>
+    public SolveOptions OptionsOf(ParseResult arguments, LoadedCase loaded) => new()
+    {
+        Accuracy = arguments.GetValue(_accuracy) ?? loaded.Case!.Accuracy,
+        Threads = arguments.GetValue(_threads),
+    };
+
+    /// <summary>The progress line of a run, silent with <c>--quiet</c> and <c>--json</c>.</summary>
+    public ProgressLine Progress(ParseResult arguments, SolveOptions options) =>
+        new(tool.Terminal, !Quiet(arguments) && !Json(arguments), options.Accuracy, TimeProvider.System);
+
+    /// <summary>Solves a sound case.</summary>
+    public SolvedCase Solve(LoadedCase loaded, SolveOptions options, ProgressLine progress, CancellationToken cancellation)
+    {
+        var clock = Stopwatch.StartNew();
+        (CaseFile file, Magnet magnet, Aperture aperture) = loaded.Ready();
+        SolvedMagnet solved = tool.Pipeline.Solve(magnet, aperture, options, progress.Report, cancellation);
+        cancellation.ThrowIfCancellationRequested();
+
+        // A uniform background never falls off.
+        double? reach = magnet.AppliedField == default ? StrayField.Reach(tool.Pipeline.FieldOf(solved), magnet.Section.Bounds) : null;
+        using var process = Process.GetCurrentProcess();
+        return new SolvedCase
+        {
+            Case = loaded,
+            Solved = solved,
+            Verdicts = [.. file.Require.Select(r => r.Judge(solved.Report))],
+            Cautions = Cautions.Of(file, solved.Report, reach),
+            Warnings = [.. loaded.Findings.Concat(solved.Report.Findings).Where(f => f.Severity == Severity.Warning)],
+            ReadSeconds = loaded.Seconds,
+            TotalSeconds = loaded.Seconds + clock.Elapsed.TotalSeconds,
+            PeakMemoryMegabytes = process.PeakWorkingSet64 / 1e6,
+        };
+    }
+
+    /// <summary>Says on the error stream what was asked and not met.</summary>
+    public void ReportNotMet(SolvedCase result)
+    {
+        foreach (Verdict verdict in result.Verdicts.Where(v => !v.Met))
+        {
+            tool.Terminal.Error.WriteLine($"Not met: {verdict.Limit.Name}");
+        }
+
+        SolveRecord record = result.Solved.Record;
+        if (!record.AccuracyMet)
+        {
+            tool.Terminal.Error.WriteLine(
+                $"Not met: accuracy {Numbers.Accuracy(record.AccuracyAsked)}; reached {Numbers.Accuracy(record.AccuracyReached)}");
+        }
+    }
+}

@@ -1,0 +1,173 @@
+using System.CommandLine;
+using System.Text;
+using System.Text.Json;
+using PoleField.Cli.Case;
+using PoleField.Cli.Text;
+using PoleField.Materials;
+
+namespace PoleField.Cli.Commands;
+
+/// <summary><c>polefield materials [NAME|FILE]</c>: lists, shows and checks magnetisation curves.</summary>
+internal sealed class MaterialsVerb
+{
+    private readonly Tool _tool;
+    private readonly Option<bool> _json = CommonOptions.Json();
+    private readonly Option<string?> _check = new("--check") { Description = "Check a curve's table and say what is wrong with it.", HelpName = "FILE" };
+    private readonly Argument<string?> _which = new("NAME|FILE")
+    {
+        Description = "A built-in name, or a CSV table of H in A/m and B in T. Without: lists all.",
+        Arity = ArgumentArity.ZeroOrOne,
+    };
+
+    private MaterialsVerb(Tool tool) => _tool = tool;
+
+    public static VerbCommand Create(Tool tool)
+    {
+        var verb = new MaterialsVerb(tool);
+        var command = new VerbCommand("materials", "Lists, shows and checks magnetisation curves, built in or from a file.")
+        {
+            Examples =
+            [
+                ("polefield materials", "the built-in materials"),
+                ("polefield materials my-steel.csv", "a curve as PoleField reads it"),
+                ("polefield materials --check my-steel.csv", "is the table sound?"),
+            ],
+        };
+        command.Arguments.Add(verb._which);
+        command.Options.Add(verb._check);
+        command.Options.Add(verb._json);
+        tool.SetRun(command, (arguments, _) => verb.Run(arguments));
+        return command;
+    }
+
+    private int Run(ParseResult arguments)
+    {
+        bool json = arguments.GetValue(_json);
+        if (arguments.GetValue(_check) is { } file)
+        {
+            return Check(arguments, file, json);
+        }
+
+        IReadOnlyList<Material> builtIn = _tool.Pipeline.Materials();
+        if (arguments.GetValue(_which) is { } which)
+        {
+            Show(arguments, Find(which, builtIn), json);
+        }
+        else if (json)
+        {
+            WriteJson(w =>
+            {
+                w.WriteStartArray();
+                foreach (Material material in builtIn)
+                {
+                    MaterialTables.WriteJson(w, material, withTable: false);
+                }
+
+                w.WriteEndArray();
+            });
+        }
+        else
+        {
+            MaterialTables.WriteList(_tool.Terminal.Out, builtIn, _tool.OutInk(arguments));
+        }
+
+        return ExitStatus.Done;
+    }
+
+    private int Check(ParseResult arguments, string file, bool json)
+    {
+        Material material;
+        try
+        {
+            material = ReadFile(file);
+        }
+        catch (InputException e) when (json)
+        {
+            WriteJson(w => WriteVerdict(w, e.Findings));
+            return ExitStatus.WrongInput;
+        }
+
+        if (json)
+        {
+            WriteJson(w => WriteVerdict(w, []));
+        }
+        else if (!arguments.GetValue(_tool.Quiet))
+        {
+            MaterialTables.WriteOne(_tool.Terminal.Out, material, _tool.OutInk(arguments));
+            _tool.Terminal.Out.WriteLine("Sound.");
+        }
+
+        return ExitStatus.Done;
+    }
+
+    private void Show(ParseResult arguments, Material material, bool json)
+    {
+        if (json)
+        {
+            WriteJson(w => MaterialTables.WriteJson(w, material, withTable: true));
+        }
+        else
+        {
+            MaterialTables.WriteOne(_tool.Terminal.Out, material, _tool.OutInk(arguments));
+        }
+    }
+
+    private Material Find(string which, IReadOnlyList<Material> builtIn)
+    {
+        if (builtIn.FirstOrDefault(m => m.Name == which) is { } known)
+        {
+            return known;
+        }
+
+        return File.Exists(which)
+            ? ReadFile(which)
+            : throw new InputException(
+            [
+                new Finding(
+                    Severity.Fault,
+                    "unknown-material",
+                    $"\"{which}\" is no built-in material and no file.",
+                    NearestName.Advice(which, [.. builtIn.Select(m => m.Name)])),
+            ]);
+    }
+
+    private Material ReadFile(string path)
+    {
+        byte[] bytes = CaseLoader.ReadFile(path, "magnetisation curve");
+        return _tool.Pipeline.ReadMaterial(new MemoryStream(bytes), Path.GetFileName(path));
+    }
+
+    private static void WriteVerdict(Utf8JsonWriter json, IReadOnlyList<Finding> findings)
+    {
+        json.WriteStartObject();
+        json.WriteBoolean("ok", findings.All(f => f.Severity != Severity.Fault));
+        json.WriteStartArray("faults");
+        foreach (Finding finding in findings.Where(f => f.Severity == Severity.Fault))
+        {
+            json.WriteStartObject();
+            json.WriteString("what", finding.What);
+            if (finding.Line is { } line)
+            {
+                json.WriteNumber("line", line);
+            }
+
+            json.WriteString("text", finding.Text);
+            json.WriteString("fix", finding.Fix);
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+        json.WriteEndObject();
+    }
+
+    private void WriteJson(Action<Utf8JsonWriter> write)
+    {
+        using var stream = new MemoryStream();
+        using (var json = new Utf8JsonWriter(stream, new JsonWriterOptions { Indented = true, NewLine = "\n" }))
+        {
+            write(json);
+        }
+
+        _tool.Terminal.Out.WriteLine(Encoding.UTF8.GetString(stream.ToArray()));
+    }
+}

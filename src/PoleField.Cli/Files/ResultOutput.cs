@@ -1,0 +1,70 @@
+using System.Reflection;
+using PoleField.Beam;
+using PoleField.Cli.Case;
+using PoleField.Cli.Text;
+using PoleField.Output.Figures;
+using PoleField.Output.Results;
+
+namespace PoleField.Cli.Files;
+
+/// <summary>Hands a solved case to the writers of results and pictures.</summary>
+internal static class ResultOutput
+{
+    /// <summary>Version with commit.</summary>
+    public static string ProgramVersion { get; } =
+        typeof(ResultOutput).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()?.InformationalVersion ?? "unknown";
+
+    /// <summary>Writes the result file.</summary>
+    public static void WriteJson(Stream stream, SolvedCase result) => ResultJson.Write(Of(result), stream);
+
+    /// <summary>What the result file says.</summary>
+    public static SolveResult Of(SolvedCase result)
+    {
+        SolveRecord record = result.Solved.Record;
+        return new SolveResult
+        {
+            Title = result.Case.Case?.Title ?? string.Empty,
+            CaseSha256 = result.Case.CaseSha256,
+            SketchSha256 = result.Case.SketchSha256,
+            ProgramVersion = ProgramVersion,
+            Report = result.Solved.Report,
+            Record = record,
+            Seconds = new RunSeconds(
+                result.ReadSeconds, record.MeshSeconds, record.SolveSeconds, record.EvaluateSeconds, result.TotalSeconds),
+            PeakMemoryMB = result.PeakMemoryMegabytes,
+            Requirements = [.. result.Verdicts.Select(Requirement)],
+            Cautions = result.Cautions,
+            Warnings = [.. result.Warnings.Select(w => Warning(w, result.Case.DrawingUnit))],
+        };
+    }
+
+    /// <summary>The pictures of a solved case, each as SVG and PNG.</summary>
+    public static IReadOnlyList<NamedFile> Pictures(SolvedCase result)
+    {
+        FieldScene scene = FieldScene.Of(result.Solved);
+        return [.. Files([FieldFigure.Whole(scene), FieldFigure.Beam(scene)])];
+    }
+
+    private static IEnumerable<NamedFile> Files(IEnumerable<Figure> figures)
+    {
+        foreach (Figure figure in figures)
+        {
+            yield return new NamedFile(figure.Name + ".svg", s => FigureWriter.Svg(figure, s));
+            yield return new NamedFile(figure.Name + ".png", s => FigureWriter.Png(figure, s));
+        }
+    }
+
+    private static RequirementResult Requirement(Verdict verdict)
+    {
+        Unit unit = verdict.Limit.Quantity.Dimension.Shown;
+        return new RequirementResult(
+            verdict.Limit.Name,
+            unit.Name.Length > 0 ? unit.Name : "1",
+            unit.FromSi(verdict.Limit.Bound),
+            verdict.Found is { } found ? unit.FromSi(found.Value) : double.NaN,
+            verdict.Met);
+    }
+
+    private static ResultWarning Warning(Finding finding, string drawingUnit) => new(
+        (finding.File + " " + FindingText.Place(finding, drawingUnit)).Trim(' ', ':'), $"{finding.Text} {finding.Fix}".Trim());
+}

@@ -1,0 +1,93 @@
+using PoleField.Beam;
+using PoleField.Cli.Case;
+using PoleField.Cli.Files;
+using PoleField.Cli.Commands;
+using PoleField.Drawing;
+using PoleField.Geometry;
+using PoleField.Magnetostatics;
+using PoleField.Materials;
+
+namespace PoleField.Cli;
+
+/// <summary>The steps of a run, each a call into the library; tests replace single steps.</summary>
+internal sealed record Pipeline
+{
+    /// <summary>Drawing file to sketch; the unit overrides the drawing's own.</summary>
+    public required Func<Stream, string, LengthUnit?, Sketch> ReadSketch { get; init; }
+
+    /// <summary>Sketch to section.</summary>
+    public required Func<Sketch, SectionRequest, SectionReading> Cut { get; init; }
+
+    /// <summary>Built-in materials by name, air first.</summary>
+    public required Func<IReadOnlyList<Material>> Materials { get; init; }
+
+    /// <summary>Table of a magnetisation curve to material.</summary>
+    public required Func<Stream, string, Material> ReadMaterial { get; init; }
+
+    /// <summary>Magnet to field and report.</summary>
+    public required Func<Magnet, Aperture, SolveOptions, Action<SolveProgress>, CancellationToken, SolvedMagnet> Solve { get; init; }
+
+    /// <summary>|B| of a solved magnet at any place, T; null where the model ends.</summary>
+    public Func<SolvedMagnet, Func<Point, double?>> FieldOf { get; init; } = solved => place => solved.Solution.At(place)?.Magnitude;
+
+    /// <summary>Result to the result file's JSON.</summary>
+    public required Action<Stream, SolvedCase> WriteResult { get; init; }
+
+    /// <summary>Pictures of a section and of a solved magnet; null as long as there are none.</summary>
+    public Func<LoadedCase, IReadOnlyList<NamedFile>>? SectionPictures { get; init; }
+
+    /// <inheritdoc cref="SectionPictures"/>
+    public Func<SolvedCase, IReadOnlyList<NamedFile>>? ResultPictures { get; init; }
+
+    /// <summary>Verbs that solve a case and work something out of it; each is registered as it is listed here.</summary>
+    public IReadOnlyList<AnalysisStep> Analyses { get; init; } = [];
+
+    /// <summary>The library's own steps.</summary>
+    public static Pipeline OfLibrary() => new()
+    {
+        ReadSketch = ReadDxf,
+        Cut = CutSection,
+        Materials = BuiltInMaterials,
+        ReadMaterial = ReadCurve,
+        Solve = (magnet, aperture, options, progress, cancellation) =>
+            MagnetSolver.Solve(magnet, aperture, options, progress, cancellation),
+        WriteResult = ResultOutput.WriteJson,
+        ResultPictures = ResultOutput.Pictures,
+    };
+
+    private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
+        DxfReader.Read(stream, name, new DxfReadOptions { Unit = unit });
+
+    private static SectionReading CutSection(Sketch sketch, SectionRequest request) => Sectioning.Read(sketch, request);
+
+    private static IReadOnlyList<Material> BuiltInMaterials() => [Material.Air, .. MaterialLibrary.Names.Where(n => n != Material.Air.Name).Select(MaterialLibrary.Get)];
+
+    private static Material ReadCurve(Stream stream, string name) => MaterialFile.Read(stream, name);
+}
+
+/// <summary>A file to be written: name with extension, and what writes it.</summary>
+internal sealed record NamedFile(string FileName, Action<Stream> Write);
+
+/// <summary>A solved case with all that its result file says.</summary>
+internal sealed record SolvedCase
+{
+    public required LoadedCase Case { get; init; }
+
+    public required SolvedMagnet Solved { get; init; }
+
+    public required IReadOnlyList<Verdict> Verdicts { get; init; }
+
+    public required IReadOnlyList<string> Cautions { get; init; }
+
+    /// <summary>Warnings of drawing and solve.</summary>
+    public required IReadOnlyList<Finding> Warnings { get; init; }
+
+    public required double ReadSeconds { get; init; }
+
+    public required double TotalSeconds { get; init; }
+
+    public required double PeakMemoryMegabytes { get; init; }
+
+    /// <summary>True when the asked accuracy was reached and every requirement met.</summary>
+    public bool AllMet => Solved.Record.AccuracyMet && Verdicts.All(v => v.Met);
+}

@@ -1,0 +1,52 @@
+using System.Numerics;
+using PoleField.Geometry;
+
+namespace PoleField.Beam;
+
+/// <summary>The quantities that drive refinement, each linearised and scaled to its own size: field and gradient at the centre, gradient at the aperture's rim.</summary>
+internal static class BeamGoals
+{
+    private const int RimPoints = 4;
+
+    /// <summary>Derivatives of the relative goals by the nodes' potentials.</summary>
+    public static IReadOnlyList<double[]> Derivatives(BeamExtraction extraction, BeamField field, ApertureShape shape)
+    {
+        BeamValues centre = field.At(field.Aperture.Centre);
+        var goals = new List<double[]>
+        {
+            FieldDerivative(extraction, centre, 1.0 / centre.Field),
+            GradientDerivative(extraction, centre, 1.0 / GradientScale(centre)),
+        };
+        Point[] rim = [.. shape.EdgePoints(perSide: 1)];
+        int stride = Math.Max(1, rim.Length / RimPoints);
+        for (int i = 0; i < rim.Length && goals.Count < RimPoints + 2; i += stride)
+        {
+            goals.Add(GradientDerivative(extraction, field.At(rim[i]), 1.0 / GradientScale(centre)));
+        }
+
+        return goals;
+    }
+
+    /// <summary>Derivative of |B| at a place, times a factor.</summary>
+    public static double[] FieldDerivative(BeamExtraction extraction, BeamValues v, double factor)
+    {
+        // dB = (By dBy + Bz dBz)/B with By = −Im F′ = Re(i F′), Bz = −Re F′.
+        var first = new Complex(-v.Bz, v.By) * (factor / v.Field);
+        return extraction.Functional(v.At, first, 0);
+    }
+
+    /// <summary>Derivative of d|B|/dz at a place, times a factor.</summary>
+    public static double[] GradientDerivative(BeamExtraction extraction, BeamValues v, double factor)
+    {
+        // G = (By ∂zBy + Bz ∂zBz)/B with ∂zBy = −Re F″, ∂zBz = Im F″ = Re(−i F″).
+        double byField = v.DByDz - (v.Gradient * v.By / v.Field);
+        double bzField = v.DBzDz - (v.Gradient * v.Bz / v.Field);
+        var first = new Complex(-bzField, byField) * (factor / v.Field);
+        var second = new Complex(-v.By, -v.Bz) * (factor / v.Field);
+        return extraction.Functional(v.At, first, second);
+    }
+
+    // In a field without gradient along z the transverse one sets the scale.
+    private static double GradientScale(BeamValues v) =>
+        Math.Max(new Point(v.DByDz, v.DBzDz).Length, double.Epsilon);
+}

@@ -1,0 +1,39 @@
+using PoleField.Magnetostatics;
+
+namespace PoleField.Beam;
+
+/// <summary>How to solve.</summary>
+public sealed record SolveOptions
+{
+    /// <summary>Relative accuracy of field and gradient over the aperture, 1e-7 to 1e-2.</summary>
+    public double Accuracy { get; init; } = 1e-4;
+
+    /// <summary>Order of the elements, 2 to 4.</summary>
+    public int Order { get; init; } = 3;
+
+    /// <summary>Most refined meshes.</summary>
+    public int MostAdaptiveSteps { get; init; } = 12;
+
+    /// <summary>Most unknowns.</summary>
+    public int MostUnknowns { get; init; } = 3_000_000;
+
+    /// <summary>Threads, at least 1.</summary>
+    public int Threads { get; init; } = Environment.ProcessorCount;
+}
+
+/// <summary>One line of progress: what is being done and how far it is.</summary>
+/// <param name="What">"mesh", "solve", "estimate", ...</param>
+/// <param name="AdaptiveStep">Number of the mesh, from 1.</param>
+/// <param name="Unknowns">Unknowns, 0 while unknown.</param>
+/// <param name="NewtonStep">Newton step within the solve.</param>
+/// <param name="Residual">Relative size of the last Newton step; not a number before the first.</param>
+/// <param name="Accuracy">Relative error bar of the last mesh; not a number before the first.</param>
+public readonly record struct SolveProgress(
+    string What, int AdaptiveStep, int Unknowns, int NewtonStep, double Residual, double Accuracy);
+
+/// <summary>A solved magnet: the field everywhere, the beam's field and the report.</summary>
+/// <param name="Solution">Finite-element solution.</param>
+/// <param name="Field">Exactly harmonic field in the aperture.</param>
+/// <param name="Report">The answer.</param>
+/// <param name="Record">How it was reached.</param>
+public sealed record SolvedMagnet(FieldSolution Solution, BeamField Field, BeamReport Report, SolveRecord Record);

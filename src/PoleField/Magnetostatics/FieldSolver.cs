@@ -1,0 +1,124 @@
+namespace PoleField.Magnetostatics;
+
+/// <summary>One Newton step.</summary>
+/// <param name="Energy">W after the step, J/m.</param>
+/// <param name="Decrement">√(rᵀK⁻¹r / ∫H·B): relative size of the step in the energy norm.</param>
+/// <param name="StepLength">Fraction of the full step taken.</param>
+public readonly record struct NewtonStep(double Energy, double Decrement, double StepLength);
+
+/// <summary>Newton's method ended without a solution.</summary>
+public sealed class FieldNotConvergedException(IReadOnlyList<NewtonStep> history) : Exception(
+    FormattableString.Invariant(
+        $"The field did not converge: after {history.Count} Newton steps the relative decrement is {(history.Count > 0 ? history[^1].Decrement : double.NaN):g3}."))
+{
+    /// <summary>The steps taken.</summary>
+    public IReadOnlyList<NewtonStep> History { get; } = history;
+}
+
+/// <summary>
+/// Newton's method with a line search on the strictly convex energy (Armijo 1966): it converges from any start (Egger,
+/// Engertsberger and Radu 2024, abstract).
+/// </summary>
+internal static class FieldSolver
+{
+    private const double AcceptedDecrement = 1e-6; // the step of this size ends at about its square
+    private const double StartPermeability = 100;
+    private const double ArmijoShare = 1e-4;
+    private const double ShortestStep = 1e-6;
+    private const double EnergyRounding = 1e-11; // slopes below this share of |W| cannot be seen in W
+    private const int MostSteps = 60;
+
+    /// <summary>Solves the equations from a given potential, or from a linear solve with constant permeability.</summary>
+    /// <param name="equations">The equations.</param>
+    /// <param name="start">Start, by node, or null.</param>
+    /// <param name="step">Called after each step.</param>
+    /// <param name="cancellation">Checked at each step.</param>
+    /// <exception cref="FieldNotConvergedException">Not converged within the most steps.</exception>
+    public static (double[] Potential, IReadOnlyList<NewtonStep> History) Solve(
+        FieldEquations equations,
+        double[]? start = null,
+        Action<int, NewtonStep>? step = null,
+        CancellationToken cancellation = default)
+    {
+        var history = new List<NewtonStep>();
+        double[] potential = start ?? LinearStart(equations, cancellation);
+        FieldState state = equations.Evaluate(potential);
+        for (int k = 1; k <= MostSteps; k++)
+        {
+            cancellation.ThrowIfCancellationRequested();
+            double[] direction = equations.TangentAt(potential).Solve(state.Residual);
+            double slope = -Dot(state.Residual, direction);
+            double decrement = Math.Sqrt(Math.Max(0, -slope) / Math.Max(state.FieldProduct, double.Epsilon));
+            if (!double.IsFinite(slope))
+            {
+                throw new FieldNotConvergedException(history);
+            }
+
+            (potential, state, double length) = Step(equations, potential, state, direction, slope);
+            history.Add(new NewtonStep(state.Energy, decrement, length));
+            step?.Invoke(k, history[^1]);
+            if ((decrement < AcceptedDecrement && length == 1.0) || !equations.IsNonlinear)
+            {
+                return (potential, history);
+            }
+        }
+
+        throw new FieldNotConvergedException(history);
+    }
+
+    private static double[] LinearStart(FieldEquations equations, CancellationToken cancellation)
+    {
+        cancellation.ThrowIfCancellationRequested();
+        double[] potential = equations.FixedPotential();
+        if (!equations.IsNonlinear)
+        {
+            return potential;
+        }
+
+        double[] residual = equations.Evaluate(potential).Residual;
+        double[] direction = equations.LinearTangent(StartPermeability).Solve(residual);
+        Subtract(potential, 1.0, direction);
+        return potential;
+    }
+
+    private static (double[] Potential, FieldState State, double Length) Step(
+        FieldEquations equations, double[] potential, FieldState state, double[] direction, double slope)
+    {
+        double length = 1.0;
+        bool visible = Math.Abs(slope) > EnergyRounding * Math.Abs(state.Energy);
+        while (true)
+        {
+            var trial = (double[])potential.Clone();
+            Subtract(trial, length, direction);
+            FieldState next = equations.Evaluate(trial);
+            double rise = next.Energy - state.Energy;
+            if (!visible || rise <= ArmijoShare * length * slope || length <= ShortestStep)
+            {
+                return (trial, next, length);
+            }
+
+            // Minimum of the parabola through the old energy, its slope and the new energy, kept within bounds.
+            double best = -slope * length * length / (2 * (rise - (slope * length)));
+            length = Math.Clamp(best, 0.1 * length, 0.5 * length);
+        }
+    }
+
+    private static void Subtract(double[] a, double factor, double[] b)
+    {
+        for (int i = 0; i < a.Length; i++)
+        {
+            a[i] -= factor * b[i];
+        }
+    }
+
+    private static double Dot(double[] a, double[] b)
+    {
+        double sum = 0;
+        for (int i = 0; i < a.Length; i++)
+        {
+            sum += a[i] * b[i];
+        }
+
+        return sum;
+    }
+}

@@ -1,0 +1,76 @@
+using PoleField.Numerics;
+
+namespace PoleField.Magnetostatics;
+
+/// <summary>The factored tangent of the field equations: solves K x = r for right sides given on all nodes.</summary>
+internal sealed class TangentSystem
+{
+    private readonly FiniteElementSpace _space;
+    private readonly int[] _unknownOfNode;
+    private readonly int _unknowns;
+    private readonly Condensation _condensation;
+    private readonly CholeskyFactor _factor;
+
+    public TangentSystem(
+        FiniteElementSpace space, int[] unknownOfNode, int unknowns, Condensation condensation, CholeskyFactor factor)
+    {
+        _space = space;
+        _unknownOfNode = unknownOfNode;
+        _unknowns = unknowns;
+        _condensation = condensation;
+        _factor = factor;
+    }
+
+    /// <summary>Solution by node (zero on fixed nodes) for a right side by node.</summary>
+    public double[] Solve(double[] rightSide) => Solve([rightSide])[0];
+
+    /// <summary>Solutions for several right sides at once.</summary>
+    public double[][] Solve(IReadOnlyList<double[]> rightSides)
+    {
+        var packed = new double[rightSides.Count * _unknowns];
+        for (int k = 0; k < rightSides.Count; k++)
+        {
+            double[] skeleton = rightSides[k].AsSpan(0, _space.SkeletonCount).ToArray();
+            for (int e = 0; e < _space.ElementCount; e++)
+            {
+                _condensation.ReduceRightSide(e, _space.NodesOf(e), rightSides[k], skeleton);
+            }
+
+            for (int node = 0; node < skeleton.Length; node++)
+            {
+                if (_unknownOfNode[node] >= 0)
+                {
+                    packed[(k * _unknowns) + _unknownOfNode[node]] = skeleton[node];
+                }
+            }
+        }
+
+        _factor.Solve(packed, rightSides.Count);
+        var solutions = new double[rightSides.Count][];
+        for (int k = 0; k < rightSides.Count; k++)
+        {
+            solutions[k] = Expand(packed.AsSpan(k * _unknowns, _unknowns), rightSides[k]);
+        }
+
+        return solutions;
+    }
+
+    private double[] Expand(ReadOnlySpan<double> unknowns, double[] rightSide)
+    {
+        var solution = new double[_space.NodeCount];
+        for (int node = 0; node < _unknownOfNode.Length; node++)
+        {
+            if (_unknownOfNode[node] >= 0)
+            {
+                solution[node] = unknowns[_unknownOfNode[node]];
+            }
+        }
+
+        for (int e = 0; e < _space.ElementCount; e++)
+        {
+            _condensation.Recover(e, _space.NodesOf(e), rightSide, solution);
+        }
+
+        return solution;
+    }
+}

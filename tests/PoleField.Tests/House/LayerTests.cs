@@ -1,0 +1,55 @@
+// Truth: the order of the layers as DEVELOPERS.md states it; a folder may use only folders left of it.
+using System.Runtime.CompilerServices;
+using System.Text.RegularExpressions;
+using Xunit;
+
+namespace PoleField.Tests.House;
+
+public partial class LayerTests
+{
+    private static readonly string[] Layers =
+        ["Numerics", "Geometry", "Drawing", "Materials", "Meshing", "Magnetostatics", "Beam", "Design"];
+
+    [Fact]
+    public void NoLayerUsesOneToItsRight()
+    {
+        var offences = new List<string>();
+        for (int i = 0; i < Layers.Length; i++)
+        {
+            string folder = Path.Combine(Root(), "src", "PoleField", Layers[i]);
+            string[] files = Directory.Exists(folder) ? Directory.GetFiles(folder, "*.cs", SearchOption.AllDirectories) : [];
+            foreach (string file in files)
+            {
+                offences.AddRange(Uses(File.ReadAllText(file))
+                    .Where(used => Array.IndexOf(Layers, used) > i)
+                    .Select(used => $"{Path.GetFileName(file)} in {Layers[i]} uses {used}"));
+            }
+        }
+
+        Assert.Empty(offences);
+    }
+
+    [Fact]
+    public void TheScanSeesAForbiddenUse()
+    {
+        Assert.Contains("Beam", Uses("using PoleField.Beam;\nnamespace PoleField.Numerics;"));
+        Assert.Contains("Design", Uses("var x = PoleField.Design.Tuner.Make();"));
+        Assert.Contains("Meshing", Uses("Meshing.Mesh mesh;"));
+    }
+
+    internal static string Root([CallerFilePath] string here = "") =>
+        Path.GetFullPath(Path.Combine(Path.GetDirectoryName(here)!, "..", "..", ".."));
+
+    private static IEnumerable<string> Uses(string source)
+    {
+        // XML references in comments name neighbours without depending on them.
+        string code = Comment().Replace(source, string.Empty);
+        return Use().Matches(code).Select(m => m.Groups[1].Value).Distinct();
+    }
+
+    [GeneratedRegex(@"//.*")]
+    private static partial Regex Comment();
+
+    [GeneratedRegex(@"(?<![\w.])(?:PoleField\.)?(Numerics|Geometry|Drawing|Materials|Meshing|Magnetostatics|Beam|Design)[.;]")]
+    private static partial Regex Use();
+}

@@ -1,0 +1,60 @@
+// Truth: two pole faces along circles through both wire positions are equipotentials of the two-wire field, so for iron of
+// infinite permeability B·a/(μ0 NI) = (a²/(z² + a²)) / [atan(a/z1) − atan(a/z2)] and G·a²/(μ0 NI) likewise (closed form).
+// Faces: the ridge is a whole half cylinder; the groove runs 20 degrees beyond its half circle, to tau = 1.79 in bipolar
+// coordinates, where cutting it costs 0.3 exp(−π tau/0.6435) = 5e-5 of B and about five times that of G.
+using PoleField.Beam;
+using PoleField.Geometry;
+using PoleField.Magnetostatics;
+using PoleField.Materials;
+using Xunit;
+
+namespace PoleField.Tests.Verification;
+
+public class PolePairTests
+{
+    private const double A = 3.0;       // mm
+    private const double Turns = 3000;  // A
+
+    [Theory]
+    [InlineData(1.2, 1.273770, 1.252888)]
+    [InlineData(1.3, 1.155389, 1.116733)]
+    public void FieldAndGradientPerAmpereTurnFollowTheClosedForm(double height, double fieldNumber, double gradientNumber)
+    {
+        SolvedMagnet solved = MagnetSolver.Solve(Poles(), Drawn.Beam(0, height * A, 1.5, 0.3));
+
+        double unit = PhysicalConstants.Mu0 * Turns / (A / 1000);
+        Assert.Equal(1.0, solved.Report.Beam.Field / (fieldNumber * unit), 5e-3);
+        Assert.Equal(1.0, Math.Abs(solved.Report.Beam.Gradient) / (gradientNumber * unit / (A / 1000)), 5e-3);
+        Assert.InRange(solved.Report.Circuit.Efficiency!.Value, 0.999, 1.0001);
+    }
+
+    internal static Magnet Poles()
+    {
+        const double r = 1.25 * A;
+        const double cut = 20 * Math.PI / 180;
+        var centre = new Point(0, 0.75 * A);
+        var groove = new CircularArc(centre, r, -cut, Math.PI + (2 * cut));
+        Point lip = groove.Start;
+        var mirrored = new Point(-lip.Y, lip.Z);
+        groove = groove.WithEnds(lip, mirrored);
+        var ridge = new CircularArc(default, A, 0, Math.PI).WithEnds(new Point(A, 0), new Point(-A, 0));
+        Point[] right = [new(A, 0), new(A, -30), new(30, -30), new(30, 30), new(12, 30), new(12, lip.Z), lip];
+        Point[] left = [mirrored, new(-12, lip.Z), new(-12, 30), new(-30, 30), new(-30, -30), new(-A, -30), new(-A, 0)];
+        Curve[] window =
+        [
+            .. right.Zip(right.Skip(1), (p, q) => (Curve)new Line(p, q)),
+            groove,
+            .. left.Zip(left.Skip(1), (p, q) => (Curve)new Line(p, q)),
+            ridge.Reversed(),
+        ];
+        return new Drawn()
+            .Rectangle("IRON", 0, 0, 80, 80)
+            .Closed("IRON", window)
+            .Rectangle("COIL LEFT", -18, -15, 12, 20)
+            .Rectangle("COIL RIGHT", 18, -15, 12, 20)
+            .Linear("IRON", 1e5)
+            .Part("COIL LEFT", Material.Air, Turns)
+            .Part("COIL RIGHT", Material.Air, -Turns)
+            .Magnet();
+    }
+}
