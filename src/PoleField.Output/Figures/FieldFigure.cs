@@ -21,27 +21,31 @@ public static class FieldFigure
     public static Figure Whole(FieldScene scene)
     {
         Box seen = scene.Section.Bounds.Inflated(0.08 * scene.Section.Bounds.Diagonal);
-        return Draw(scene, seen, "field", "Field lines and |B| of the cross-section", linesWanted: 36);
+        return Draw(scene, new Detail("field", "Field lines and |B| of the cross-section", seen, LinesWanted: 36));
     }
 
     /// <summary>The beam and the faces on both sides of it.</summary>
-    public static Figure Beam(FieldScene scene) => Draw(
-        scene, SectionDrawing.BeamView(scene.Section, scene.Aperture), "field-beam", "Field lines and |B| around the beam", linesWanted: 22);
-
-    private static Figure Draw(FieldScene scene, Box seen, string name, string title, int linesWanted)
+    public static Figure Beam(FieldScene scene)
     {
+        Box seen = SectionDrawing.BeamView(scene.Section, scene.Aperture);
+        return Draw(scene, new Detail("field-beam", "Field lines and |B| around the beam", seen, LinesWanted: 22));
+    }
+
+    private static Figure Draw(FieldScene scene, Detail detail)
+    {
+        Box seen = detail.Seen;
         double height = Math.Clamp(PlotWidth * seen.Height / seen.Width, SmallestHeight, LargestHeight);
         Box view = SectionDrawing.View(seen, PlotWidth / height);
         double point = view.Width / PlotWidth;
         FieldTriangle[] shown = [.. scene.Triangles.Where(t => Box.Around(t.P0, t.P1, t.P2).Overlaps(view))];
         FieldRaster raster = FieldRaster.OfMagnitude(shown, view, (int)(PlotWidth * PixelsPerPoint));
-        double step = FluxStep(shown, view, linesWanted);
+        double step = FluxStep(shown, view, detail.LinesWanted);
 
         Figure figure = FigureFrame.Begin(
             new FrameText
             {
-                Name = name,
-                Title = title,
+                Name = detail.Name,
+                Title = detail.Title,
                 Caption = Sentence(scene.Caption) + $"Neighbouring field lines enclose {FigureStyle.Number(1e3 * step)} mWb per metre of length.",
                 Key =
                 [
@@ -104,4 +108,6 @@ public static class FieldFigure
 
         return high > low ? FigureStyle.NiceStep(1.6 * (high - low) / linesWanted) : 1;
     }
+
+    private sealed record Detail(string Name, string Title, Box Seen, int LinesWanted);
 }

@@ -38,32 +38,32 @@ public static class VtuMap
         Text(writer, "case_sha256", provenance.CaseSha256);
         Text(writer, "sketch_sha256", provenance.SketchSha256);
         Text(writer, "program", "PoleField " + provenance.ProgramVersion);
-        Numbers<int>(writer, "part number of " + MapSample.Air, "Int32", 1, [0]);
+        Numbers<int>(writer, "part number of " + MapSample.Air, 1, [0]);
         for (int i = 0; i < section.Parts.Count; i++)
         {
-            Numbers<int>(writer, "part number of " + section.Parts[i], "Int32", 1, [i + 1]);
+            Numbers<int>(writer, "part number of " + section.Parts[i], 1, [i + 1]);
         }
 
         writer.WriteLine("</FieldData>");
         writer.WriteLine(FormattableString.Invariant($"<Piece NumberOfPoints=\"{points}\" NumberOfCells=\"{count}\">"));
         writer.WriteLine("<PointData Scalars=\"|B| [T]\" Vectors=\"B [T]\">");
-        Numbers(writer, "A [T m]", "Float64", 1, arrays.Potential);
-        Numbers(writer, "B [T]", "Float64", 3, arrays.Flux);
-        Numbers(writer, "|B| [T]", "Float64", 1, arrays.Magnitude);
-        Numbers(writer, "H [A/m]", "Float64", 1, arrays.Strength);
-        Numbers(writer, "mu_r [1]", "Float64", 1, arrays.Permeability);
+        Numbers(writer, "A [T m]", 1, arrays.Potential);
+        Numbers(writer, "B [T]", 3, arrays.Flux);
+        Numbers(writer, "|B| [T]", 1, arrays.Magnitude);
+        Numbers(writer, "H [A/m]", 1, arrays.Strength);
+        Numbers(writer, "mu_r [1]", 1, arrays.Permeability);
         writer.WriteLine("</PointData>");
         writer.WriteLine("<CellData Scalars=\"part\">");
-        Numbers(writer, "part", "Int32", 1, arrays.Parts);
-        Numbers(writer, "region", "Int32", 1, arrays.Regions);
+        Numbers(writer, "part", 1, arrays.Parts);
+        Numbers(writer, "region", 1, arrays.Regions);
         writer.WriteLine("</CellData>");
         writer.WriteLine("<Points>");
-        Numbers(writer, "place [m]", "Float64", 3, arrays.Points);
+        Numbers(writer, "place [m]", 3, arrays.Points);
         writer.WriteLine("</Points>");
         writer.WriteLine("<Cells>");
-        Numbers<long>(writer, "connectivity", "Int64", 1, [.. Enumerable.Range(0, points).Select(i => (long)i)]);
-        Numbers<long>(writer, "offsets", "Int64", 1, [.. Enumerable.Range(1, count).Select(i => (long)i * NodesPerCell)]);
-        Numbers<byte>(writer, "types", "UInt8", 1, [.. Enumerable.Repeat(QuadraticTriangle, count)]);
+        Numbers<long>(writer, "connectivity", 1, [.. Enumerable.Range(0, points).Select(i => (long)i)]);
+        Numbers<long>(writer, "offsets", 1, [.. Enumerable.Range(1, count).Select(i => (long)i * NodesPerCell)]);
+        Numbers<byte>(writer, "types", 1, [.. Enumerable.Repeat(QuadraticTriangle, count)]);
         writer.WriteLine("</Cells>");
         writer.WriteLine("</Piece>");
         writer.WriteLine("</UnstructuredGrid>");
@@ -92,7 +92,7 @@ public static class VtuMap
         return arrays;
     }
 
-    private static void Numbers<T>(StreamWriter writer, string name, string type, int components, List<T> values)
+    private static void Numbers<T>(StreamWriter writer, string name, int components, List<T> values)
         where T : unmanaged
     {
         ReadOnlySpan<byte> data = MemoryMarshal.AsBytes(CollectionsMarshal.AsSpan(values));
@@ -101,14 +101,24 @@ public static class VtuMap
         data.CopyTo(run.AsSpan(sizeof(ulong)));
         string several = components == 1 ? "" : $" NumberOfComponents=\"{components.ToString(CultureInfo.InvariantCulture)}\"";
         string tuples = (values.Count / components).ToString(CultureInfo.InvariantCulture); // field data are read as empty without it
-        writer.WriteLine($"<DataArray type=\"{type}\" Name=\"{SecurityElement.Escape(name)}\"{several} NumberOfTuples=\"{tuples}\" format=\"binary\">");
+        writer.WriteLine($"<DataArray type=\"{TypeName<T>()}\" Name=\"{SecurityElement.Escape(name)}\"{several} NumberOfTuples=\"{tuples}\" format=\"binary\">");
         writer.WriteLine(Convert.ToBase64String(run));
         writer.WriteLine("</DataArray>");
     }
 
+    private static string TypeName<T>()
+        where T : unmanaged => default(T) switch
+        {
+            double => "Float64",
+            int => "Int32",
+            long => "Int64",
+            byte => "UInt8",
+            _ => throw new NotSupportedException($"No VTK name for {typeof(T).Name}."),
+        };
+
     // Texts are UTF-8 bytes in an array of numbers: arrays of type String stop common readers.
     private static void Text(StreamWriter writer, string name, string value) =>
-        Numbers<byte>(writer, name + " [UTF-8]", "UInt8", 1, [.. Encoding.UTF8.GetBytes(value)]);
+        Numbers<byte>(writer, name + " [UTF-8]", 1, [.. Encoding.UTF8.GetBytes(value)]);
 
     // Point data at [i] or [3·i + component], cell data at [cell].
     private sealed class Arrays

@@ -1,7 +1,6 @@
 // Truth: exact one-equation problems over the TEAM 20 steel joined by straight lines, solved apart: a cylinder in a uniform
 // field obeys B + μ0 H = 2 B0, a slab with a gap NI = H l + B g/μ0. The curve here is smoother than straight lines, by a few tenths of
 // a per cent between rows.
-using PoleField.Materials;
 using Xunit;
 
 namespace PoleField.Tests.Materials;
