@@ -20,7 +20,7 @@ public static class FieldFigure
     /// <summary>The whole cross-section.</summary>
     public static Figure Whole(FieldScene scene)
     {
-        Box seen = scene.Section.Bounds.Inflated(0.08 * scene.Section.Bounds.Diagonal);
+        Box seen = SectionDrawing.WholeView(scene.Section, scene.Aperture, 0.08);
         return Draw(scene, new Detail("field", "Field lines and |B| of the cross-section", seen, LinesWanted: 36));
     }
 

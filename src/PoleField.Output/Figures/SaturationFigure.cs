@@ -13,7 +13,7 @@ public static class SaturationFigure
     /// <summary>Draws |B| in the iron parts; air and coils stay white.</summary>
     public static Figure Draw(FieldScene scene)
     {
-        Box seen = scene.Section.Bounds.Inflated(0.03 * scene.Section.Bounds.Diagonal);
+        Box seen = SectionDrawing.WholeView(scene.Section, scene.Aperture, 0.03);
         double height = Math.Clamp(PlotWidth * seen.Height / seen.Width, 300, 700);
         Box view = SectionDrawing.View(seen, PlotWidth / height);
         double point = view.Width / PlotWidth;

@@ -54,6 +54,14 @@ internal static class SectionDrawing
         return new Box(seen.Centre - half, seen.Centre + half);
     }
 
+    /// <summary>All parts and the aperture, which may lie outside their box.</summary>
+    public static Box WholeView(CrossSection section, Aperture aperture, double margin)
+    {
+        Box beam = aperture.Outline.Bounds;
+        Box all = section.Bounds.Including(beam.Min).Including(beam.Max);
+        return all.Inflated(margin * all.Diagonal);
+    }
+
     /// <summary>Part around the aperture worth a closer look: the faces on both sides of the beam.</summary>
     public static Box BeamView(CrossSection section, Aperture aperture)
     {
