@@ -13,14 +13,14 @@ namespace PoleField.Output.Figures;
 public static class FieldFigure
 {
     private const double PlotWidth = 620;
-    private const double SmallestHeight = 300;
+    private const double SmallestHeight = 220;
     private const double LargestHeight = 700;
     private const double PixelsPerPoint = 1.6;
 
     /// <summary>The whole cross-section.</summary>
     public static Figure Whole(FieldScene scene)
     {
-        Box seen = SectionDrawing.WholeView(scene.Section, scene.Aperture, 0.08);
+        Box seen = SectionDrawing.WholeView(scene.Section, scene.Aperture);
         return Draw(scene, new Detail("field", "Field lines and |B| of the cross-section", seen, LinesWanted: 36));
     }
 
@@ -60,11 +60,15 @@ public static class FieldFigure
         double top = Math.Max(raster.Quantile(0.998), double.Epsilon);
         AddImage(model, raster.Image(0, top, FigureStyle.Unsigned), view);
 
+        // Halfway between the multiples: A = 0 fills wide regions without field, where its line would wander.
+        double half = 0.5 * step;
         IReadOnlyList<LevelLine> lines = LevelLines.Trace(
-            shown.Select(t => new ValueTriangle(t.P0, t.P1, t.P2, t.S0.Potential, t.S1.Potential, t.S2.Potential)), step, 0.15 * point);
+            shown.Select(t => new ValueTriangle(t.P0, t.P1, t.P2, t.S0.Potential - half, t.S1.Potential - half, t.S2.Potential - half)),
+            step,
+            0.15 * point);
         model.Annotations.Add(new Strokes([.. lines.Select(l => l.Points)], FigureStyle.Contour, rim: 0));
         model.Annotations.Add(new Strokes(SectionDrawing.Outlines(scene.Section, 0.1 * point), FigureStyle.Outline, rim: 0.5));
-        model.Annotations.Add(new Strokes([SectionDrawing.Flatten(scene.Aperture.Outline, 0.1 * point)], FigureStyle.Aperture, rim: 1.0));
+        AddAperture(model, scene, point);
         model.Annotations.Add(new PartLabels(scene.Section, LabelPlaces.Find(raster), scene.CurrentOf).Annotation());
         model.Annotations.Add(new ColourBar("|B| (T)", 0, top, FigureStyle.Unsigned));
         return figure;
@@ -90,6 +94,15 @@ public static class FieldFigure
         Interpolate = true,
         Layer = AnnotationLayer.BelowSeries,
     });
+
+    /// <summary>The aperture's outline: dashed with a light rim, or thin where it is too small for dashes.</summary>
+    internal static void AddAperture(PlotModel model, FieldScene scene, double point)
+    {
+        Box box = scene.Aperture.Outline.Bounds;
+        bool small = Math.Min(box.Width, box.Height) < 12 * point;
+        Pen pen = small ? new Pen(FigureStyle.Ink, 1.1) : FigureStyle.Aperture;
+        model.Annotations.Add(new Strokes([SectionDrawing.Flatten(scene.Aperture.Outline, 0.1 * point)], pen, rim: small ? 0.6 : 1.0));
+    }
 
     internal static string Sentence(string text) => text.Length == 0 ? "" : text.TrimEnd() + " ";
 

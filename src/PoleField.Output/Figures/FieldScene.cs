@@ -26,7 +26,7 @@ public sealed record FieldScene
     public string Caption { get; init; } = "";
 
     /// <summary>The scene of a solved magnet; each element is cut into <paramref name="cuts"/>² triangles.</summary>
-    public static FieldScene Of(SolvedMagnet solved, int cuts = 4)
+    public static FieldScene Of(SolvedMagnet solved, int cuts = 6)
     {
         Magnet magnet = solved.Solution.Magnet;
         BeamReport report = solved.Report;

@@ -16,11 +16,16 @@ internal sealed record LevelLine(double Level, IReadOnlyList<Point> Points);
 /// </summary>
 internal static class LevelLines
 {
-    /// <summary>Traces all levels that are multiples of a step, shifted by an offset.</summary>
+    /// <summary>Traces all levels that are multiples of a step.</summary>
     /// <param name="triangles">Triangles; neighbours meet edge to edge.</param>
     /// <param name="step">Distance of levels, &gt; 0.</param>
     /// <param name="tolerance">Largest distance, metres, between a line and its simplified form.</param>
-    public static IReadOnlyList<LevelLine> Trace(IEnumerable<ValueTriangle> triangles, double step, double tolerance)
+    /// <param name="join">
+    /// Ends closer than this, metres, are joined; null for values that are the same on both sides of an edge. Values that jump
+    /// a little from element to element, such as |B|, need about the width of a line.
+    /// </param>
+    public static IReadOnlyList<LevelLine> Trace(
+        IEnumerable<ValueTriangle> triangles, double step, double tolerance, double? join = null)
     {
         SortedDictionary<long, LineChainer> chains = [];
         foreach (ValueTriangle t in triangles)
@@ -31,7 +36,7 @@ internal static class LevelLines
             {
                 if (!chains.TryGetValue(k, out LineChainer? chain))
                 {
-                    chain = new LineChainer(tolerance * 1e-2);
+                    chain = new LineChainer(join ?? (tolerance * 1e-2));
                     chains.Add(k, chain);
                 }
 

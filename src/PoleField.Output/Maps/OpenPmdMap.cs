@@ -16,7 +16,7 @@ public static class OpenPmdMap
     private static readonly double[] TeslaPerMetre = [-1, 1, -2, -1, 0, 0, 0];
     private static readonly double[] NoDimension = [0, 0, 0, 0, 0, 0, 0];
 
-    /// <summary>Writes the map. The stream must be able to seek.</summary>
+    /// <summary>Writes the map.</summary>
     /// <exception cref="InputException">The map is a list of places, which the standard has no meshes for.</exception>
     public static void Write(FieldMap map, Stream stream)
     {
@@ -53,7 +53,11 @@ public static class OpenPmdMap
 
         file.Attributes["openPMDextension"] = 0u;
         file.Attributes["accuracyReached"] = map.Provenance.AccuracyReached;
-        file.Write(stream, new H5WriteOptions(DefaultStringLength: LongestText(map.Provenance, media)));
+
+        // The HDF5 writer goes back and forth in what it wrote; the caller's stream need only take bytes.
+        using MemoryStream whole = new();
+        file.Write(whole, new H5WriteOptions(DefaultStringLength: LongestText(map.Provenance, media)));
+        stream.Write(whole.ToArray());
     }
 
     private static (string Key, string Value)[] RootTexts(MapProvenance origin)

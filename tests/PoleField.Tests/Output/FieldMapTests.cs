@@ -279,7 +279,7 @@ public sealed class FieldMapTests : IDisposable
     private string Save(string name, Action<Stream> write)
     {
         string path = Path.Combine(_folder, name);
-        using FileStream stream = File.Create(path);
+        using FileStream stream = new(path, FileMode.Create, FileAccess.Write); // as the tool opens its files
         write(stream);
         return path;
     }
