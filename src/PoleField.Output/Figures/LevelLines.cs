@@ -36,7 +36,7 @@ internal static class LevelLines
             {
                 if (!chains.TryGetValue(k, out LineChainer? chain))
                 {
-                    chain = new LineChainer(join ?? (tolerance * 1e-2));
+                    chain = new LineChainer(tolerance * 1e-2);
                     chains.Add(k, chain);
                 }
 
@@ -46,8 +46,24 @@ internal static class LevelLines
 
         return
         [
-            .. chains.SelectMany(c => c.Value.Lines().Select(points => new LevelLine(c.Key * step, Simplify(points, tolerance)))),
+            .. chains.SelectMany(c => Joined(c.Value, join).Select(points => new LevelLine(c.Key * step, Simplify(points, tolerance)))),
         ];
+    }
+
+    private static IEnumerable<IReadOnlyList<Point>> Joined(LineChainer pieces, double? join)
+    {
+        if (join is not double distance)
+        {
+            return pieces.Lines();
+        }
+
+        LineChainer joined = new(distance);
+        foreach (IReadOnlyList<Point> piece in pieces.Lines())
+        {
+            joined.Add(piece);
+        }
+
+        return joined.Lines();
     }
 
     private static void Cut(in ValueTriangle t, double level, LineChainer chain)
@@ -66,7 +82,7 @@ internal static class LevelLines
 
         if (count == 2)
         {
-            chain.Add(ends[0], ends[1]);
+            chain.Add([ends[0], ends[1]]);
         }
     }
 
