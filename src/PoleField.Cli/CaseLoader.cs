@@ -31,11 +31,10 @@ internal sealed class CaseLoader(Pipeline pipeline)
         }
 
         string folder = Path.GetDirectoryName(Path.GetFullPath(path))!;
-        IReadOnlyList<Material> builtIn = pipeline.Materials();
-        var around = new CaseSurroundings(
-            Path.GetFileName(path), [.. builtIn.Select(m => m.Name)], file => File.Exists(Path.Combine(folder, file)))
+        MaterialShelf builtIn = pipeline.Materials;
+        var around = new CaseSurroundings(Path.GetFileName(path), builtIn.Names, file => File.Exists(Path.Combine(folder, file)))
         {
-            NonMagnetic = [.. builtIn.Where(m => !m.IsMagnetic).Select(m => m.Name)],
+            IsMagnetic = name => builtIn.Get(name).IsMagnetic,
         };
         CaseReading reading = CaseReader.Read(text, around);
         findings.AddRange(reading.Findings);
@@ -80,15 +79,16 @@ internal sealed class CaseLoader(Pipeline pipeline)
         Join = file.Sketch.Join,
     };
 
-    private PartRole RoleOf(PartSection part, string folder, IReadOnlyList<Material> builtIn)
+    private PartRole RoleOf(PartSection part, string folder, MaterialShelf builtIn)
     {
         Point remanence = default;
         Material material;
         switch (part.Substance)
         {
             case NamedSubstance named:
-                material = builtIn.FirstOrDefault(m => m.Name == named.Name)
-                    ?? new Material(named.Name, LinearLaw.Vacuum, "Copper", "definition", "permeability taken as 1");
+                material = builtIn.Names.Contains(named.Name)
+                    ? builtIn.Get(named.Name)
+                    : new Material(named.Name, LinearLaw.Vacuum, "Copper", "definition", "permeability taken as 1");
                 break;
             case CurveFileSubstance curve:
                 string path = Path.Combine(folder, curve.File);

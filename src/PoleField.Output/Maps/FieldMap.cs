@@ -33,6 +33,14 @@ public readonly record struct MapSample(double By, double Bz, double DByDz, doub
     /// <summary>A place without a field.</summary>
     public static MapSample Nothing { get; } = new(double.NaN, double.NaN, double.NaN, double.NaN, "", MapSource.None);
 
+    /// <summary>The word files use for a way of obtaining a value.</summary>
+    public static string NameOf(MapSource source) => source switch
+    {
+        MapSource.Extraction => "extraction",
+        MapSource.Element => "element",
+        _ => "none",
+    };
+
     /// <summary>|B|, T.</summary>
     public double Field => Math.Sqrt((By * By) + (Bz * Bz));
 

@@ -7,7 +7,7 @@ namespace PoleField.Output.Maps;
 
 /// <summary>
 /// A rectangular field map as HDF5 by the openPMD standard 1.1.0: mesh record B (components x, y, z; x is 0), the derivatives
-/// of its components, the gradient of |B|, and the medium as numbers into a list of names. Array indices run [z, y].
+/// of its components, the gradient of |B|, and, as numbers into lists of names, the medium and how each value was obtained. Array indices run [z, y].
 /// </summary>
 public static class OpenPmdMap
 {
@@ -39,6 +39,7 @@ public static class OpenPmdMap
             ["dBz_dy"] = Scalar(map, TeslaPerMetre, s => s.DByDz),
             ["dBz_dz"] = Scalar(map, TeslaPerMetre, s => s.DBzDz),
             ["medium"] = Medium(map, number, media),
+            ["obtained"] = Obtained(map),
         };
         H5Group iteration = new()
         {
@@ -129,6 +130,15 @@ public static class OpenPmdMap
             record.Attributes["names"] = media;
         }
 
+        return record;
+    }
+
+    private static H5Dataset Obtained(FieldMap map)
+    {
+        H5Dataset record = new(Table(map, s => (int)s.Source));
+        DescribeComponent(record);
+        DescribeMesh(record, map.Grid, NoDimension);
+        record.Attributes["names"] = Enum.GetValues<MapSource>().Order().Select(MapSample.NameOf).ToArray();
         return record;
     }
 

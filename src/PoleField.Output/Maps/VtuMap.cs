@@ -37,6 +37,7 @@ public static class VtuMap
         Text(writer, "title", provenance.Title);
         Text(writer, "case_sha256", provenance.CaseSha256);
         Text(writer, "sketch_sha256", provenance.SketchSha256);
+        Text(writer, "obtained", MapSample.NameOf(MapSource.Element));
         Text(writer, "program", "PoleField " + provenance.ProgramVersion);
         Numbers<int>(writer, "part number of " + MapSample.Air, 1, [0]);
         for (int i = 0; i < section.Parts.Count; i++)
