@@ -10,18 +10,24 @@ internal sealed record RunSettings(SolveOptions Options, Action<SolveProgress>? 
 /// <summary>One run for the beam in one magnet: its state between solves.</summary>
 internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings settings)
 {
-    // The rules' own mesh reaches about 1e-5 with third-order elements on saturated poles with corners (measured), and the
+    // The rules' own mesh reaches about 2e-5 with third-order elements on saturated poles with corners (measured), and the
     // error falls like the sixth power of the element size.
-    private const double RuleAccuracy = 1e-5;
+    private const double RuleAccuracy = 2e-5;
     private const double RuleOrder = 6.0;
     private const double Finest = 0.7;
     private const double Coarsest = 1.6;
+
+    // A run that gains less than this in so many meshes is at the end of what refinement can do.
+    private const double LeastGain = 0.5;
+    private const int PatientMeshes = 3;
 
     private readonly SolveOptions _options = settings.Options;
     private readonly CancellationToken _cancellation = settings.Cancellation;
     private readonly Stopwatch _meshing = new();
     private readonly Stopwatch _solving = new();
     private readonly Stopwatch _evaluating = new();
+    private readonly List<double> _accuracies = [];
+    private double _openDiscSize = new MeshOptions().OpenDiscSize;
     private int _newtonSteps;
     private double _accuracy = double.NaN;
 
@@ -47,7 +53,7 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
             }
 
             BeamEstimate estimate = Estimate(solution, equations, chi, step);
-            bool done = _accuracy <= _options.Accuracy;
+            bool done = _accuracy <= _options.Accuracy || IsStuck();
             if (done || step > _options.MostAdaptiveSteps || 4 * equations.PotentialCount > _options.MostUnknowns)
             {
                 return Finish(estimate, equations, step);
@@ -55,7 +61,9 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
 
             _evaluating.Start();
             double[][] indicators = estimate.Higher.Indicators(BeamGoals.Derivatives(estimate.Better, estimate.Corrected, place.Shape));
-            size = Refinement.Next(size, solution.Problem.Space, indicators, _options.Accuracy / BeamEstimate.ErrorBarFactor);
+            double tolerance = _options.Accuracy / BeamEstimate.ErrorBarFactor;
+            size = Refinement.Next(size, solution.Problem.Space, indicators, tolerance);
+            _openDiscSize *= Refinement.OfOpenDisc(solution.Problem.Space, indicators, tolerance);
             _evaluating.Stop();
         }
     }
@@ -66,6 +74,12 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
         (FieldSolution solution, FieldEquations equations) = SolveOn(other.Mesh, 1, other);
         double[] chi = BandCutOff.Nodal(solution.Problem, place.Shape) ?? throw NoBand();
         return Finish(Estimate(solution, equations, chi, 1), equations, 1);
+    }
+
+    private bool IsStuck()
+    {
+        _accuracies.Add(_accuracy);
+        return _accuracies.Count > PatientMeshes && !(_accuracies.TakeLast(PatientMeshes).Min() < LeastGain * _accuracies[^(PatientMeshes + 1)]);
     }
 
     private static double Fineness(double accuracy) =>
@@ -81,7 +95,7 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     {
         Report("mesh", step, 0, 0, double.NaN);
         _meshing.Start();
-        Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions(), _cancellation);
+        Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { OpenDiscSize = _openDiscSize }, _cancellation);
         _meshing.Stop();
         return mesh;
     }

@@ -10,6 +10,8 @@ internal sealed record BeamEstimate
     // With corners in saturated iron the estimate was seen low by up to 2.7.
     public const double ErrorBarFactor = 3.0;
 
+    // A small difference at the centre alone may be chance.
+    private const double ElsewhereFactor = 1.5;
     private const double QuadratureTolerance = 1e-9;
 
     public required FieldSolution Solution { get; init; }
@@ -72,8 +74,12 @@ internal sealed record BeamEstimate
         return new BeamReport
         {
             Beam = Measures.Centre,
-            FieldError = Bar(Measures.Centre.Field, CorrectedMeasures.Centre.Field, floor),
-            GradientError = Bar(Measures.Centre.Gradient, CorrectedMeasures.Centre.Gradient, floor),
+            FieldError = Math.Max(
+                Bar(Measures.Centre.Field, CorrectedMeasures.Centre.Field, floor),
+                ElsewhereFactor * Measures.FieldDifference(CorrectedMeasures) * Measures.Field.Largest),
+            GradientError = Math.Max(
+                Bar(Measures.Centre.Gradient, CorrectedMeasures.Centre.Gradient, floor),
+                ElsewhereFactor * Measures.GradientDifference(CorrectedMeasures) * Measures.Gradient.Largest),
             ApertureArea = place.Aperture.Outline.Area,
             Clearance = place.Clearance,
             Field = Measures.Field,

@@ -252,14 +252,23 @@ internal sealed class FieldEquations
 
     private static (double[] OnRim, double[] Load) BackgroundTerms(FieldProblem problem)
     {
+        double[] onRim = RimBackground(problem, out bool[] isRim);
+        return (onRim, onRim.Length == 0 ? [] : RimLoad(problem, isRim));
+    }
+
+    /// <summary>Potential of the uniform background on the rim between the discs, by node; empty without background.</summary>
+    public static double[] RimBackground(FieldProblem problem) => RimBackground(problem, out _);
+
+    private static double[] RimBackground(FieldProblem problem, out bool[] isRim)
+    {
         FiniteElementSpace space = problem.Space;
+        isRim = new bool[space.NodeCount];
         if (problem.Magnet.AppliedField == default || space.Mesh.Circle is null)
         {
-            return ([], []);
+            return [];
         }
 
         var onRim = new double[space.NodeCount];
-        var isRim = new bool[space.NodeCount];
         for (int e = 0; e < space.ElementCount; e++)
         {
             for (int side = 0; side < 3; side++)
@@ -281,7 +290,7 @@ internal sealed class FieldEquations
             }
         }
 
-        return (onRim, RimLoad(problem, isRim));
+        return onRim;
     }
 
     // ∮ ν0 ∂nA v ds of the background, by the divergence theorem: only rim nodes keep a share.
