@@ -140,7 +140,7 @@ public static class MagnetSolver
         {
             Report("mesh", step, 0, 0, double.NaN);
             _meshing.Start();
-            Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions(), cancellation);
+            Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { Enclosed = _shape.Corners }, cancellation);
             _meshing.Stop();
             _solving.Start();
             FiniteElementSpace space = FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), options.Order);
