@@ -95,7 +95,7 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     {
         Report("mesh", step, 0, 0, double.NaN);
         _meshing.Start();
-        Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { OpenDiscSize = _openDiscSize }, _cancellation);
+        Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { OpenDiscSize = _openDiscSize, Enclosed = place.Shape.Corners }, _cancellation);
         _meshing.Stop();
         return mesh;
     }

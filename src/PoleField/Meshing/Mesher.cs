@@ -12,11 +12,14 @@ public sealed record MeshOptions
     /// <summary>Largest turn of a curve along one mesh edge, degrees.</summary>
     public double LargestTurnDegrees { get; init; } = 20;
 
-    /// <summary>Radius of the open circle over that of the smallest circle around the section, more than 1.02.</summary>
+    /// <summary>Radius of the open circle over that of the smallest circle around the section and <see cref="Enclosed"/>, more than 1.02.</summary>
     public double OpenCircleRatio { get; init; } = 1.15;
 
     /// <summary>Edge length in the disc that stands for open space and on its rim, over its radius, at most 0.5.</summary>
     public double OpenDiscSize { get; init; } = 0.3;
+
+    /// <summary>Places beside the section that the open circle must enclose too, metres: a beam that flies outside of all parts.</summary>
+    public IReadOnlyList<Point> Enclosed { get; init; } = [];
 
     /// <summary>Most triangles before giving up.</summary>
     public int MostTriangles { get; init; } = 5_000_000;
@@ -33,7 +36,7 @@ public static class Mesher
     {
         options ??= new MeshOptions();
         Check(options);
-        OpenCircle? circle = section.HasRim ? null : CircleAround(section, options.OpenCircleRatio);
+        OpenCircle? circle = section.HasRim ? null : CircleAround(section, options);
         (List<Point> corners, List<BoundaryCurve> curves) = Boundary(section, circle);
         Corners.Classify(curves);
         Func<Point, double> wanted = circle is null
@@ -67,10 +70,10 @@ public static class Mesher
         }
     }
 
-    private static OpenCircle CircleAround(CrossSection section, double ratio)
+    private static OpenCircle CircleAround(CrossSection section, MeshOptions options)
     {
         const int samples = 32;
-        List<Point> places = [];
+        List<Point> places = [.. options.Enclosed];
         foreach (SectionEdge e in section.Edges)
         {
             int pieces = e.Curve is Line ? 1 : samples;
@@ -81,7 +84,7 @@ public static class Mesher
         }
 
         OpenCircle smallest = SmallestCircle.Around(places);
-        return new OpenCircle(smallest.Centre, ratio * smallest.Radius);
+        return new OpenCircle(smallest.Centre, options.OpenCircleRatio * smallest.Radius);
     }
 
     private static (List<Point> Corners, List<BoundaryCurve> Curves) Boundary(CrossSection section, OpenCircle? circle)

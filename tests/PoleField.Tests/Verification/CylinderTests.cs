@@ -62,7 +62,7 @@ public class CylinderTests
         Assert.Equal(1.0, centre.Bz / inside, 2e-3);
     }
 
-    private static double InsideField(MagneticLaw law, double background)
+    internal static double InsideField(MagneticLaw law, double background)
     {
         double low = 0, high = 2 * background;
         for (int k = 0; k < 200; k++)

@@ -48,6 +48,17 @@ internal sealed class Drawn
     public Drawn Linear(string layer, double permeability) =>
         Part(layer, new Material("linear", new LinearLaw(permeability), "linear", "test", "exact"));
 
+    /// <summary>A permanent magnet of recoil permeability 1.</summary>
+    public Drawn Remanent(string layer, Point remanence)
+    {
+        _roles.Add(new PartRole(layer, Material.Air) { Remanence = remanence });
+        return this;
+    }
+
+    /// <summary>Closed polygon through corners in millimetres.</summary>
+    public Drawn Polygon(string layer, params Point[] corners) =>
+        Closed(layer, [.. corners.Select((c, i) => new Line(c, corners[(i + 1) % corners.Length]))]);
+
     public Sketch Sketch() => new("test.dxf", LengthUnit.Millimetre, UnitOrigin.InsertUnits, _curves, [], []);
 
     public Magnet Magnet(Point appliedField = default, string? rim = null, bool mirror = false) =>
