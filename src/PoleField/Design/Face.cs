@@ -72,6 +72,23 @@ public sealed class Face
         return null;
     }
 
+    /// <summary>Place and unit normal out of the iron at an arc length.</summary>
+    public (Point At, Point Outward) At(double arcLength)
+    {
+        FaceEdge edge = _edges[^1];
+        foreach (FaceEdge e in _edges)
+        {
+            if (arcLength <= e.Start + e.Length)
+            {
+                edge = e;
+                break;
+            }
+        }
+
+        double parameter = edge.ParameterAt(arcLength);
+        return (edge.Edge.Curve.At(parameter), edge.OutwardAt(parameter));
+    }
+
     private static bool IsIron(Magnet magnet, int region) =>
         region > CrossSection.Air && magnet.Roles[magnet.Section.Regions[region].Part].Kind == "iron";
 
@@ -153,6 +170,14 @@ public sealed class Face
             int k = Math.Min((int)at, TablePieces - 1);
             double along = _lengths[k] + ((at - k) * (_lengths[k + 1] - _lengths[k]));
             return Start + (IsForward ? along : Length - along);
+        }
+
+        public double ParameterAt(double arcLength)
+        {
+            double along = Math.Clamp(IsForward ? arcLength - Start : Start + Length - arcLength, 0, Length);
+            int k = Array.BinarySearch(_lengths, along);
+            k = Math.Clamp(k < 0 ? ~k - 1 : k, 0, TablePieces - 1);
+            return (k + ((along - _lengths[k]) / (_lengths[k + 1] - _lengths[k]))) / TablePieces;
         }
 
         /// <summary>Unit normal out of the iron.</summary>

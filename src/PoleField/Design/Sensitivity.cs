@@ -34,6 +34,9 @@ public sealed class Sensitivity
     /// <summary>Gauss points of all faces between different materials, in the order of the section's edges and along each.</summary>
     public IReadOnlyList<FacePoint> Points => _faces.Points;
 
+    /// <summary>The magnet.</summary>
+    public Magnet Magnet => _solution.Magnet;
+
     /// <summary>The section.</summary>
     public CrossSection Section => _solution.Mesh.Section;
 

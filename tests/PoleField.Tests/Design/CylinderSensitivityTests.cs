@@ -24,8 +24,8 @@ public class CylinderSensitivityTests
         double k = (permeability - 1) / (permeability + 1);
         (double field, double gradient, _) = Grown(Linear(permeability), 1.0);
 
-        Assert.Equal(1.0, field / (2 * k * Radius / (Height * Height)), 1e-5);
-        Assert.Equal(1.0, gradient / (-4 * k * Radius / Math.Pow(Height, 3)), 1e-5);
+        Assert.Equal(1.0, field / (2 * k * Radius / (Height * Height)), 5e-5);
+        Assert.Equal(1.0, gradient / (-4 * k * Radius / Math.Pow(Height, 3)), 5e-5);
     }
 
     [Theory]
@@ -38,8 +38,8 @@ public class CylinderSensitivityTests
         double k = (Inside(steel.Law, background) / background) - 1;
         (double field, double gradient, _) = Grown(steel, background);
 
-        Assert.Equal(1.0, field / (2 * k * Radius * background / (Height * Height)), 1e-4);
-        Assert.Equal(1.0, gradient / (-4 * k * Radius * background / Math.Pow(Height, 3)), 1e-4);
+        Assert.Equal(1.0, field / (2 * k * Radius * background / (Height * Height)), 2e-4);
+        Assert.Equal(1.0, gradient / (-4 * k * Radius * background / Math.Pow(Height, 3)), 2e-4);
     }
 
     [Theory]
@@ -126,7 +126,7 @@ public class CylinderSensitivityTests
     }
 
     private static Sensitivity Solve(Magnet magnet) => Sensitivity.Of(
-        FixedMeshSolve.Of(magnet, new FixedMeshOptions(Drawn.Beam(0, 15, 3, 1), 1) { Order = 4, Fineness = 0.6 }));
+        FixedMeshSolve.Of(magnet, new FixedMeshOptions(Drawn.Beam(0, 15, 3, 1), 1) { Order = 4, Fineness = 0.5 }));
 
     private static double Inside(MagneticLaw law, double background)
     {

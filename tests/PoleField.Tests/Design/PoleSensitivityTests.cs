@@ -73,9 +73,8 @@ public class PoleSensitivityTests
         foreach (QuantityDerivatives d in Derivatives.Value)
         {
             Point all = d.Parts.Aggregate(default(Point), (sum, p) => sum + p.Shift);
-            double scale = d.BeamPlace.Length;
-            Assert.Equal(0, (all.Y + d.BeamPlace.Y) / scale, 1e-3);
-            Assert.Equal(0, (all.Z + d.BeamPlace.Z) / scale, 1e-3);
+            double off = (all + d.BeamPlace).Length / d.Parts.Max(p => p.Shift.Length);
+            Assert.True(off < 1e-3, FormattableString.Invariant($"{d.Quantity}: all parts {all}, beam {d.BeamPlace}, off by {off:g3}"));
         }
     }
 
@@ -97,7 +96,7 @@ public class PoleSensitivityTests
     private static double[] Values(FixedMeshSolve solve) => [.. Quantities.Select(q => q.Value(solve.Measures))];
 
     private static FixedMeshSolve Solve(Magnet magnet) =>
-        FixedMeshSolve.Of(magnet, new FixedMeshOptions(Beam, 1) { Order = 4, Fineness = 0.8 });
+        FixedMeshSolve.Of(magnet, new FixedMeshOptions(Beam, 1) { Order = 4, Fineness = 0.6 });
 
     // Two bars with round ends in a background field, a current on each side; one of the parts moved.
     private static Magnet Poles(int moved = -1, double y = 0, double z = 0, double milliradian = 0, Point pivot = default)
