@@ -31,11 +31,10 @@ internal sealed class CaseLoader(Pipeline pipeline)
         }
 
         string folder = Path.GetDirectoryName(Path.GetFullPath(path))!;
-        IReadOnlyList<Material> builtIn = pipeline.Materials();
-        var around = new CaseSurroundings(
-            Path.GetFileName(path), [.. builtIn.Select(m => m.Name)], file => File.Exists(Path.Combine(folder, file)))
+        MaterialShelf builtIn = pipeline.Materials;
+        var around = new CaseSurroundings(Path.GetFileName(path), builtIn.Names, file => File.Exists(Path.Combine(folder, file)))
         {
-            NonMagnetic = [.. builtIn.Where(m => !m.IsMagnetic).Select(m => m.Name)],
+            IsMagnetic = name => builtIn.Get(name).IsMagnetic,
         };
         CaseReading reading = CaseReader.Read(text, around);
         findings.AddRange(reading.Findings);
@@ -73,21 +72,23 @@ internal sealed class CaseLoader(Pipeline pipeline)
     {
         PartLayers = [.. file.Parts.Select(p => p.Layer)],
         MaterialKeys = [.. file.Parts.Select(p => p.AmpereTurns is { } a ? FormattableString.Invariant($"coil {p.Layer} {a:R}") : p.Substance.Key)],
+        CurrentLayers = [.. file.Parts.Where(p => p.AmpereTurns is not null).Select(p => p.Layer)],
         BeamLayer = (file.Beam as BeamOnLayer)?.Layer,
         RimLayer = file.Surroundings.RimLayer,
         MirrorLeftRight = file.MirrorLeftRight,
         Join = file.Sketch.Join,
     };
 
-    private PartRole RoleOf(PartSection part, string folder, IReadOnlyList<Material> builtIn)
+    private PartRole RoleOf(PartSection part, string folder, MaterialShelf builtIn)
     {
         Point remanence = default;
         Material material;
         switch (part.Substance)
         {
             case NamedSubstance named:
-                material = builtIn.FirstOrDefault(m => m.Name == named.Name)
-                    ?? new Material(named.Name, LinearLaw.Vacuum, "Copper", "definition", "permeability taken as 1");
+                material = builtIn.Names.Contains(named.Name)
+                    ? builtIn.Get(named.Name)
+                    : new Material(named.Name, LinearLaw.Vacuum, "Copper", "definition", "permeability taken as 1");
                 break;
             case CurveFileSubstance curve:
                 string path = Path.Combine(folder, curve.File);

@@ -6,6 +6,7 @@ using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
 using PoleField.Materials;
+using PoleField.Output.Pages;
 
 namespace PoleField.Cli;
 
@@ -18,8 +19,8 @@ internal sealed record Pipeline
     /// <summary>Sketch to section.</summary>
     public required Func<Sketch, SectionRequest, SectionReading> Cut { get; init; }
 
-    /// <summary>Built-in materials by name, air first.</summary>
-    public required Func<IReadOnlyList<Material>> Materials { get; init; }
+    /// <summary>Built-in materials.</summary>
+    public required MaterialShelf Materials { get; init; }
 
     /// <summary>Table of a magnetisation curve to material.</summary>
     public required Func<Stream, string, Material> ReadMaterial { get; init; }
@@ -33,11 +34,14 @@ internal sealed record Pipeline
     /// <summary>Result to the result file's JSON.</summary>
     public required Action<Stream, SolvedCase> WriteResult { get; init; }
 
-    /// <summary>Pictures of a section and of a solved magnet; null as long as there are none.</summary>
-    public Func<LoadedCase, IReadOnlyList<NamedFile>>? SectionPictures { get; init; }
+    /// <summary>Pictures of a sketch with what was found in it.</summary>
+    public PictureSet<LoadedCase> SketchPictures { get; init; } = new([], _ => []);
 
-    /// <inheritdoc cref="SectionPictures"/>
-    public Func<SolvedCase, IReadOnlyList<NamedFile>>? ResultPictures { get; init; }
+    /// <summary>Pictures of a solved magnet.</summary>
+    public PictureSet<SolvedCase> ResultPictures { get; init; } = new([], _ => []);
+
+    /// <summary>The page of a report as far as the solve itself goes.</summary>
+    public Func<SolvedCase, ReportPage> Page { get; init; } = solved => new ReportPage { Result = ResultOutput.Of(solved) };
 
     /// <summary>Verbs that solve a case and work something out of it; each is registered as it is listed here.</summary>
     public IReadOnlyList<AnalysisStep> Analyses { get; init; } = [];
@@ -47,12 +51,15 @@ internal sealed record Pipeline
     {
         ReadSketch = ReadDxf,
         Cut = CutSection,
-        Materials = BuiltInMaterials,
+        Materials = MaterialShelf.OfLibrary(),
         ReadMaterial = ReadCurve,
         Solve = (magnet, aperture, options, progress, cancellation) =>
             MagnetSolver.Solve(magnet, aperture, options, progress, cancellation),
         WriteResult = ResultOutput.WriteJson,
-        ResultPictures = ResultOutput.Pictures,
+        SketchPictures = CasePictures.OfSketch,
+        ResultPictures = CasePictures.OfSolution,
+        Page = ReportOutput.PageOf,
+        Analyses = [MapStep.Create()],
     };
 
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
@@ -60,13 +67,8 @@ internal sealed record Pipeline
 
     private static SectionReading CutSection(Sketch sketch, SectionRequest request) => Sectioning.Read(sketch, request);
 
-    private static IReadOnlyList<Material> BuiltInMaterials() => [Material.Air, .. MaterialLibrary.Names.Where(n => n != Material.Air.Name).Select(MaterialLibrary.Get)];
-
     private static Material ReadCurve(Stream stream, string name) => MaterialFile.Read(stream, name);
 }
-
-/// <summary>A file to be written: name with extension, and what writes it.</summary>
-internal sealed record NamedFile(string FileName, Action<Stream> Write);
 
 /// <summary>A solved case with all that its result file says.</summary>
 internal sealed record SolvedCase

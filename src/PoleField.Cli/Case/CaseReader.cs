@@ -8,8 +8,8 @@ namespace PoleField.Cli.Case;
 /// <param name="FileExists">Tells whether a file named in the case exists.</param>
 internal sealed record CaseSurroundings(string File, IReadOnlyCollection<string> MaterialNames, Func<string, bool> FileExists)
 {
-    /// <summary>Those of the materials that a coil may be made of.</summary>
-    public IReadOnlyCollection<string> NonMagnetic { get; init; } = ["air"];
+    /// <summary>Tells of a known material whether it carries flux; of the rest a coil may be made.</summary>
+    public Func<string, bool> IsMagnetic { get; init; } = name => name != "air";
 }
 
 /// <summary>A case file read: the case, or everything that is wrong with it.</summary>

@@ -72,7 +72,8 @@ internal static class PartReader
         }
 
         Substance substance = ReadMagnet(table) ?? ReadLinear(table) ?? ReadMaterial(table, around) ?? Unstated(table.At, ampereTurns);
-        bool maySurround = substance is NamedSubstance named && (around.NonMagnetic.Contains(named.Name) || !around.MaterialNames.Contains(named.Name));
+        bool maySurround = ampereTurns is null
+            || (substance is NamedSubstance named && (!around.MaterialNames.Contains(named.Name) || !around.IsMagnetic(named.Name)));
         if (stated.Length == 0 && ampereTurns is null)
         {
             table.Faults.Add(
@@ -82,7 +83,7 @@ internal static class PartReader
                 "Add material = \"...\", relative_permeability, remanence or ampere_turns; material = \"air\" for a hole.");
         }
 
-        if (ampereTurns is not null && stated.Length == 1 && !maySurround)
+        if (stated.Length == 1 && !maySurround)
         {
             table.Faults.Add(
                 table.SpotOf("ampere_turns"), "contradiction", $"{table.Where("ampere_turns")} stands beside {stated[0]}.", "A part is a coil or magnetic, not both.");

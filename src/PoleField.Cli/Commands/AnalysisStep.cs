@@ -1,6 +1,7 @@
 using System.CommandLine;
 using PoleField.Beam;
 using PoleField.Cli.Text;
+using PoleField.Output.Pages;
 
 namespace PoleField.Cli.Commands;
 
@@ -22,7 +23,15 @@ internal sealed record AnalysisStep(string Name, string Description)
     public bool FirstIsJson { get; init; } = true;
 
     public required Func<AnalysisRequest, Analysis> Run { get; init; }
+
+    /// <summary>What it adds to the page of <c>report</c>; null for nothing.</summary>
+    public ReportPart? Report { get; init; }
 }
+
+/// <summary>What an analysis adds to the page of a report.</summary>
+/// <param name="Pictures">Names of all pictures it may add; their files are checked before the solve.</param>
+/// <param name="AddTo">The page with its section; the same page when the case does not ask for it.</param>
+internal sealed record ReportPart(IReadOnlyList<string> Pictures, Func<AnalysisRequest, ReportPage, ReportPage> AddTo);
 
 /// <summary>What an analysis starts from.</summary>
 internal sealed record AnalysisRequest
@@ -32,6 +41,7 @@ internal sealed record AnalysisRequest
     /// <summary>For further solves.</summary>
     public required SolveOptions Options { get; init; }
 
+    /// <summary>The command line; under <c>report</c> it knows no options of the step.</summary>
     public required ParseResult Arguments { get; init; }
 
     public required Action<SolveProgress> Progress { get; init; }

@@ -81,10 +81,7 @@ internal sealed class AnalysisVerb
         }
 
         IReadOnlyList<string> endings = _step.Endings(arguments);
-        string? place = endings.Count > 1 && output is not null && !Path.EndsInDirectorySeparator(output)
-            ? output + Path.DirectorySeparatorChar
-            : output;
-        return [.. endings.Select(e => ResultName.For(_run.CasePath(arguments), e, place))];
+        return [.. ResultName.ForAll(_run.CasePath(arguments), endings, output)];
     }
 
     private void Print(ParseResult arguments, Analysis analysis, List<string> targets)

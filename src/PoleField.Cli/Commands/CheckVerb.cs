@@ -27,6 +27,7 @@ internal sealed class CheckVerb
             Examples =
             [
                 ("polefield check magnet.toml", "parts with areas and loops, healed joints, faults"),
+                ("polefield check magnet.toml --figures pictures/", "also draws the sketch, with faults and healed joints numbered"),
                 ("polefield check magnet.toml --json", "the same for programs"),
             ],
         };
@@ -34,10 +35,7 @@ internal sealed class CheckVerb
         command.Options.Add(verb._json);
         command.Options.Add(verb._out);
         command.Options.Add(verb._force);
-        if (tool.Pipeline.SectionPictures is not null)
-        {
-            command.Options.Add(verb._figures);
-        }
+        command.Options.Add(verb._figures);
 
         tool.SetRun(command, verb.Run);
         return command;
@@ -48,31 +46,23 @@ internal sealed class CheckVerb
         string path = arguments.GetRequiredValue(_case);
         string? target = arguments.GetValue(_out) is { } output ? ResultName.For(path, Ending, output) : null;
         LoadedCase loaded = new CaseLoader(_tool.Pipeline).Load(path);
-        IReadOnlyList<NamedFile> pictures = Pictures(arguments, loaded);
-        string folder = arguments.GetValue(_figures) ?? string.Empty;
+        var pictures = new PictureFiles(arguments.GetValue(_figures), _tool.Terminal.Error);
         using OutputFiles files = OutputFiles.Plan(
-            pictures.Select(p => Path.Combine(folder, p.FileName)).Concat(target is null ? [] : [target]),
-            arguments.GetValue(_force));
+            pictures.Targets(_tool.Pipeline.SketchPictures.Names).Concat(target is null ? [] : [target]), arguments.GetValue(_force));
         Print(arguments, loaded);
         if (target is not null)
         {
             files.Write(target, s => CheckJson.Write(s, loaded));
         }
 
-        foreach (NamedFile picture in pictures)
+        if (pictures.Wanted)
         {
-            cancellation.ThrowIfCancellationRequested();
-            files.Write(Path.Combine(folder, picture.FileName), picture.Write);
+            pictures.Write(files, _tool.Pipeline.SketchPictures.Draw(loaded), cancellation);
         }
 
         files.Commit(cancellation);
         return loaded.HasFaults ? ExitStatus.WrongInput : ExitStatus.Done;
     }
-
-    private IReadOnlyList<NamedFile> Pictures(ParseResult arguments, LoadedCase loaded) =>
-        _tool.Pipeline.SectionPictures is { } draw && arguments.GetValue(_figures) is not null && loaded.Reading is not null
-            ? draw(loaded)
-            : [];
 
     private void Print(ParseResult arguments, LoadedCase loaded)
     {

@@ -50,12 +50,14 @@ internal static class CommandLine
             tool.Verbose,
             CheckVerb.Create(tool),
             SolveVerb.Create(tool),
+            ReportVerb.Create(tool),
         };
         foreach (AnalysisStep step in tool.Pipeline.Analyses)
         {
             root.Subcommands.Add(AnalysisVerb.Create(tool, step));
         }
 
+        root.Subcommands.Add(SketchVerb.Create(tool));
         root.Subcommands.Add(MaterialsVerb.Create(tool));
         root.Subcommands.Add(CompletionVerb.Create(tool));
         HelpOption help = root.Options.OfType<HelpOption>().Single();
@@ -83,7 +85,11 @@ internal static class CommandLine
             }
         }
 
-        string path = command is RootCommand ? "polefield" : $"polefield {command.Name}";
-        error.WriteLine($"  See: {path} --help");
+        if (command is VerbCommand { Subcommands.Count: > 0 } verb)
+        {
+            error.WriteLine($"  {verb.PartsAre.Heading}: {string.Join(", ", verb.Subcommands.Select(c => c.Name))}");
+        }
+
+        error.WriteLine($"  See: {VerbCommand.Path(command)} --help");
     }
 }

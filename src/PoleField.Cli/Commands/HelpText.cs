@@ -40,7 +40,7 @@ internal sealed class HelpText : SynchronousCommandLineAction
     {
         writer.WriteLine("Usage: polefield VERB [CASE.toml] [options]");
         writer.WriteLine();
-        WriteVerbs(writer, root);
+        WriteCommands(writer, root, "Verbs");
         writer.WriteLine();
         writer.WriteLine("See: polefield --help, polefield VERB --help");
     }
@@ -51,6 +51,7 @@ internal sealed class HelpText : SynchronousCommandLineAction
         WriteExamples(
             writer,
             [
+                ("polefield sketch two-wire", "a case to start from"),
                 ("polefield check magnet.toml", "is the case sound?"),
                 ("polefield solve magnet.toml", "field, gradient, uniformity, saturation"),
                 ("polefield materials", "which magnetisation curves are built in"),
@@ -58,7 +59,7 @@ internal sealed class HelpText : SynchronousCommandLineAction
         writer.WriteLine("Usage");
         writer.WriteLine("  polefield VERB [CASE.toml] [options]");
         writer.WriteLine();
-        WriteVerbs(writer, root);
+        WriteCommands(writer, root, "Verbs");
         writer.WriteLine();
         WriteOptions(writer, root.Options);
         WriteHeading(writer, "Exit status");
@@ -74,8 +75,15 @@ internal sealed class HelpText : SynchronousCommandLineAction
         WriteExamples(writer, verb.Examples);
         WriteHeading(writer, "Usage");
         string arguments = string.Concat(verb.Arguments.Select(a => a.Arity.MinimumNumberOfValues > 0 ? $" {a.Name}" : $" [{a.Name}]"));
-        writer.WriteLine($"  polefield {verb.Name}{arguments} [options]");
+        string below = verb.Subcommands.Count > 0 ? $" [{verb.PartsAre.Placeholder}]" : string.Empty;
+        writer.WriteLine($"  {VerbCommand.Path(verb)}{below}{arguments} [options]");
         writer.WriteLine();
+        if (verb.Subcommands.Count > 0)
+        {
+            WriteCommands(writer, verb, verb.PartsAre.Heading);
+            writer.WriteLine();
+        }
+
         if (verb.Arguments.Count > 0)
         {
             WriteHeading(writer, "Arguments");
@@ -87,17 +95,20 @@ internal sealed class HelpText : SynchronousCommandLineAction
             writer.WriteLine();
         }
 
-        WriteOptions(writer, verb.Options.Concat(verb.Parents.OfType<Command>().SelectMany(p => p.Options.Where(o => o.Recursive))));
+        WriteOptions(writer, verb.Options.Concat(Above(verb).SelectMany(p => p.Options.Where(o => o.Recursive))));
         foreach (string note in verb.Notes)
         {
             WriteParagraph(writer, note);
         }
     }
 
-    private static void WriteVerbs(TextWriter writer, Command root)
+    private static IEnumerable<Command> Above(Command command) =>
+        command.Parents.OfType<Command>().SelectMany(p => Above(p).Prepend(p));
+
+    private static void WriteCommands(TextWriter writer, Command above, string heading)
     {
-        WriteHeading(writer, "Verbs");
-        foreach (Command verb in root.Subcommands.Where(c => !c.Hidden))
+        WriteHeading(writer, heading);
+        foreach (Command verb in above.Subcommands.Where(c => !c.Hidden))
         {
             WriteEntry(writer, verb.Name, verb.Description ?? string.Empty);
         }
@@ -142,7 +153,7 @@ internal sealed class HelpText : SynchronousCommandLineAction
 
     private static void WriteEntry(TextWriter writer, string name, string description)
     {
-        string left = $"  {name}".PadRight(LeftColumn - 1) + " ";
+        string left = $"  {name}".PadRight(LeftColumn - 2) + "  ";
         if (left.Length > LeftColumn)
         {
             writer.WriteLine(left.TrimEnd());

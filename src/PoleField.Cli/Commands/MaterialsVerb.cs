@@ -2,8 +2,10 @@ using System.CommandLine;
 using System.Text;
 using System.Text.Json;
 using PoleField.Cli.Case;
+using PoleField.Cli.Files;
 using PoleField.Cli.Text;
 using PoleField.Materials;
+using PoleField.Output.Figures;
 
 namespace PoleField.Cli.Commands;
 
@@ -13,6 +15,8 @@ internal sealed class MaterialsVerb
     private readonly Tool _tool;
     private readonly Option<bool> _json = CommonOptions.Json();
     private readonly Option<string?> _check = new("--check") { Description = "Check a curve's table and say what is wrong with it.", HelpName = "FILE" };
+    private readonly Option<string?> _figures = new("--figures") { Description = "Also plot each curve shown as SVG and PNG into this folder.", HelpName = "DIR" };
+    private readonly Option<bool> _force = CommonOptions.Force();
     private readonly Argument<string?> _which = new("NAME|FILE")
     {
         Description = "A built-in name, or a CSV table of H in A/m and B in T. Without: lists all.",
@@ -31,16 +35,19 @@ internal sealed class MaterialsVerb
                 ("polefield materials", "the built-in materials"),
                 ("polefield materials my-steel.csv", "a curve as PoleField reads it"),
                 ("polefield materials --check my-steel.csv", "is the table sound?"),
+                ("polefield materials pure-iron --figures pictures/", "the curve as a picture"),
             ],
         };
         command.Arguments.Add(verb._which);
         command.Options.Add(verb._check);
         command.Options.Add(verb._json);
-        tool.SetRun(command, (arguments, _) => verb.Run(arguments));
+        command.Options.Add(verb._figures);
+        command.Options.Add(verb._force);
+        tool.SetRun(command, verb.Run);
         return command;
     }
 
-    private int Run(ParseResult arguments)
+    private int Run(ParseResult arguments, CancellationToken cancellation)
     {
         bool json = arguments.GetValue(_json);
         if (arguments.GetValue(_check) is { } file)
@@ -48,17 +55,26 @@ internal sealed class MaterialsVerb
             return Check(arguments, file, json);
         }
 
-        IReadOnlyList<Material> builtIn = _tool.Pipeline.Materials();
-        if (arguments.GetValue(_which) is { } which)
+        MaterialShelf shelf = _tool.Pipeline.Materials;
+        string? which = arguments.GetValue(_which);
+        Material[] shown = which is null ? [.. shelf.Names.Select(shelf.Get)] : [Find(which, shelf)];
+        WritePictures(arguments, shown, cancellation);
+        Print(arguments, shown, single: which is not null, json);
+        return ExitStatus.Done;
+    }
+
+    private void Print(ParseResult arguments, Material[] shown, bool single, bool json)
+    {
+        if (single)
         {
-            Show(arguments, Find(which, builtIn), json);
+            Show(arguments, shown[0], json);
         }
         else if (json)
         {
             WriteJson(w =>
             {
                 w.WriteStartArray();
-                foreach (Material material in builtIn)
+                foreach (Material material in shown)
                 {
                     MaterialTables.WriteJson(w, material, withTable: false);
                 }
@@ -68,10 +84,32 @@ internal sealed class MaterialsVerb
         }
         else
         {
-            MaterialTables.WriteList(_tool.Terminal.Out, builtIn, _tool.OutInk(arguments));
+            MaterialTables.WriteList(_tool.Terminal.Out, shown, _tool.OutInk(arguments));
+        }
+    }
+
+    // Air and the like have nothing to plot.
+    private void WritePictures(ParseResult arguments, IEnumerable<Material> shown, CancellationToken cancellation)
+    {
+        var pictures = new PictureFiles(arguments.GetValue(_figures), _tool.Terminal.Error);
+        if (!pictures.Wanted)
+        {
+            return;
         }
 
-        return ExitStatus.Done;
+        Figure[] figures = [.. shown.Where(m => m.IsMagnetic).Select(Plot)];
+        using OutputFiles files = OutputFiles.Plan(pictures.Targets(figures.Select(f => f.Name)), arguments.GetValue(_force));
+        pictures.Write(files, figures, cancellation);
+        files.Commit(cancellation);
+    }
+
+    private static Figure Plot(Material material)
+    {
+        IReadOnlyList<BhRow> rows = material.Law is BhCurve curve ? curve.Nodes : [];
+        return MaterialFigure.Draw(material, [.. rows.Select(r => (r.FieldStrength, r.FluxDensity))]) with
+        {
+            Name = "material-" + Path.GetFileNameWithoutExtension(material.Name),
+        };
     }
 
     private int Check(ParseResult arguments, string file, bool json)
@@ -89,7 +127,7 @@ internal sealed class MaterialsVerb
 
         if (json)
         {
-            WriteJson(w => WriteVerdict(w, []));
+            WriteJson(w => WriteVerdict(w, material.Findings));
         }
         else if (!arguments.GetValue(_tool.Quiet))
         {
@@ -112,11 +150,11 @@ internal sealed class MaterialsVerb
         }
     }
 
-    private Material Find(string which, IReadOnlyList<Material> builtIn)
+    private Material Find(string which, MaterialShelf shelf)
     {
-        if (builtIn.FirstOrDefault(m => m.Name == which) is { } known)
+        if (shelf.Names.Contains(which))
         {
-            return known;
+            return shelf.Get(which);
         }
 
         return File.Exists(which)
@@ -127,7 +165,7 @@ internal sealed class MaterialsVerb
                     Severity.Fault,
                     "unknown-material",
                     $"\"{which}\" is no built-in material and no file.",
-                    NearestName.Advice(which, [.. builtIn.Select(m => m.Name)])),
+                    NearestName.Advice(which, shelf.Names)),
             ]);
     }
 

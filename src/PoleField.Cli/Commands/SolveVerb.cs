@@ -32,6 +32,7 @@ internal sealed class SolveVerb
             [
                 ("polefield solve magnet.toml", "prints the tables, writes magnet.result.json"),
                 ("polefield solve magnet.toml --accuracy 1e-5 -o results/", "finer, into a folder"),
+                ("polefield solve magnet.toml --figures pictures/", "also draws field lines around the magnet and the beam"),
                 ("polefield solve magnet.toml --json | jq .beam", "the result for programs; no file unless -o names one"),
             ],
             Notes =
@@ -41,10 +42,7 @@ internal sealed class SolveVerb
             ],
         };
         verb._run.AddTo(command, withJson: true);
-        if (tool.Pipeline.ResultPictures is not null)
-        {
-            command.Options.Add(verb._figures);
-        }
+        command.Options.Add(verb._figures);
 
         tool.SetRun(command, verb.Run);
         return command;
@@ -57,7 +55,8 @@ internal sealed class SolveVerb
             return ExitStatus.WrongInput;
         }
 
-        using OutputFiles files = PlanFiles(arguments, out string? target);
+        var pictures = new PictureFiles(arguments.GetValue(_figures), _tool.Terminal.Error);
+        using OutputFiles files = PlanFiles(arguments, pictures, out string? target);
         SolveOptions options = _run.OptionsOf(arguments, loaded);
         SolvedCase result;
         using (ProgressLine progress = _run.Progress(arguments, options))
@@ -70,32 +69,23 @@ internal sealed class SolveVerb
             files.Write(target, s => _tool.Pipeline.WriteResult(s, result));
         }
 
-        WritePictures(arguments, files, result, cancellation);
+        if (pictures.Wanted)
+        {
+            pictures.Write(files, _tool.Pipeline.ResultPictures.Draw(result), cancellation);
+        }
+
         files.Commit(cancellation);
         Print(arguments, result, target);
         return result.AllMet ? ExitStatus.Done : ExitStatus.NotMet;
     }
 
-    private OutputFiles PlanFiles(ParseResult arguments, out string? target)
+    private OutputFiles PlanFiles(ParseResult arguments, PictureFiles pictures, out string? target)
     {
         string? output = _run.Out(arguments);
         target = output is null && _run.Json(arguments) ? null : ResultName.For(_run.CasePath(arguments), Ending, output);
         bool replaceable = output is null && target is not null && ResultName.IsOwn(target, ResultFormat);
-        return OutputFiles.Plan(target is null ? [] : [target], _run.Force(arguments), replaceable ? [target!] : []);
-    }
-
-    private void WritePictures(ParseResult arguments, OutputFiles files, SolvedCase result, CancellationToken cancellation)
-    {
-        if (_tool.Pipeline.ResultPictures is not { } draw || arguments.GetValue(_figures) is not { } folder)
-        {
-            return;
-        }
-
-        foreach (NamedFile picture in draw(result))
-        {
-            cancellation.ThrowIfCancellationRequested();
-            files.Write(Path.Combine(folder, picture.FileName), picture.Write);
-        }
+        IEnumerable<string> drawn = pictures.Targets(_tool.Pipeline.ResultPictures.Names);
+        return OutputFiles.Plan(target is null ? drawn : drawn.Prepend(target), _run.Force(arguments), replaceable ? [target!] : []);
     }
 
     private void Print(ParseResult arguments, SolvedCase result, string? target)

@@ -1,5 +1,7 @@
 using System.CommandLine;
 using PoleField.Cli.Text;
+using PoleField.Magnetostatics;
+using PoleField.Meshing;
 
 namespace PoleField.Cli.Commands;
 
@@ -56,6 +58,16 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
         {
             FindingText.Write(terminal.Error, e.Findings, ErrorInk(arguments));
             return ExitStatus.WrongInput;
+        }
+        catch (MeshingException e)
+        {
+            FindingText.Write(terminal.Error, [SolverFaults.Of(e)], ErrorInk(arguments));
+            return ExitStatus.WrongInput;
+        }
+        catch (FieldNotConvergedException e)
+        {
+            SolverFaults.Write(terminal.Error, e);
+            return ExitStatus.NotMet;
         }
         catch (OperationCanceledException)
         {

@@ -23,6 +23,23 @@ internal static class ResultName
         return folder ? Path.Combine(output, name) : output;
     }
 
+    /// <summary>
+    /// The files of several endings. A name after <c>-o</c> whose extension is that of one of them names all of them;
+    /// any other is a folder.
+    /// </summary>
+    public static IEnumerable<string> ForAll(string casePath, IReadOnlyList<string> endings, string? output)
+    {
+        if (endings.Count == 1 || output is null)
+        {
+            return endings.Select(e => For(casePath, e, output));
+        }
+
+        bool stem = !Directory.Exists(output) && endings.Any(e => Path.GetExtension(e).Equals(Path.GetExtension(output), StringComparison.OrdinalIgnoreCase));
+        return stem
+            ? endings.Select(e => Path.ChangeExtension(output, Path.GetExtension(e)))
+            : endings.Select(e => For(casePath, e, Path.EndsInDirectorySeparator(output) ? output : output + Path.DirectorySeparatorChar));
+    }
+
     /// <summary>True when the file is a result of the given format, written by PoleField earlier.</summary>
     public static bool IsOwn(string path, string format)
     {

@@ -2,7 +2,6 @@ using System.Reflection;
 using PoleField.Beam;
 using PoleField.Cli.Case;
 using PoleField.Cli.Text;
-using PoleField.Output.Figures;
 using PoleField.Output.Results;
 
 namespace PoleField.Cli.Files;
@@ -36,22 +35,6 @@ internal static class ResultOutput
             Cautions = result.Cautions,
             Warnings = [.. result.Warnings.Select(w => Warning(w, result.Case.DrawingUnit))],
         };
-    }
-
-    /// <summary>The pictures of a solved case, each as SVG and PNG.</summary>
-    public static IReadOnlyList<NamedFile> Pictures(SolvedCase result)
-    {
-        FieldScene scene = FieldScene.Of(result.Solved);
-        return [.. Files([FieldFigure.Whole(scene), FieldFigure.Beam(scene)])];
-    }
-
-    private static IEnumerable<NamedFile> Files(IEnumerable<Figure> figures)
-    {
-        foreach (Figure figure in figures)
-        {
-            yield return new NamedFile(figure.Name + ".svg", s => FigureWriter.Svg(figure, s));
-            yield return new NamedFile(figure.Name + ".png", s => FigureWriter.Png(figure, s));
-        }
     }
 
     private static RequirementResult Requirement(Verdict verdict)

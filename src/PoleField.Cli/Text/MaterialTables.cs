@@ -31,8 +31,13 @@ internal static class MaterialTables
     public static void WriteOne(TextWriter writer, Material material, Ink ink)
     {
         writer.WriteLine(ink.Strong(material.Name));
-        foreach ((string name, string text) in new[] { ("is", material.Description), ("source", material.Source), ("state", material.State) })
+        foreach ((string name, string text) in new[] { ("is", material.Description), ("source", material.Source), ("state", material.State), ("mind", material.Caution ?? string.Empty) })
         {
+            if (text.Length == 0)
+            {
+                continue;
+            }
+
             foreach (string line in Wrapped.Lines(text, Width, $"  {name,-7} "))
             {
                 writer.WriteLine(line);
@@ -48,6 +53,12 @@ internal static class MaterialTables
         }
 
         BeamTables.WriteTable(writer, table, ink);
+        if (material.Findings.Count > 0)
+        {
+            writer.WriteLine(ink.Strong("Found in the table"));
+            FindingText.Write(writer, CheckTables.Sorted(material.Findings), ink);
+            writer.WriteLine();
+        }
     }
 
     public static void WriteJson(Utf8JsonWriter json, Material material, bool withTable)
@@ -57,6 +68,14 @@ internal static class MaterialTables
         json.WriteString("description", material.Description);
         json.WriteString("source", material.Source);
         json.WriteString("state", material.State);
+        json.WriteString("caution", material.Caution);
+        json.WriteStartArray("findings");
+        foreach (Finding finding in material.Findings)
+        {
+            json.WriteStringValue($"{finding.Text} {finding.Fix}".Trim());
+        }
+
+        json.WriteEndArray();
         json.WriteBoolean("linear", material.Law.IsLinear);
         if (double.IsFinite(material.Law.SaturationPolarisation))
         {

@@ -1,5 +1,6 @@
 using PoleField.Beam;
 using PoleField.Drawing;
+using PoleField.Geometry;
 using PoleField.Magnetostatics;
 
 namespace PoleField.Output.Figures;
@@ -26,7 +27,7 @@ public sealed record FieldScene
     public string Caption { get; init; } = "";
 
     /// <summary>The scene of a solved magnet; each element is cut into <paramref name="cuts"/>² triangles.</summary>
-    public static FieldScene Of(SolvedMagnet solved, int cuts = 4)
+    public static FieldScene Of(SolvedMagnet solved, int cuts = 6)
     {
         Magnet magnet = solved.Solution.Magnet;
         BeamReport report = solved.Report;
@@ -34,13 +35,44 @@ public sealed record FieldScene
         return new FieldScene
         {
             Section = magnet.Section,
-            Triangles = [.. solved.Solution.Triangles(cuts)],
+            Triangles = [.. solved.Solution.Triangles(cuts), .. Beyond(solved.Solution)],
             AmpereTurns = [.. magnet.Roles.Select(r => r.AmpereTurns)],
             IsIron = [.. magnet.Roles.Select(r => r.Kind == "iron")],
             Aperture = solved.Field.Aperture,
             Caption = $"At the beam (y = {FigureStyle.Number(1e3 * beam.At.Y)} mm, z = {FigureStyle.Number(1e3 * beam.At.Z)} mm): "
                 + $"|B| = {FigureStyle.Number(beam.Field)} T, d|B|/dz = {FigureStyle.Number(beam.Gradient)} T/m.",
         };
+    }
+
+    // A ring around the circle that is meshed, so that the corners of a view are not left empty.
+    private static IEnumerable<FieldTriangle> Beyond(FieldSolution solution)
+    {
+        if (solution.Mesh.Circle is not { } circle)
+        {
+            return [];
+        }
+
+        const int around = 360, outwards = 30;
+        const double first = 0.998, last = 2; // radii of the ring over that of the circle; it overlaps a little so that no pixel stays empty
+        FieldSample?[] samples = new FieldSample?[(around + 1) * (outwards + 1)];
+        for (int i = 0; i < samples.Length; i++)
+        {
+            samples[i] = solution.At(Place(i));
+        }
+
+        return Enumerable.Range(0, around * outwards).SelectMany(k =>
+        {
+            int a = (k / around * (around + 1)) + (k % around), b = a + 1, c = a + around + 1, d = c + 1;
+            return (FieldTriangle?[])[Triangle(a, c, b), Triangle(b, c, d)];
+        }).OfType<FieldTriangle>();
+
+        Point Place(int i) => circle.Centre + Point.Polar(
+            circle.Radius * (first + ((last - first) * (i / (around + 1)) / outwards)), Math.Tau * (i % (around + 1)) / around);
+
+        FieldTriangle? Triangle(int i, int j, int k) =>
+            samples[i] is FieldSample s && samples[j] is FieldSample t && samples[k] is FieldSample u
+                ? new FieldTriangle(Place(i), Place(j), Place(k), s, t, u, CrossSection.Air)
+                : null;
     }
 
     /// <summary>Ampere-turns of a region: those of its part, opposite in a mirror image.</summary>

@@ -30,7 +30,7 @@ internal readonly record struct PlotRoom(double Width, double Height, double Lef
 internal sealed class FigureFrame : Annotation
 {
     private const double Edge = 14;
-    private const double KeySample = 30;
+    private const double KeySample = 27; // ends with a whole dash of the aperture's pen
     private readonly FrameText _text;
     private readonly IReadOnlyList<string> _title;
     private readonly List<IReadOnlyList<KeyEntry>> _keyRows;
@@ -88,7 +88,7 @@ internal sealed class FigureFrame : Annotation
         double y = Edge;
         foreach (string line in _title)
         {
-            Write(rc, line, Edge, y, FigureStyle.TitleSize, FontWeights.Bold);
+            Write(rc, line, y, isTitle: true);
             y += 20;
         }
 
@@ -101,7 +101,7 @@ internal sealed class FigureFrame : Annotation
         double foot = PlotModel.Height - FootHeight;
         foreach (string line in _foot)
         {
-            Write(rc, line, Edge, foot, FigureStyle.SmallSize, FontWeights.Normal);
+            Write(rc, line, foot, isTitle: false);
             foot += FigureStyle.LineHeight;
         }
     }
@@ -148,6 +148,10 @@ internal sealed class FigureFrame : Annotation
         return rows;
     }
 
-    private static void Write(IRenderContext rc, string text, double x, double y, double size, double weight) =>
-        rc.DrawText(new ScreenPoint(x, y), text, FigureStyle.Ink, FigureStyle.Font, size, weight, 0, HorizontalAlignment.Left, VerticalAlignment.Top);
+    private static void Write(IRenderContext rc, string text, double y, bool isTitle)
+    {
+        double size = isTitle ? FigureStyle.TitleSize : FigureStyle.SmallSize;
+        double weight = isTitle ? FontWeights.Bold : FontWeights.Normal;
+        rc.DrawText(new ScreenPoint(Edge, y), text, FigureStyle.Ink, FigureStyle.Font, size, weight, 0, HorizontalAlignment.Left, VerticalAlignment.Top);
+    }
 }

@@ -25,7 +25,8 @@ public static class GradientMapFigure
         Box view = box.Inflated(0.03 * Math.Min(box.Width, box.Height));
         double height = Math.Clamp(PlotWidth * view.Height / view.Width, SmallestHeight, LargestHeight);
         double stretch = height / view.Height / (PlotWidth / view.Width);
-        double[,] nodes = Sample(aperture, values, gradient.Mean, Columns, (int)Math.Max(24, Columns * height / PlotWidth));
+        int rows = (int)Math.Max(24, Columns * height / PlotWidth);
+        double[,] nodes = Sample(aperture, p => 100 * ((values(p).Gradient / gradient.Mean) - 1), rows);
         double most = Largest(nodes);
         double step = FigureStyle.NiceStep(Math.Max(2 * most, 1e-9) / 7);
 
@@ -45,7 +46,7 @@ public static class GradientMapFigure
                 Caption = Caption(gradient, stretch),
                 Key =
                 [
-                    new("mean", MeanPen), new("above the mean", FigureStyle.Contour), new("below the mean", BelowPen),
+                    new("mean", MeanPen), new("stronger than the mean", FigureStyle.Contour), new("weaker than the mean", BelowPen),
                 ],
             },
             new PlotRoom(PlotWidth, height, Right: ColourBar.Room + 8));
@@ -84,8 +85,9 @@ public static class GradientMapFigure
     }
 
     // Deviation in per cent at node i, j of a grid that spans the aperture's box; not a number outside the aperture.
-    private static double[,] Sample(Aperture aperture, Func<Point, BeamValues> values, double mean, int columns, int rows)
+    private static double[,] Sample(Aperture aperture, Func<Point, double> deviation, int rows)
     {
+        const int columns = Columns;
         Box box = aperture.Outline.Bounds;
         double[,] nodes = new double[columns + 1, rows + 1];
         for (int i = 0; i <= columns; i++)
@@ -95,7 +97,7 @@ public static class GradientMapFigure
                 Point p = new(
                     box.Min.Y + (box.Width * Math.Clamp(i / (double)columns, Inset, 1 - Inset)),
                     box.Min.Z + (box.Height * Math.Clamp(j / (double)rows, Inset, 1 - Inset)));
-                nodes[i, j] = aperture.Outline.Contains(p) ? 100 * ((values(p).Gradient / mean) - 1) : double.NaN;
+                nodes[i, j] = aperture.Outline.Contains(p) ? deviation(p) : double.NaN;
             }
         }
 

@@ -15,7 +15,7 @@ internal static class LabelPlaces
     public static IReadOnlyList<LabelPlace> Find(FieldRaster raster)
     {
         int columns = raster.Columns, rows = raster.Rows;
-        ReadOnlySpan<int> regions = raster.Regions;
+        int[] regions = raster.Regions.ToArray();
         double[] distance = DistanceToOther(regions, columns, rows);
         SortedDictionary<int, (double Radius, double Balance, int Pixel)> best = [];
         Dictionary<int, (double Column, double Row, int Count)> middles = Middles(regions, columns);
@@ -47,7 +47,7 @@ internal static class LabelPlaces
 
     private static double Square(double x) => x * x;
 
-    private static Dictionary<int, (double Column, double Row, int Count)> Middles(ReadOnlySpan<int> regions, int columns)
+    private static Dictionary<int, (double Column, double Row, int Count)> Middles(int[] regions, int columns)
     {
         Dictionary<int, (double Column, double Row, int Count)> sums = [];
         for (int i = 0; i < regions.Length; i++)
@@ -60,38 +60,41 @@ internal static class LabelPlaces
     }
 
     // Two-pass chamfer distance (Borgefors 1986, weights 1 and √2) to a pixel of another region or the edge of the view.
-    private static double[] DistanceToOther(ReadOnlySpan<int> regions, int columns, int rows)
+    private static double[] DistanceToOther(int[] regions, int columns, int rows)
     {
         double[] d = new double[regions.Length];
         Array.Fill(d, double.MaxValue);
-        for (int pass = 0; pass < 2; pass++)
+        for (int k = 0; k < d.Length; k++)
         {
-            int sign = pass == 0 ? 1 : -1;
-            for (int k = 0; k < d.Length; k++)
-            {
-                int i = pass == 0 ? k : d.Length - 1 - k;
-                int column = i % columns, row = i / columns;
-                double near = d[i];
-                near = Math.Min(near, Step(regions, d, i, column - sign, row, 1, columns, rows));
-                near = Math.Min(near, Step(regions, d, i, column, row - sign, 1, columns, rows));
-                near = Math.Min(near, Step(regions, d, i, column - sign, row - sign, Math.Sqrt(2), columns, rows));
-                near = Math.Min(near, Step(regions, d, i, column + sign, row - sign, Math.Sqrt(2), columns, rows));
-                d[i] = near;
-            }
+            Relax(k, 1);
+        }
+
+        for (int k = d.Length - 1; k >= 0; k--)
+        {
+            Relax(k, -1);
         }
 
         return d;
-    }
 
-    private static double Step(
-        ReadOnlySpan<int> regions, double[] d, int from, int column, int row, double length, int columns, int rows)
-    {
-        if (column < 0 || column >= columns || row < 0 || row >= rows)
+        // From the neighbours already visited: to the left and above, then to the right and below.
+        void Relax(int pixel, int sign)
         {
-            return length;
+            int column = pixel % columns, row = pixel / columns;
+            double straight = Math.Min(Through(pixel, column - sign, row, 1), Through(pixel, column, row - sign, 1));
+            double slanted = Math.Min(
+                Through(pixel, column - sign, row - sign, Math.Sqrt(2)), Through(pixel, column + sign, row - sign, Math.Sqrt(2)));
+            d[pixel] = Math.Min(d[pixel], Math.Min(straight, slanted));
         }
 
-        int to = (row * columns) + column;
-        return regions[to] != regions[from] ? length : d[to] == double.MaxValue ? double.MaxValue : d[to] + length;
+        double Through(int pixel, int column, int row, double length)
+        {
+            if (column < 0 || column >= columns || row < 0 || row >= rows)
+            {
+                return length;
+            }
+
+            int neighbour = (row * columns) + column;
+            return regions[neighbour] == regions[pixel] ? d[neighbour] + length : length;
+        }
     }
 }

@@ -16,11 +16,16 @@ internal sealed record LevelLine(double Level, IReadOnlyList<Point> Points);
 /// </summary>
 internal static class LevelLines
 {
-    /// <summary>Traces all levels that are multiples of a step, shifted by an offset.</summary>
+    /// <summary>Traces all levels that are multiples of a step.</summary>
     /// <param name="triangles">Triangles; neighbours meet edge to edge.</param>
     /// <param name="step">Distance of levels, &gt; 0.</param>
     /// <param name="tolerance">Largest distance, metres, between a line and its simplified form.</param>
-    public static IReadOnlyList<LevelLine> Trace(IEnumerable<ValueTriangle> triangles, double step, double tolerance)
+    /// <param name="join">
+    /// Ends closer than this, metres, are joined; null for values that are the same on both sides of an edge. Values that jump
+    /// a little from element to element, such as |B|, need about the width of a line.
+    /// </param>
+    public static IReadOnlyList<LevelLine> Trace(
+        IEnumerable<ValueTriangle> triangles, double step, double tolerance, double? join = null)
     {
         SortedDictionary<long, LineChainer> chains = [];
         foreach (ValueTriangle t in triangles)
@@ -41,35 +46,52 @@ internal static class LevelLines
 
         return
         [
-            .. chains.SelectMany(c => c.Value.Lines().Select(points => new LevelLine(c.Key * step, Simplify(points, tolerance)))),
+            .. chains.SelectMany(c => Joined(c.Value, join).Select(points => new LevelLine(c.Key * step, Simplify(points, tolerance)))),
         ];
+    }
+
+    private static IEnumerable<IReadOnlyList<Point>> Joined(LineChainer pieces, double? join)
+    {
+        if (join is not double distance)
+        {
+            return pieces.Lines();
+        }
+
+        LineChainer joined = new(distance);
+        foreach (IReadOnlyList<Point> piece in pieces.Lines())
+        {
+            joined.Add(piece);
+        }
+
+        return joined.Lines();
     }
 
     private static void Cut(in ValueTriangle t, double level, LineChainer chain)
     {
+        ReadOnlySpan<(Point At, double Value)> corners = [(t.P0, t.V0), (t.P1, t.V1), (t.P2, t.V2)];
         Span<Point> ends = stackalloc Point[3];
         int count = 0;
-        Cross(t.P0, t.V0, t.P1, t.V1, level, ends, ref count);
-        Cross(t.P1, t.V1, t.P2, t.V2, level, ends, ref count);
-        Cross(t.P2, t.V2, t.P0, t.V0, level, ends, ref count);
+        for (int k = 0; k < 3; k++)
+        {
+            (Point At, double Value) a = corners[k], b = corners[(k + 1) % 3];
+            if ((a.Value >= level) != (b.Value >= level))
+            {
+                ends[count++] = Crossing(a, b, level);
+            }
+        }
+
         if (count == 2)
         {
-            chain.Add(ends[0], ends[1]);
+            chain.Add([ends[0], ends[1]]);
         }
     }
 
-    private static void Cross(Point p, double vp, Point q, double vq, double level, Span<Point> ends, ref int count)
+    // From the lower place always, so that both triangles of an edge find the same point.
+    private static Point Crossing((Point At, double Value) a, (Point At, double Value) b, double level)
     {
-        if ((vp >= level) == (vq >= level))
-        {
-            return;
-        }
-
-        // From the lower place always, so that both triangles of an edge find the same point.
-        bool swap = p.Y > q.Y || (p.Y == q.Y && p.Z > q.Z);
-        ends[count++] = swap
-            ? Point.Between(q, p, (level - vq) / (vp - vq))
-            : Point.Between(p, q, (level - vp) / (vq - vp));
+        bool swap = a.At.Y > b.At.Y || (a.At.Y == b.At.Y && a.At.Z > b.At.Z);
+        (Point At, double Value) from = swap ? b : a, to = swap ? a : b;
+        return Point.Between(from.At, to.At, (level - from.Value) / (to.Value - from.Value));
     }
 
     /// <summary>Leaves out points that lie within the tolerance of the line without them (Douglas and Peucker 1973).</summary>

@@ -2,66 +2,82 @@ using PoleField.Geometry;
 
 namespace PoleField.Output.Figures;
 
-/// <summary>Joins loose segments to polylines; ends closer than a tolerance are one point. The result depends on the order of adding only.</summary>
+/// <summary>Joins loose pieces of line to polylines; ends closer than a tolerance are one point. The result depends on the order of adding only.</summary>
 internal sealed class LineChainer(double tolerance)
 {
     private readonly List<Point> _nodes = [];
-    private readonly List<List<int>> _segmentsAt = []; // segments at node n
-    private readonly List<(int A, int B)> _segments = [];
-    private readonly Dictionary<(long, long), int> _cells = []; // node in a cell of the size of the tolerance
+    private readonly List<List<int>> _piecesAt = []; // pieces at node n
+    private readonly List<(int A, int B, IReadOnlyList<Point> Points)> _pieces = [];
+    private readonly List<IReadOnlyList<Point>> _closed = [];
+    private readonly Dictionary<(long, long), int> _newestIn = []; // newest node in a cell of the size of the tolerance
+    private readonly List<int> _olderInCell = []; // node before node n in its cell, or −1
 
-    public void Add(Point a, Point b)
+    /// <summary>Adds a piece of two points or more; a straight one shorter than the tolerance is dropped.</summary>
+    public void Add(IReadOnlyList<Point> piece)
     {
-        int from = Node(a);
-        int to = Node(b);
-        if (from == to)
+        int from = Node(piece[0]);
+        int to = Node(piece[^1]);
+        if (from != to)
         {
-            return;
+            _piecesAt[from].Add(_pieces.Count);
+            _piecesAt[to].Add(_pieces.Count);
+            _pieces.Add((from, to, piece));
         }
-
-        _segmentsAt[from].Add(_segments.Count);
-        _segmentsAt[to].Add(_segments.Count);
-        _segments.Add((from, to));
+        else if (piece.Count > 2)
+        {
+            _closed.Add(piece);
+        }
     }
 
     /// <summary>The polylines: open ones first, then closed ones.</summary>
     public IEnumerable<IReadOnlyList<Point>> Lines()
     {
-        bool[] used = new bool[_segments.Count];
+        bool[] used = new bool[_pieces.Count];
         for (int pass = 0; pass < 2; pass++)
         {
             for (int node = 0; node < _nodes.Count; node++)
             {
-                if (pass == 0 && _segmentsAt[node].Count % 2 == 0)
+                if (pass == 0 && _piecesAt[node].Count % 2 == 0)
                 {
                     continue;
                 }
 
-                while (_segmentsAt[node].Exists(s => !used[s]))
+                while (_piecesAt[node].Exists(s => !used[s]))
                 {
                     yield return Walk(node, used);
                 }
             }
+        }
+
+        foreach (IReadOnlyList<Point> line in _closed)
+        {
+            yield return line;
         }
     }
 
     private List<Point> Walk(int node, bool[] used)
     {
         List<Point> line = [_nodes[node]];
-        int segment = _segmentsAt[node].Find(s => !used[s]);
+        int piece = _piecesAt[node].Find(s => !used[s]);
         while (true)
         {
-            used[segment] = true;
-            (int a, int b) = _segments[segment];
-            node = node == a ? b : a;
+            used[piece] = true;
+            (int a, int b, IReadOnlyList<Point> points) = _pieces[piece];
+            bool forwards = node == a;
+            node = forwards ? b : a;
+            for (int i = 1; i < points.Count - 1; i++)
+            {
+                line.Add(points[forwards ? i : points.Count - 1 - i]);
+            }
+
             line.Add(_nodes[node]);
-            int next = _segmentsAt[node].FindIndex(s => !used[s]);
+            int next = _piecesAt[node].FindIndex(s => !used[s]);
             if (next < 0)
             {
                 return line;
             }
 
-            segment = _segmentsAt[node][next];
+            piece = _piecesAt[node][next];
         }
     }
 
@@ -69,20 +85,28 @@ internal sealed class LineChainer(double tolerance)
     {
         long column = (long)Math.Floor(p.Y / tolerance);
         long row = (long)Math.Floor(p.Z / tolerance);
-        for (long dc = -1; dc <= 1; dc++)
+        (double nearest, int found) = (tolerance, -1);
+        for (long c = column - 1; c <= column + 1; c++)
         {
-            for (long dr = -1; dr <= 1; dr++)
+            for (long r = row - 1; r <= row + 1; r++)
             {
-                if (_cells.TryGetValue((column + dc, row + dr), out int found) && _nodes[found].DistanceTo(p) <= tolerance)
+                for (int n = _newestIn.GetValueOrDefault((c, r), -1); n >= 0; n = _olderInCell[n])
                 {
-                    return found;
+                    double distance = _nodes[n].DistanceTo(p);
+                    (nearest, found) = distance <= nearest ? (distance, n) : (nearest, found);
                 }
             }
         }
 
+        if (found >= 0)
+        {
+            return found;
+        }
+
+        _olderInCell.Add(_newestIn.GetValueOrDefault((column, row), -1));
+        _newestIn[(column, row)] = _nodes.Count;
         _nodes.Add(p);
-        _segmentsAt.Add([]);
-        _cells[(column, row)] = _nodes.Count - 1;
+        _piecesAt.Add([]);
         return _nodes.Count - 1;
     }
 }

@@ -13,24 +13,24 @@ public static class SaturationFigure
     /// <summary>Draws |B| in the iron parts; air and coils stay white.</summary>
     public static Figure Draw(FieldScene scene)
     {
-        Box seen = scene.Section.Bounds.Inflated(0.03 * scene.Section.Bounds.Diagonal);
-        double height = Math.Clamp(PlotWidth * seen.Height / seen.Width, 300, 700);
+        Box seen = SectionDrawing.WholeView(scene.Section, scene.Aperture);
+        double height = Math.Clamp(PlotWidth * seen.Height / seen.Width, 220, 700);
         Box view = SectionDrawing.View(seen, PlotWidth / height);
         double point = view.Width / PlotWidth;
         FieldTriangle[] iron = [.. scene.Triangles.Where(t => IsIron(scene, t.Region))];
         FieldRaster raster = FieldRaster.OfMagnitude(iron, view, (int)(PlotWidth * PixelsPerPoint));
-        (double worst, Point at, int region) = Worst(iron);
-        double top = Math.Max(Math.Min(worst, 1.03 * raster.Quantile(0.999)), 1e-6); // a sharp corner must not set the scale
+        Peak peak = Worst(iron);
+        double top = Math.Max(Math.Min(peak.Field, 1.03 * raster.Quantile(0.999)), 1e-6); // a sharp corner must not set the scale
         double step = FigureStyle.NiceStep(top / 4);
         IReadOnlyList<LevelLine> lines = LevelLines.Trace(
-            iron.Select(t => new ValueTriangle(t.P0, t.P1, t.P2, t.S0.Magnitude, t.S1.Magnitude, t.S2.Magnitude)), step, 0.15 * point);
+            iron.Select(t => new ValueTriangle(t.P0, t.P1, t.P2, t.S0.Magnitude, t.S1.Magnitude, t.S2.Magnitude)), step, 0.15 * point, join: point);
 
         Figure figure = FigureFrame.Begin(
             new FrameText
             {
                 Name = "saturation",
                 Title = "Flux density in the iron",
-                Caption = Caption(scene, worst, at, region, step),
+                Caption = Caption(scene, peak, step),
                 Key = [new("outline of a part", FigureStyle.Outline), new("line of equal |B|", FigureStyle.Contour), new("aperture", FigureStyle.Aperture)],
             },
             new PlotRoom(PlotWidth, height, Right: ColourBar.Room));
@@ -39,11 +39,11 @@ public static class SaturationFigure
         FieldFigure.AddImage(model, raster.Image(0, top, FigureStyle.Unsigned), view);
         model.Annotations.Add(new Strokes([.. lines.Select(l => l.Points)], FigureStyle.Contour, rim: 0));
         model.Annotations.Add(new Strokes(SectionDrawing.Outlines(scene.Section, 0.1 * point), FigureStyle.Outline, rim: 0));
-        model.Annotations.Add(new Strokes([SectionDrawing.Flatten(scene.Aperture.Outline, 0.1 * point)], FigureStyle.Aperture, rim: 0));
+        FieldFigure.AddAperture(model, scene, point);
         model.Annotations.Add(LevelLabels.Of(lines, v => FigureStyle.Number(v, 3) + " T"));
         if (iron.Length > 0)
         {
-            model.Annotations.Add(new Marks((rc, screen, area) => MarkWorst(rc, screen(at), area, $"{FigureStyle.Number(worst, 3)} T")));
+            model.Annotations.Add(new Marks((rc, screen, area) => MarkWorst(rc, screen(peak.At), area, $"{FigureStyle.Number(peak.Field, 3)} T")));
         }
 
         model.Annotations.Add(new ColourBar("|B| (T)", 0, top, FigureStyle.Unsigned));
@@ -56,9 +56,9 @@ public static class SaturationFigure
         return part >= 0 && scene.IsIron[part];
     }
 
-    private static (double Field, Point At, int Region) Worst(FieldTriangle[] iron)
+    private static Peak Worst(FieldTriangle[] iron)
     {
-        (double, Point, int) worst = (0, default, -1);
+        Peak worst = new(0, default, -1);
         foreach (FieldTriangle t in iron)
         {
             Take(t.S0, t.P0, t.Region);
@@ -70,23 +70,23 @@ public static class SaturationFigure
 
         void Take(FieldSample sample, Point p, int region)
         {
-            if (sample.Magnitude > worst.Item1)
+            if (sample.Magnitude > worst.Field)
             {
-                worst = (sample.Magnitude, p, region);
+                worst = new Peak(sample.Magnitude, p, region);
             }
         }
     }
 
-    private static string Caption(FieldScene scene, double worst, Point at, int region, double step)
+    private static string Caption(FieldScene scene, Peak peak, double step)
     {
-        if (region < 0)
+        if (peak.Region < 0)
         {
             return "There is no iron in this section.";
         }
 
-        string part = scene.Section.Parts[scene.Section.Regions[region].Part];
-        return $"Largest |B| in the iron: {FigureStyle.Number(worst)} T in {part} at y = {FigureStyle.Number(1e3 * at.Y)} mm, "
-            + $"z = {FigureStyle.Number(1e3 * at.Z)} mm (circled). Lines of equal |B| every {FigureStyle.Number(step)} T. "
+        string part = scene.Section.Parts[scene.Section.Regions[peak.Region].Part];
+        return $"Largest |B| in the iron: {FigureStyle.Number(peak.Field)} T in {part} at y = {FigureStyle.Number(1e3 * peak.At.Y)} mm, "
+            + $"z = {FigureStyle.Number(1e3 * peak.At.Z)} mm (circled). Lines of equal |B| every {FigureStyle.Number(step)} T. "
             + "At a sharp corner the value grows with finer meshes; round it or read the value that 99 % of the area stays below.";
     }
 
@@ -106,4 +106,6 @@ public static class SaturationFigure
         rc.DrawLine([start, end], FigureStyle.Ink, 1.4, mode, null, LineJoin.Miter);
         Mark.Label(rc, end, text, FigureStyle.TextSize);
     }
+
+    private readonly record struct Peak(double Field, Point At, int Region);
 }

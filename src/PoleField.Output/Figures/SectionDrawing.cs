@@ -39,10 +39,23 @@ internal static class SectionDrawing
         const int pieces = 8; // a closed curve or one with turning points must not be taken for its chord
         for (int i = 0; i < pieces; i++)
         {
-            Refine(curve, i / (double)pieces, (i + 1) / (double)pieces, tolerance, points);
+            Refine(i / (double)pieces, (i + 1) / (double)pieces);
         }
 
         return points;
+
+        void Refine(double from, double to)
+        {
+            Point a = curve.At(from), b = curve.At(to), middle = curve.At(0.5 * (from + to));
+            if (middle.DistanceTo(Point.Between(a, b, 0.5)) > tolerance && to - from > 1e-4)
+            {
+                Refine(from, 0.5 * (from + to));
+                Refine(0.5 * (from + to), to);
+                return;
+            }
+
+            points.Add(b);
+        }
     }
 
     /// <summary>A view with the shape of the plot area around what must be seen.</summary>
@@ -52,6 +65,13 @@ internal static class SectionDrawing
         double height = width / widthOverHeight;
         Point half = new(width / 2, height / 2);
         return new Box(seen.Centre - half, seen.Centre + half);
+    }
+
+    /// <summary>The section and the aperture with a little room, inside the circle that is meshed around them.</summary>
+    public static Box WholeView(CrossSection section, Aperture aperture)
+    {
+        Box all = section.Bounds.Including(aperture.Outline.Bounds);
+        return all.Inflated(0.045 * all.Diagonal);
     }
 
     /// <summary>Part around the aperture worth a closer look: the faces on both sides of the beam.</summary>
@@ -65,17 +85,4 @@ internal static class SectionDrawing
 
     private static int PartOf(CrossSection section, int region) =>
         region == CrossSection.Outside ? int.MinValue : section.Regions[region].Part;
-
-    private static void Refine(Curve curve, double from, double to, double tolerance, List<Point> points)
-    {
-        Point a = curve.At(from), b = curve.At(to), middle = curve.At(0.5 * (from + to));
-        if (middle.DistanceTo(Point.Between(a, b, 0.5)) > tolerance && to - from > 1e-4)
-        {
-            Refine(curve, from, 0.5 * (from + to), tolerance, points);
-            Refine(curve, 0.5 * (from + to), to, tolerance, points);
-            return;
-        }
-
-        points.Add(b);
-    }
 }

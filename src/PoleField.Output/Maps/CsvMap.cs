@@ -95,8 +95,30 @@ public static class CsvMap
                 ["element"] = map.Samples.Count(s => s.Source == MapSource.Element),
                 ["none"] = map.Samples.Count(s => s.Source == MapSource.None),
             },
+            ["obtained"] = new JsonObject
+            {
+                ["meaning"] = "How each row's value was obtained, as runs of rows in the order of the table: name, number of rows.",
+                ["runs"] = Runs(map.Samples),
+            },
         };
         stream.Write(Utf8.GetBytes(root.ToJsonString(Indented) + "\n"));
+    }
+
+    private static JsonArray Runs(IReadOnlyList<MapSample> samples)
+    {
+        JsonArray runs = [];
+        for (int start = 0, end; start < samples.Count; start = end)
+        {
+            end = start + 1;
+            while (end < samples.Count && samples[end].Source == samples[start].Source)
+            {
+                end++;
+            }
+
+            runs.Add(new JsonArray(MapSample.NameOf(samples[start].Source), end - start));
+        }
+
+        return runs;
     }
 
     private static string Millimetres(double metres) => Rounded(metres).ToString("R", CultureInfo.InvariantCulture);

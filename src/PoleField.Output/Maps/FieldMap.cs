@@ -1,4 +1,5 @@
 using PoleField.Beam;
+using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
 
@@ -31,6 +32,14 @@ public readonly record struct MapSample(double By, double Bz, double DByDz, doub
 
     /// <summary>A place without a field.</summary>
     public static MapSample Nothing { get; } = new(double.NaN, double.NaN, double.NaN, double.NaN, "", MapSource.None);
+
+    /// <summary>The word files use for a way of obtaining a value.</summary>
+    public static string NameOf(MapSource source) => source switch
+    {
+        MapSource.Extraction => "extraction",
+        MapSource.Element => "element",
+        _ => "none",
+    };
 
     /// <summary>|B|, T.</summary>
     public double Field => Math.Sqrt((By * By) + (Bz * Bz));
@@ -83,6 +92,22 @@ public sealed class FieldMap
 
     /// <summary>Where it comes from.</summary>
     public MapProvenance Provenance { get; }
+
+    /// <summary>The field of a solved magnet: extracted inside the aperture, from the elements elsewhere.</summary>
+    public static Func<Point, MapSample> FieldOf(SolvedMagnet solved)
+    {
+        Outline aperture = solved.Field.Aperture.Outline;
+        CrossSection section = solved.Solution.Magnet.Section;
+        return p => aperture.Contains(p)
+            ? MapSample.From(solved.Field.At(p))
+            : MapSample.From(solved.Solution.At(p), MediumOf);
+
+        string MediumOf(int region)
+        {
+            int part = region >= 0 ? section.Regions[region].Part : -1;
+            return part >= 0 ? section.Parts[part] : MapSample.Air;
+        }
+    }
 
     /// <summary>Evaluates the field at every place.</summary>
     public static FieldMap Sample(

@@ -11,12 +11,12 @@ public sealed class MapGrid
     private const int Digits = 15;
     private readonly IReadOnlyList<Point>? _places;
 
-    private MapGrid(Point from, Point step, int countY, int countZ, IReadOnlyList<Point>? places)
+    private MapGrid(Point from, Point step, (int Y, int Z) count, IReadOnlyList<Point>? places)
     {
         From = from;
         Step = step;
-        CountY = countY;
-        CountZ = countZ;
+        CountY = count.Y;
+        CountZ = count.Z;
         _places = places;
     }
 
@@ -77,7 +77,7 @@ public sealed class MapGrid
                 "Take a larger step or a smaller rectangle.");
         }
 
-        return new MapGrid(from, new Point(countY > 1 ? step : 0, countZ > 1 ? step : 0), (int)countY, (int)countZ, null);
+        return new MapGrid(from, new Point(countY > 1 ? step : 0, countZ > 1 ? step : 0), ((int)countY, (int)countZ), null);
     }
 
     /// <summary>A list of places, metres.</summary>
@@ -89,7 +89,7 @@ public sealed class MapGrid
             throw Wrong("The map's list of places is empty or holds a place that is not a number.", "Give at least one place.");
         }
 
-        return new MapGrid(places[0], default, places.Count, 1, places);
+        return new MapGrid(places[0], default, (places.Count, 1), places);
     }
 
     private static InputException Wrong(string text, string fix) => new([new Finding(Severity.Fault, "map-grid", text, fix)]);

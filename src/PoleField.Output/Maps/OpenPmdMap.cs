@@ -7,7 +7,7 @@ namespace PoleField.Output.Maps;
 
 /// <summary>
 /// A rectangular field map as HDF5 by the openPMD standard 1.1.0: mesh record B (components x, y, z; x is 0), the derivatives
-/// of its components, the gradient of |B|, and the medium as numbers into a list of names. Array indices run [z, y].
+/// of its components, the gradient of |B|, and, as numbers into lists of names, the medium and how each value was obtained. Array indices run [z, y].
 /// </summary>
 public static class OpenPmdMap
 {
@@ -16,7 +16,7 @@ public static class OpenPmdMap
     private static readonly double[] TeslaPerMetre = [-1, 1, -2, -1, 0, 0, 0];
     private static readonly double[] NoDimension = [0, 0, 0, 0, 0, 0, 0];
 
-    /// <summary>Writes the map. The stream must be able to seek.</summary>
+    /// <summary>Writes the map.</summary>
     /// <exception cref="InputException">The map is a list of places, which the standard has no meshes for.</exception>
     public static void Write(FieldMap map, Stream stream)
     {
@@ -39,6 +39,7 @@ public static class OpenPmdMap
             ["dBz_dy"] = Scalar(map, TeslaPerMetre, s => s.DByDz),
             ["dBz_dz"] = Scalar(map, TeslaPerMetre, s => s.DBzDz),
             ["medium"] = Medium(map, number, media),
+            ["obtained"] = Obtained(map),
         };
         H5Group iteration = new()
         {
@@ -53,7 +54,11 @@ public static class OpenPmdMap
 
         file.Attributes["openPMDextension"] = 0u;
         file.Attributes["accuracyReached"] = map.Provenance.AccuracyReached;
-        file.Write(stream, new H5WriteOptions(DefaultStringLength: LongestText(map.Provenance, media)));
+
+        // The HDF5 writer goes back and forth in what it wrote; the caller's stream need only take bytes.
+        using MemoryStream whole = new();
+        file.Write(whole, new H5WriteOptions(DefaultStringLength: LongestText(map.Provenance, media)));
+        stream.Write(whole.ToArray());
     }
 
     private static (string Key, string Value)[] RootTexts(MapProvenance origin)
@@ -125,6 +130,15 @@ public static class OpenPmdMap
             record.Attributes["names"] = media;
         }
 
+        return record;
+    }
+
+    private static H5Dataset Obtained(FieldMap map)
+    {
+        H5Dataset record = new(Table(map, s => (int)s.Source));
+        DescribeComponent(record);
+        DescribeMesh(record, map.Grid, NoDimension);
+        record.Attributes["names"] = Enum.GetValues<MapSource>().Order().Select(MapSample.NameOf).ToArray();
         return record;
     }
 

@@ -1,5 +1,6 @@
 using System.Globalization;
 using System.Runtime.InteropServices;
+using System.Security;
 using System.Text;
 using PoleField.Drawing;
 using PoleField.Geometry;
@@ -10,6 +11,7 @@ namespace PoleField.Output.Maps;
 /// <summary>
 /// The mesh with the field as a VTK unstructured grid (XML, inline base64, Float64): second-order triangles (cell type 22),
 /// each with its own six points because B and H jump between parts. Places in metres in the plane x = 0, vectors (0, By, Bz).
+/// Field data give the number of each part (0 is the air) and, as UTF-8 bytes, title and provenance.
 /// </summary>
 public static class VtuMap
 {
@@ -32,31 +34,37 @@ public static class VtuMap
         writer.WriteLine("<VTKFile type=\"UnstructuredGrid\" version=\"1.0\" byte_order=\"LittleEndian\" header_type=\"UInt64\">");
         writer.WriteLine("<UnstructuredGrid>");
         writer.WriteLine("<FieldData>");
-        Text(writer, "title", [provenance.Title]);
-        Text(writer, "case_sha256", [provenance.CaseSha256]);
-        Text(writer, "sketch_sha256", [provenance.SketchSha256]);
-        Text(writer, "program", ["PoleField " + provenance.ProgramVersion]);
-        Text(writer, "part_names", [MapSample.Air, .. section.Parts]);
+        Text(writer, "title", provenance.Title);
+        Text(writer, "case_sha256", provenance.CaseSha256);
+        Text(writer, "sketch_sha256", provenance.SketchSha256);
+        Text(writer, "obtained", MapSample.NameOf(MapSource.Element));
+        Text(writer, "program", "PoleField " + provenance.ProgramVersion);
+        Numbers<int>(writer, "part number of " + MapSample.Air, 1, [0]);
+        for (int i = 0; i < section.Parts.Count; i++)
+        {
+            Numbers<int>(writer, "part number of " + section.Parts[i], 1, [i + 1]);
+        }
+
         writer.WriteLine("</FieldData>");
         writer.WriteLine(FormattableString.Invariant($"<Piece NumberOfPoints=\"{points}\" NumberOfCells=\"{count}\">"));
         writer.WriteLine("<PointData Scalars=\"|B| [T]\" Vectors=\"B [T]\">");
-        Numbers(writer, "A [T m]", "Float64", 1, arrays.Potential);
-        Numbers(writer, "B [T]", "Float64", 3, arrays.Flux);
-        Numbers(writer, "|B| [T]", "Float64", 1, arrays.Magnitude);
-        Numbers(writer, "H [A/m]", "Float64", 1, arrays.Strength);
-        Numbers(writer, "mu_r [1]", "Float64", 1, arrays.Permeability);
+        Numbers(writer, "A [T m]", 1, arrays.Potential);
+        Numbers(writer, "B [T]", 3, arrays.Flux);
+        Numbers(writer, "|B| [T]", 1, arrays.Magnitude);
+        Numbers(writer, "H [A/m]", 1, arrays.Strength);
+        Numbers(writer, "mu_r [1]", 1, arrays.Permeability);
         writer.WriteLine("</PointData>");
         writer.WriteLine("<CellData Scalars=\"part\">");
-        Numbers(writer, "part", "Int32", 1, arrays.Parts);
-        Numbers(writer, "region", "Int32", 1, arrays.Regions);
+        Numbers(writer, "part", 1, arrays.Parts);
+        Numbers(writer, "region", 1, arrays.Regions);
         writer.WriteLine("</CellData>");
         writer.WriteLine("<Points>");
-        Numbers(writer, "place [m]", "Float64", 3, arrays.Points);
+        Numbers(writer, "place [m]", 3, arrays.Points);
         writer.WriteLine("</Points>");
         writer.WriteLine("<Cells>");
-        Numbers<long>(writer, "connectivity", "Int64", 1, [.. Enumerable.Range(0, points).Select(i => (long)i)]);
-        Numbers<long>(writer, "offsets", "Int64", 1, [.. Enumerable.Range(1, count).Select(i => (long)i * NodesPerCell)]);
-        Numbers<byte>(writer, "types", "UInt8", 1, [.. Enumerable.Repeat(QuadraticTriangle, count)]);
+        Numbers<long>(writer, "connectivity", 1, [.. Enumerable.Range(0, points).Select(i => (long)i)]);
+        Numbers<long>(writer, "offsets", 1, [.. Enumerable.Range(1, count).Select(i => (long)i * NodesPerCell)]);
+        Numbers<byte>(writer, "types", 1, [.. Enumerable.Repeat(QuadraticTriangle, count)]);
         writer.WriteLine("</Cells>");
         writer.WriteLine("</Piece>");
         writer.WriteLine("</UnstructuredGrid>");
@@ -79,13 +87,13 @@ public static class VtuMap
             }
 
             arrays.Regions.Add(region);
-            arrays.Parts.Add(region >= 0 ? section.Regions[region].Part + 1 : 0); // 0 is the air, as in part_names
+            arrays.Parts.Add(region >= 0 ? section.Regions[region].Part + 1 : 0); // 0 is the air
         }
 
         return arrays;
     }
 
-    private static void Numbers<T>(StreamWriter writer, string name, string type, int components, List<T> values)
+    private static void Numbers<T>(StreamWriter writer, string name, int components, List<T> values)
         where T : unmanaged
     {
         ReadOnlySpan<byte> data = MemoryMarshal.AsBytes(CollectionsMarshal.AsSpan(values));
@@ -93,19 +101,25 @@ public static class VtuMap
         BitConverter.TryWriteBytes(run, (ulong)data.Length);
         data.CopyTo(run.AsSpan(sizeof(ulong)));
         string several = components == 1 ? "" : $" NumberOfComponents=\"{components.ToString(CultureInfo.InvariantCulture)}\"";
-        writer.WriteLine($"<DataArray type=\"{type}\" Name=\"{name}\"{several} format=\"binary\">");
+        string tuples = (values.Count / components).ToString(CultureInfo.InvariantCulture); // field data are read as empty without it
+        writer.WriteLine($"<DataArray type=\"{TypeName<T>()}\" Name=\"{SecurityElement.Escape(name)}\"{several} NumberOfTuples=\"{tuples}\" format=\"binary\">");
         writer.WriteLine(Convert.ToBase64String(run));
         writer.WriteLine("</DataArray>");
     }
 
-    // Strings are listed as the codes of their UTF-8 bytes, each string closed by 0.
-    private static void Text(StreamWriter writer, string name, IReadOnlyList<string> values)
-    {
-        IEnumerable<byte> codes = values.SelectMany(v => Encoding.UTF8.GetBytes(v).Append((byte)0));
-        writer.WriteLine(FormattableString.Invariant($"<Array type=\"String\" Name=\"{name}\" NumberOfTuples=\"{values.Count}\" format=\"ascii\">"));
-        writer.WriteLine(string.Join(' ', codes.Select(c => c.ToString(CultureInfo.InvariantCulture))));
-        writer.WriteLine("</Array>");
-    }
+    private static string TypeName<T>()
+        where T : unmanaged => default(T) switch
+        {
+            double => "Float64",
+            int => "Int32",
+            long => "Int64",
+            byte => "UInt8",
+            _ => throw new NotSupportedException($"No VTK name for {typeof(T).Name}."),
+        };
+
+    // Texts are UTF-8 bytes in an array of numbers: arrays of type String stop common readers.
+    private static void Text(StreamWriter writer, string name, string value) =>
+        Numbers<byte>(writer, name + " [UTF-8]", 1, [.. Encoding.UTF8.GetBytes(value)]);
 
     // Point data at [i] or [3·i + component], cell data at [cell].
     private sealed class Arrays

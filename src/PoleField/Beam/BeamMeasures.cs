@@ -1,3 +1,5 @@
+using PoleField.Geometry;
+
 namespace PoleField.Beam;
 
 /// <summary>The beam's numbers of one extracted field; comparing two of them gives the errors of all numbers at once.</summary>
@@ -19,30 +21,32 @@ internal sealed record BeamMeasures
 
     public required BeamValues[] ProfileZ { get; init; }
 
-    public static BeamMeasures Of(BeamField field, ApertureSamples samples)
+    public static BeamMeasures Of(BeamField field, ApertureSamples samples) => Of(field.At, samples);
+
+    public static BeamMeasures Of(Func<Point, BeamValues> field, ApertureSamples samples)
     {
-        BeamValues[] inside = [.. samples.Inside.Select(field.At)];
-        BeamValues[] edge = [.. samples.Edge.Select(field.At)];
+        BeamValues[] inside = [.. samples.Inside.Select(field)];
+        BeamValues[] edge = [.. samples.Edge.Select(field)];
         return new BeamMeasures
         {
-            Centre = field.At(samples.Centre),
+            Centre = field(samples.Centre),
             Field = Statistics(inside, edge, samples.Weights, v => v.Field),
             Gradient = Statistics(inside, edge, samples.Weights, v => v.Gradient),
             FieldTimesGradient = Statistics(inside, edge, samples.Weights, v => v.Field * v.Gradient),
             Inside = inside,
             Edge = edge,
-            ProfileY = [.. samples.ProfileY.Select(field.At)],
-            ProfileZ = [.. samples.ProfileZ.Select(field.At)],
+            ProfileY = [.. samples.ProfileY.Select(field)],
+            ProfileZ = [.. samples.ProfileZ.Select(field)],
         };
     }
 
     /// <summary>Largest difference of |B| between two fields at all sample points, over the largest |B|.</summary>
     public double FieldDifference(BeamMeasures other) =>
-        Largest(other, v => v.Field) / Math.Max(Math.Abs(Field.Max), Math.Abs(Field.Min));
+        Largest(other, v => v.Field) / Field.Largest;
 
     /// <summary>Largest difference of G between two fields at all sample points, over the largest |G|.</summary>
     public double GradientDifference(BeamMeasures other) =>
-        Largest(other, v => v.Gradient) / Math.Max(Math.Abs(Gradient.Max), Math.Abs(Gradient.Min));
+        Largest(other, v => v.Gradient) / Gradient.Largest;
 
     private double Largest(BeamMeasures other, Func<BeamValues, double> quantity)
     {

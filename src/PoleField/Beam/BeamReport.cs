@@ -11,6 +11,9 @@ public sealed record ApertureStatistics(double Mean, double Min, double Max, dou
 {
     /// <summary>(max − min) / (2 |mean|), no unit.</summary>
     public double Spread => (Max - Min) / (2 * Math.Abs(Mean));
+
+    /// <summary>Largest size, without sign.</summary>
+    public double Largest => Math.Max(Math.Abs(Min), Math.Abs(Max));
 }
 
 /// <summary>What became of one part.</summary>
@@ -49,11 +52,24 @@ public sealed record PartReport
     /// <summary>Share of the area whose polarisation is above 90 % of saturation, 0 to 1.</summary>
     public double? SaturatedShare { get; init; }
 
-    /// <summary>Ampere-turns dropped in the part along the main flux path, A.</summary>
+    /// <summary>
+    /// Ampere-turns spent in the part, A: its share of ∫ H·B dS over all space times the driving ampere-turns. The shares of
+    /// all parts and of the air sum to the whole; in a flux tube without leakage the share is ∫ H·dl. Null for air and coils,
+    /// and where magnets or a background field drive flux too.
+    /// </summary>
     public double? MmfDrop { get; init; }
 
-    /// <summary>Magnetic force per metre of length on the part (y, z), N/m.</summary>
+    /// <summary>
+    /// Magnetic force per metre of length on the part (y, z), N/m: J × B on conductors, Maxwell's stress in the surrounding
+    /// air on iron and magnets. See <see cref="ForceOnFreeFacesOnly"/>. Null for air.
+    /// </summary>
     public Point? ForcePerMetre { get; init; }
+
+    /// <summary>
+    /// True when the part is joined to other iron or magnets and <see cref="ForcePerMetre"/> is the pull on its faces in air
+    /// alone; what the joint carries besides is not in it.
+    /// </summary>
+    public bool ForceOnFreeFacesOnly { get; init; }
 }
 
 /// <summary>The magnetic circuit's balance.</summary>
@@ -65,6 +81,12 @@ public sealed record PartReport
 public sealed record CircuitReport(
     double AmpereTurns, double GapAmpereTurns, double IronAmpereTurns, double EnergyPerMetre, double? InductancePerMetre)
 {
+    /// <summary>
+    /// Pull per metre of length across the horizontal line through the beam, N/m: ∫ (Bz² − By²)/(2 μ0) dy from iron to iron
+    /// (to infinity where there is none); positive when the poles attract each other. Spacers and frame must carry it.
+    /// </summary>
+    public double GapPullPerMetre { get; init; }
+
     /// <summary>Gap share of the ampere-turns; null without currents.</summary>
     public double? Efficiency => AmpereTurns > 0 ? GapAmpereTurns / AmpereTurns : null;
 }

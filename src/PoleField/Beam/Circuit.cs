@@ -18,10 +18,14 @@ internal static class Circuit
         double gap = GapAmpereTurns(solution, beam);
         (double energy, double linkage) = Energies(solution);
         double? inductance = driving > 0 ? linkage / (driving * driving) : null;
-        return new CircuitReport(driving, gap, driving - gap, energy, inductance);
+        return new CircuitReport(driving, gap, driving - gap, energy, inductance)
+        {
+            GapPullPerMetre = ForceReports.AcrossGap(solution, beam),
+        };
     }
 
-    private static double DrivingAmpereTurns(Magnet magnet)
+    /// <summary>Sum of the positive ampere-turns, A.</summary>
+    public static double DrivingAmpereTurns(Magnet magnet)
     {
         double positive = 0;
         foreach (Region region in magnet.Section.Regions)
@@ -86,7 +90,8 @@ internal static class Circuit
         return null;
     }
 
-    private static bool IsIron(FieldSolution solution, Point p)
+    /// <summary>True where a magnetic part fills the place.</summary>
+    public static bool IsIron(FieldSolution solution, Point p)
     {
         if (solution.At(p) is not { } sample)
         {
@@ -97,8 +102,8 @@ internal static class Circuit
         return part >= 0 && solution.Magnet.Roles[part].Material.IsMagnetic;
     }
 
-    // Stored energy per metre ∫ w dS over all space, and ∫ J A dS.
-    private static (double Energy, double Linkage) Energies(FieldSolution solution)
+    /// <summary>Stored energy per metre ∫ w dS over all space, and ∫ J A dS, J/m.</summary>
+    public static (double Energy, double Linkage) Energies(FieldSolution solution)
     {
         FieldProblem problem = solution.Problem;
         FiniteElementSpace space = problem.Space;

@@ -1,6 +1,3 @@
-using System.Diagnostics;
-using PoleField.Drawing;
-using PoleField.Geometry;
 using PoleField.Magnetostatics;
 using PoleField.Meshing;
 
@@ -9,16 +6,6 @@ namespace PoleField.Beam;
 /// <summary>Mesh, solve, estimate, refine until the asked accuracy is reached.</summary>
 public static class MagnetSolver
 {
-    private const double ErrorBarFactor = 3.0;     // with corners in saturated iron the estimate was seen low by up to 2.7
-    private const double QuadratureTolerance = 1e-9;
-
-    // The rules' own mesh reaches about 1e-5 with third-order elements on saturated poles with corners (measured), and the
-    // error falls like the sixth power of the element size.
-    private const double RuleAccuracy = 1e-5;
-    private const double RuleOrder = 6.0;
-    private const double Finest = 0.7;
-    private const double Coarsest = 1.6;
-
     /// <summary>Solves a magnet for the beam in an aperture.</summary>
     /// <exception cref="InputException">The aperture touches something that is not air, or lies outside the model.</exception>
     /// <exception cref="MeshingException">The section cannot be meshed.</exception>
@@ -30,202 +17,34 @@ public static class MagnetSolver
         Action<SolveProgress>? progress = null,
         CancellationToken cancellation = default)
     {
-        options ??= new SolveOptions();
-        double clearance = CheckedClearance(magnet, aperture);
-        var run = new AdaptiveRun(magnet, aperture, options, progress, cancellation);
-        return run.ToAccuracy(clearance);
+        var settings = new RunSettings(options ?? new SolveOptions(), progress, cancellation);
+        return new AdaptiveRun(magnet, BeamPlace.In(magnet, aperture), settings).ToAccuracy();
     }
 
-    private static double CheckedClearance(Magnet magnet, Aperture aperture)
-    {
-        double clearance = Clearance.Of(magnet, aperture);
-        Point centre = aperture.Centre;
-        string? problem = null;
-        if (!(clearance > 0.0))
-        {
-            problem = "touches";
-        }
-        else if (SectionPoint.RegionAt(magnet.Section, centre) is int region && Clearance.IsSolid(magnet, region))
-        {
-            problem = "lies inside";
-        }
-
-        if (problem is null)
-        {
-            return clearance;
-        }
-
-        throw new InputException([new Finding(
-            Severity.Fault,
-            "beam-in-part",
-            FormattableString.Invariant(
-                $"The beam's aperture around ({1e3 * centre.Y:g6}, {1e3 * centre.Z:g6}) mm {problem} a part of iron, a magnet or a conductor."),
-            "Move or shrink the aperture so that it lies in air.") { At = centre }]);
-    }
-
-    /// <summary>One adaptive run: its state between meshes.</summary>
-    private sealed class AdaptiveRun(
+    /// <summary>
+    /// Solves other currents, materials or background on the mesh of a solved magnet of the same section, starting from its
+    /// field. Nothing is refined: the record says which accuracy the mesh gives.
+    /// </summary>
+    /// <param name="magnet">Magnet with the section of <paramref name="near"/>.</param>
+    /// <param name="near">A solved magnet whose field is not far off.</param>
+    /// <param name="options">As for <see cref="Solve"/>; the order may differ.</param>
+    /// <param name="progress">Called at each step.</param>
+    /// <param name="cancellation">Checked at each step.</param>
+    /// <exception cref="ArgumentException">The sections differ.</exception>
+    /// <exception cref="FieldNotConvergedException">The field did not converge.</exception>
+    public static SolvedMagnet SolveOnMeshOf(
         Magnet magnet,
-        Aperture aperture,
-        SolveOptions options,
-        Action<SolveProgress>? progress,
-        CancellationToken cancellation)
+        SolvedMagnet near,
+        SolveOptions? options = null,
+        Action<SolveProgress>? progress = null,
+        CancellationToken cancellation = default)
     {
-        private readonly ApertureShape _shape = new(aperture);
-        private readonly Stopwatch _meshing = new();
-        private readonly Stopwatch _solving = new();
-        private readonly Stopwatch _evaluating = new();
-        private readonly List<Finding> _findings = [];
-        private int _newtonSteps;
-        private double _accuracy = double.NaN;
-
-        public SolvedMagnet ToAccuracy(double clearance)
+        if (!ReferenceEquals(magnet.Section, near.Solution.Magnet.Section))
         {
-            var samples = ApertureSamples.Of(aperture, _shape);
-            SizeField size = MeshSizing.For(
-                magnet.Section, aperture.Outline, MagneticParts(magnet), Fineness(options.Accuracy));
-            FieldSolution? previous = null;
-            for (int step = 1; ; step++)
-            {
-                (FieldSolution solution, FieldEquations equations) = SolveOn(size, step, previous);
-                _evaluating.Start();
-                double[]? chi = BandCutOff.Nodal(solution.Problem, _shape);
-                if (chi is null)
-                {
-                    _evaluating.Stop();
-                    size = size.With([.. _shape.EdgePoints(8).Select(p => (p, 0.5 * size.At(p)))]);
-                    previous = solution;
-                    if (step > options.MostAdaptiveSteps)
-                    {
-                        throw new MeshingException(
-                            "No band of air elements fits between the aperture and its surroundings.", aperture.Centre);
-                    }
-
-                    continue;
-                }
-
-                BeamExtraction extraction = BeamExtraction.Create(solution.Problem.Space, chi);
-                BeamField field = extraction.FieldOf(aperture, solution.Potential);
-                BeamMeasures measures = BeamMeasures.Of(field, samples);
-                Report("estimate", step, equations.PotentialCount, 0, double.NaN);
-                HigherOrderStep higher = HigherOrderStep.From(solution, options.Threads, cancellation);
-                BeamExtraction better = BeamExtraction.Create(higher.Problem.Space, higher.Lift.Up(chi));
-                BeamField corrected = better.FieldOf(aperture, higher.Potential);
-                BeamMeasures correctedMeasures = BeamMeasures.Of(corrected, samples);
-                _accuracy = ErrorBarFactor * Math.Max(
-                    measures.FieldDifference(correctedMeasures), measures.GradientDifference(correctedMeasures));
-                _evaluating.Stop();
-
-                bool done = _accuracy <= options.Accuracy;
-                if (done || step > options.MostAdaptiveSteps || 4 * equations.PotentialCount > options.MostUnknowns)
-                {
-                    return Finish(solution, equations, extraction, field, measures, correctedMeasures, clearance, step);
-                }
-
-                _evaluating.Start();
-                double[][] indicators = higher.Indicators(BeamGoals.Derivatives(better, corrected, _shape));
-                size = Refinement.Next(size, solution.Problem.Space, indicators, options.Accuracy / ErrorBarFactor);
-                previous = solution;
-                _evaluating.Stop();
-            }
+            throw new ArgumentException("A mesh serves only the section it was made for.", nameof(magnet));
         }
 
-        private static double Fineness(double accuracy) =>
-            Math.Clamp(Math.Pow(accuracy / RuleAccuracy, 1 / RuleOrder), Finest, Coarsest);
-
-        private static int[] MagneticParts(Magnet magnet) =>
-            [.. Enumerable.Range(0, magnet.Roles.Count).Where(part => magnet.Roles[part].Material.IsMagnetic)];
-
-        private (FieldSolution Solution, FieldEquations Equations) SolveOn(SizeField size, int step, FieldSolution? previous)
-        {
-            Report("mesh", step, 0, 0, double.NaN);
-            _meshing.Start();
-            Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions(), cancellation);
-            _meshing.Stop();
-            _solving.Start();
-            FiniteElementSpace space = FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), options.Order);
-            FieldProblem problem = FieldProblem.Create(magnet, space);
-            var equations = new FieldEquations(problem, options.Threads);
-            double[]? start = previous is not null && equations.IsNonlinear ? Start(previous, equations) : null;
-            Report("solve", step, equations.PotentialCount, 0, double.NaN);
-            (double[] potential, IReadOnlyList<NewtonStep> history) = FieldSolver.Solve(
-                equations,
-                start,
-                (k, newton) => Report("solve", step, equations.PotentialCount, k, newton.Decrement),
-                cancellation);
-            _newtonSteps += history.Count;
-            _solving.Stop();
-            return (new FieldSolution(problem, potential, history), equations);
-        }
-
-        private static double[] Start(FieldSolution previous, FieldEquations equations)
-        {
-            double[] start = previous.InterpolatedTo(equations.Problem.Space);
-            equations.ApplyFixedValues(start);
-            return start;
-        }
-
-        private SolvedMagnet Finish(
-            FieldSolution solution,
-            FieldEquations equations,
-            BeamExtraction extraction,
-            BeamField field,
-            BeamMeasures measures,
-            BeamMeasures corrected,
-            double clearance,
-            int steps)
-        {
-            _evaluating.Start();
-            double check = extraction.SelfCheck(aperture, [aperture.Centre, .. _shape.EdgePoints(1)], Math.Min(clearance, aperture.Outline.Bounds.Diagonal));
-            double floor = Math.Max(check, QuadratureTolerance);
-            if (check > options.Accuracy)
-            {
-                _findings.Add(new Finding(
-                    Severity.Warning,
-                    "extraction-check",
-                    FormattableString.Invariant($"The extraction's self-check is off by {check:g2}, more than the asked accuracy."),
-                    "Give the aperture more clearance, or ask for a finer accuracy so that the mesh there is refined."));
-            }
-
-            BeamReport report = new()
-            {
-                Beam = measures.Centre,
-                FieldError = Bar(measures.Centre.Field, corrected.Centre.Field, floor),
-                GradientError = Bar(measures.Centre.Gradient, corrected.Centre.Gradient, floor),
-                ApertureArea = aperture.Outline.Area,
-                Clearance = clearance,
-                Field = measures.Field,
-                Gradient = measures.Gradient,
-                GradientMeanError = Bar(measures.Gradient.Mean, corrected.Gradient.Mean, floor),
-                FieldTimesGradient = measures.FieldTimesGradient,
-                ProfileY = measures.ProfileY,
-                ProfileZ = measures.ProfileZ,
-                Parts = PartReports.Of(solution),
-                Circuit = Circuit.Of(solution, aperture.Centre),
-                Findings = _findings,
-            };
-            _evaluating.Stop();
-            var record = new SolveRecord(
-                solution.Mesh.TriangleCount,
-                equations.PotentialCount,
-                solution.Order,
-                MeshQuality.Of(solution.Mesh).SmallestAngleDegrees,
-                _newtonSteps,
-                steps - 1,
-                _accuracy,
-                options.Accuracy)
-            {
-                MeshSeconds = _meshing.Elapsed.TotalSeconds,
-                SolveSeconds = _solving.Elapsed.TotalSeconds,
-                EvaluateSeconds = _evaluating.Elapsed.TotalSeconds,
-            };
-            return new SolvedMagnet(solution, field, report, record);
-        }
-
-        private static double Bar(double value, double corrected, double floor) =>
-            (ErrorBarFactor * Math.Abs(value - corrected)) + (floor * Math.Abs(value));
-
-        private void Report(string what, int step, int unknowns, int newton, double residual) =>
-            progress?.Invoke(new SolveProgress(what, step, unknowns, newton, residual, _accuracy));
+        var settings = new RunSettings(options ?? new SolveOptions(), progress, cancellation);
+        return new AdaptiveRun(magnet, BeamPlace.In(magnet, near.Field.Aperture), settings).OnMeshOf(near.Solution);
     }
 }

@@ -16,13 +16,30 @@ internal static class PartReports
     {
         CrossSection section = solution.Magnet.Section;
         List<Visit>[] visits = Collect(solution);
+        double? turnsPerProduct = TurnsPerFieldProduct(solution);
         var reports = new List<PartReport>();
         for (int part = 0; part < section.Parts.Count; part++)
         {
-            reports.Add(Report(solution.Magnet, part, visits[part]));
+            (Point? force, bool freeFacesOnly) = ForceReports.Of(solution, part);
+            reports.Add(Report(solution.Magnet, part, visits[part]) with
+            {
+                ForcePerMetre = force,
+                ForceOnFreeFacesOnly = freeFacesOnly,
+                MmfDrop = solution.Magnet.Roles[part].Material.IsMagnetic
+                    ? turnsPerProduct * visits[part].Sum(v => v.Area * v.FieldProduct)
+                    : null,
+            });
         }
 
         return reports;
+    }
+
+    // Driving ampere-turns over ∫ H·B dS of all space, which equals ∫ J A dS; null where currents are not the only source.
+    private static double? TurnsPerFieldProduct(FieldSolution solution)
+    {
+        double driving = Circuit.DrivingAmpereTurns(solution.Magnet);
+        bool currentsOnly = solution.Magnet.AppliedField == default && solution.Magnet.Roles.All(r => r.Remanence == default);
+        return currentsOnly && driving > 0 ? driving / Circuit.Energies(solution).Linkage : null;
     }
 
     private static PartReport Report(Magnet magnet, int part, List<Visit> visits)
@@ -115,12 +132,17 @@ internal static class PartReports
                 FieldSample s = solution.Sample(e, table.Quadrature.Xi[q], table.Quadrature.Eta[q]);
                 double area = table.Quadrature.Weights[q] * space.JacobianAt(e, table.XiRow(q), table.EtaRow(q)).Determinant;
                 Point at = space.PlaceAt(e, table.ValueRow(q));
-                visits[part].Add(new Visit(at, area, s.Magnitude, s.Magnitude - (PhysicalConstants.Mu0 * s.FieldStrength)));
+                visits[part].Add(new Visit(at, area, s.Magnitude, s.FieldStrength));
             }
         }
 
         return visits;
     }
 
-    private readonly record struct Visit(Point At, double Area, double Field, double Polarisation);
+    private readonly record struct Visit(Point At, double Area, double Field, double FieldStrength)
+    {
+        public double Polarisation => Field - (PhysicalConstants.Mu0 * FieldStrength);
+
+        public double FieldProduct => Field * FieldStrength;
+    }
 }

@@ -9,7 +9,9 @@ internal static class Refinement
 {
     private const double StrongestReduction = 0.25; // of an element's size in one go
     private const double WeakestReduction = 0.8;    // smaller reductions are not worth a new mesh
-    private const double Order = 3.0;               // assumed decay of an element's share: cautious for smooth fields, bold at corners
+    private const double Order = 4.0;               // assumed decay of a share: cautious for smooth fields, bold at corners
+    private const double OpenDiscShare = 0.1;       // of the tolerance for the second disc, which is cheap
+    private const double StrongestOpenReduction = 0.4;
     private const double Safety = 0.5;              // of the tolerance, since the shares' signs are not counted on
 
     /// <summary>The size field for the next mesh.</summary>
@@ -19,15 +21,7 @@ internal static class Refinement
     /// <param name="tolerance">Relative error that each goal may have.</param>
     public static SizeField Next(SizeField size, FiniteElementSpace space, double[][] indicators, double tolerance)
     {
-        var share = new double[space.ElementCount];
-        foreach (double[] goal in indicators)
-        {
-            for (int e = 0; e < share.Length; e++)
-            {
-                share[e] = Math.Max(share[e], Math.Abs(goal[e]));
-            }
-        }
-
+        double[] share = Shares(space, indicators);
         double total = share.Sum();
         double allowed = Allowed(share, Safety * Math.Min(tolerance, total));
         var sources = new List<(Point At, double Size)>();
@@ -49,6 +43,37 @@ internal static class Refinement
         }
 
         return size.With(sources);
+    }
+
+    /// <summary>Factor on the element size of the second disc, 1 or less.</summary>
+    /// <param name="space">Space of the last solution.</param>
+    /// <param name="indicators">Share of element e in relative goal g at [g][e].</param>
+    /// <param name="tolerance">Relative error that each goal may have.</param>
+    public static double OfOpenDisc(FiniteElementSpace space, double[][] indicators, double tolerance)
+    {
+        double[] share = Shares(space, indicators);
+        double outside = 0;
+        for (int e = 0; e < share.Length; e++)
+        {
+            outside += space.Mesh.Regions[e] == Mesh.Exterior ? share[e] : 0.0;
+        }
+
+        double reduction = Math.Pow(OpenDiscShare * tolerance / outside, 1.0 / (2 * space.Order));
+        return reduction < 1 ? Math.Clamp(reduction, StrongestOpenReduction, WeakestReduction) : 1.0;
+    }
+
+    private static double[] Shares(FiniteElementSpace space, double[][] indicators)
+    {
+        var share = new double[space.ElementCount];
+        foreach (double[] goal in indicators)
+        {
+            for (int e = 0; e < share.Length; e++)
+            {
+                share[e] = Math.Max(share[e], Math.Abs(goal[e]));
+            }
+        }
+
+        return share;
     }
 
     // The share that every element may keep so that the sum is the tolerance: elements below it keep theirs.

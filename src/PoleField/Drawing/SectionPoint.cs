@@ -5,30 +5,32 @@ namespace PoleField.Drawing;
 /// <summary>Which region of a cross-section a place lies in.</summary>
 public static class SectionPoint
 {
-    /// <summary>
-    /// Region at a place: that on the facing side of the nearest edge. Index into the section's regions, or
-    /// <see cref="CrossSection.Outside"/>.
-    /// </summary>
+    /// <summary>Region of the section at a place off its edges: index into <see cref="CrossSection.Regions"/>, or <see cref="CrossSection.Outside"/>.</summary>
     public static int RegionAt(CrossSection section, Point p)
     {
-        double best = double.PositiveInfinity;
-        int region = CrossSection.Air;
-        foreach (SectionEdge edge in section.Edges)
+        for (int region = CrossSection.Air + 1; region < section.Regions.Count; region++)
         {
-            double t = edge.Curve.ClosestParameter(p);
-            double distance = edge.Curve.At(t).DistanceTo(p);
-
-            // At a shared corner the edge that p faces most squarely decides.
-            Point inward = edge.Curve.Derivative(Math.Clamp(t, 1e-9, 1 - 1e-9));
-            double side = inward.Unit().Cross(p - edge.Curve.At(t));
-            double weighted = distance - (1e-9 * Math.Abs(side));
-            if (weighted < best)
+            if (section.Regions[region].Bounds.Contains(p) && Turns(section, region, p) == 1)
             {
-                best = weighted;
-                region = side >= 0 ? edge.Left : edge.Right;
+                return region;
             }
         }
 
-        return region;
+        return section.HasRim && Turns(section, CrossSection.Air, p) != 1 ? CrossSection.Outside : CrossSection.Air;
+    }
+
+    /// <summary>How often the edges of a region wind around a place: once inside it, not at all outside.</summary>
+    internal static int Turns(CrossSection section, int region, Point p)
+    {
+        double angle = 0;
+        foreach (SectionEdge e in section.Edges)
+        {
+            if (e.Left == region || e.Right == region)
+            {
+                angle += (e.Left == region ? 1 : -1) * Outline.SweptAngle(e.Curve, p);
+            }
+        }
+
+        return (int)Math.Round(angle / Math.Tau);
     }
 }

@@ -140,11 +140,14 @@ public sealed class Outline
         double angle = 0;
         foreach (Curve c in Curves)
         {
-            angle += SweptAngle(c, p, 0, 1, 0);
+            angle += SweptAngle(c, p);
         }
 
         return Math.Abs(angle) > Math.PI;
     }
+
+    /// <summary>Signed angle under which a curve is seen from a point off it, radians.</summary>
+    internal static double SweptAngle(Curve curve, Point p) => SweptAngle(curve, p, 0, 1, 0);
 
     private static double SweptAngle(Curve c, Point p, double from, double to, int depth)
     {

@@ -100,14 +100,14 @@ internal sealed class FieldEquations
         return new FieldState(energy, product + product2, residual);
     }
 
-    /// <summary>Factored tangent ∂²W/∂A² at a potential.</summary>
-    public TangentSystem TangentAt(double[] potential) => Factor(potential, null);
+    /// <summary>Factored tangent ∂²W/∂A² at a potential; <paramref name="spent"/> is a system no longer needed, whose memory is used.</summary>
+    public TangentSystem TangentAt(double[] potential, TangentSystem? spent = null) => Factor(potential, null, spent);
 
     /// <summary>Factored tangent with every saturating material replaced by one of constant permeability.</summary>
     public TangentSystem LinearTangent(double relativePermeability) =>
-        Factor(null, PhysicalConstants.Nu0 / relativePermeability);
+        Factor(null, PhysicalConstants.Nu0 / relativePermeability, null);
 
-    private TangentSystem Factor(double[]? potential, double? reluctivity)
+    private TangentSystem Factor(double[]? potential, double? reluctivity, TangentSystem? spent)
     {
         var values = (double[])_linearValues.Clone();
         Condensation condensation = _linearCondensation;
@@ -117,7 +117,18 @@ internal sealed class FieldEquations
             _sweep.AssembleTangent(_nonlinear, potential, reluctivity, values, condensation);
         }
 
-        return new TangentSystem(Problem.Space, _unknownOfNode, UnknownCount, condensation, Analysis.Factor(values, Threads));
+        CholeskyFactor factor;
+        if (spent is null)
+        {
+            factor = Analysis.Factor(values, Threads);
+        }
+        else
+        {
+            factor = spent.CholeskyFactor;
+            factor.Refactor(values, Threads);
+        }
+
+        return new TangentSystem(Problem.Space, _unknownOfNode, UnknownCount, condensation, factor);
     }
 
     private static int[] NumberUnknowns(FiniteElementSpace space, out int count)
@@ -204,31 +215,8 @@ internal sealed class FieldEquations
         }
 
         SymmetricPattern pattern = SymmetricPattern.FromElements(UnknownCount, start, unknowns);
-        scatter = ScatterMap(pattern, unknowns, boundary);
+        scatter = pattern.ScatterMap();
         return pattern;
-    }
-
-    private static int[] ScatterMap(SymmetricPattern pattern, int[] unknowns, int boundary)
-    {
-        int packed = boundary * (boundary + 1) / 2;
-        int elements = unknowns.Length / boundary;
-        var map = new int[elements * packed];
-        int k = 0;
-        for (int e = 0; e < elements; e++)
-        {
-            ReadOnlySpan<int> own = unknowns.AsSpan(e * boundary, boundary);
-            for (int i = 0; i < boundary; i++)
-            {
-                for (int j = 0; j <= i; j++, k++)
-                {
-                    map[k] = own[i] < 0 || own[j] < 0
-                        ? -1
-                        : pattern.PositionOf(Math.Max(own[i], own[j]), Math.Min(own[i], own[j]));
-                }
-            }
-        }
-
-        return map;
     }
 
     // Unknowns of the second disc are unfolded to where they are in space, so that cuts of the plane separate them too.
@@ -264,14 +252,23 @@ internal sealed class FieldEquations
 
     private static (double[] OnRim, double[] Load) BackgroundTerms(FieldProblem problem)
     {
+        double[] onRim = RimBackground(problem, out bool[] isRim);
+        return (onRim, onRim.Length == 0 ? [] : RimLoad(problem, isRim));
+    }
+
+    /// <summary>Potential of the uniform background on the rim between the discs, by node; empty without background.</summary>
+    public static double[] RimBackground(FieldProblem problem) => RimBackground(problem, out _);
+
+    private static double[] RimBackground(FieldProblem problem, out bool[] isRim)
+    {
         FiniteElementSpace space = problem.Space;
+        isRim = new bool[space.NodeCount];
         if (problem.Magnet.AppliedField == default || space.Mesh.Circle is null)
         {
-            return ([], []);
+            return [];
         }
 
         var onRim = new double[space.NodeCount];
-        var isRim = new bool[space.NodeCount];
         for (int e = 0; e < space.ElementCount; e++)
         {
             for (int side = 0; side < 3; side++)
@@ -293,7 +290,7 @@ internal sealed class FieldEquations
             }
         }
 
-        return (onRim, RimLoad(problem, isRim));
+        return onRim;
     }
 
     // ∮ ν0 ∂nA v ds of the background, by the divergence theorem: only rim nodes keep a share.

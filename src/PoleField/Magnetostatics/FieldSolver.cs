@@ -43,10 +43,12 @@ internal static class FieldSolver
         var history = new List<NewtonStep>();
         double[] potential = start ?? LinearStart(equations, cancellation);
         FieldState state = equations.Evaluate(potential);
+        TangentSystem? tangent = null;
         for (int k = 1; k <= MostSteps; k++)
         {
             cancellation.ThrowIfCancellationRequested();
-            double[] direction = equations.TangentAt(potential).Solve(state.Residual);
+            tangent = equations.TangentAt(potential, tangent);
+            double[] direction = tangent.Solve(state.Residual);
             double slope = -Dot(state.Residual, direction);
             double decrement = Math.Sqrt(Math.Max(0, -slope) / Math.Max(state.FieldProduct, double.Epsilon));
             if (!double.IsFinite(slope))

@@ -11,10 +11,14 @@ internal sealed class HigherOrderStep
     private readonly OrderLift _lift;
     private readonly double[] _lifted;
     private readonly double[] _correction;
+    private readonly FieldSolution _solution;
+    private readonly double[] _lowBackground;
 
     private HigherOrderStep(
-        FieldEquations equations, TangentSystem tangent, OrderLift lift, double[] lifted, double[] correction)
+        FieldSolution solution, FieldEquations equations, TangentSystem tangent, OrderLift lift, double[] lifted, double[] correction)
     {
+        _solution = solution;
+        _lowBackground = FieldEquations.RimBackground(solution.Problem);
         _equations = equations;
         _tangent = tangent;
         _lift = lift;
@@ -52,18 +56,19 @@ internal sealed class HigherOrderStep
             correction[i] = -correction[i];
         }
 
-        return new HigherOrderStep(equations, tangent, lift, lifted, correction);
+        return new HigherOrderStep(solution, equations, tangent, lift, lifted, correction);
     }
 
     /// <summary>
     /// Share of each element in the error of each functional (given as its derivative by the nodes' values in order p + 1):
     /// the dual-weighted residual ∫ Dh∇d·∇(φ − Iφ), φ the adjoint, I interpolation in order p (Becker and Rannacher 2001,
-    /// recalled from memory).
+    /// recalled from memory), and what the element's equations for Iφ change by its better curved sides and quadrature.
     /// </summary>
     public double[][] Indicators(IReadOnlyList<double[]> functionals)
     {
         double[][] adjoints = _tangent.Solve(functionals);
-        double[][] beyond = [.. adjoints.Select(_lift.Beyond)];
+        double[][] low = [.. adjoints.Select(_lift.Down)];
+        double[][] lowLifted = [.. low.Select(_lift.Up)];
         FiniteElementSpace space = Problem.Space;
         var indicators = new double[functionals.Count][];
         for (int f = 0; f < indicators.Length; f++)
@@ -72,29 +77,52 @@ internal sealed class HigherOrderStep
         }
 
         var kernel = new ElementKernel(Problem);
+        var lowKernel = new ElementKernel(_solution.Problem);
         for (int e = 0; e < space.ElementCount; e++)
         {
             ReadOnlySpan<int> nodes = space.NodesOf(e);
+            ReadOnlySpan<int> lowNodes = _solution.Problem.Space.NodesOf(e);
             kernel.Evaluate(e, _lifted, _equations.Background, withTangent: true);
+            lowKernel.Evaluate(e, _solution.Potential, _lowBackground, withTangent: false);
             for (int f = 0; f < indicators.Length; f++)
             {
-                double sum = 0;
-                int k = 0;
-                for (int i = 0; i < nodes.Length; i++)
-                {
-                    for (int j = 0; j < i; j++, k++)
-                    {
-                        sum += kernel.Packed[k] * ((beyond[f][nodes[i]] * _correction[nodes[j]])
-                            + (beyond[f][nodes[j]] * _correction[nodes[i]]));
-                    }
-
-                    sum += kernel.Packed[k++] * beyond[f][nodes[i]] * _correction[nodes[i]];
-                }
-
-                indicators[f][e] = sum;
+                double consistency = Along(kernel.Residual, nodes, lowLifted[f]) - Along(lowKernel.Residual, lowNodes, low[f]);
+                indicators[f][e] = Math.Abs(Bilinear(kernel.Packed, nodes, adjoints[f], lowLifted[f])) + Math.Abs(consistency);
             }
         }
 
         return indicators;
+    }
+
+    // (φ − Iφ)ᵀ K d of one element.
+    private double Bilinear(double[] packed, ReadOnlySpan<int> nodes, double[] adjoint, double[] interpolant)
+    {
+        double sum = 0;
+        int k = 0;
+        for (int i = 0; i < nodes.Length; i++)
+        {
+            double beyond = adjoint[nodes[i]] - interpolant[nodes[i]];
+            double correction = _correction[nodes[i]];
+            for (int j = 0; j < i; j++, k++)
+            {
+                sum += packed[k] * ((beyond * _correction[nodes[j]])
+                    + ((adjoint[nodes[j]] - interpolant[nodes[j]]) * correction));
+            }
+
+            sum += packed[k++] * beyond * correction;
+        }
+
+        return sum;
+    }
+
+    private static double Along(double[] residual, ReadOnlySpan<int> nodes, double[] function)
+    {
+        double sum = 0;
+        for (int i = 0; i < nodes.Length; i++)
+        {
+            sum += residual[i] * function[nodes[i]];
+        }
+
+        return sum;
     }
 }

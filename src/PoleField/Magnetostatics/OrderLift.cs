@@ -44,10 +44,10 @@ internal sealed class OrderLift
         return high;
     }
 
-    /// <summary>What of a higher-order function is not in the lower order: it less its interpolant in the lower order's nodes.</summary>
-    public double[] Beyond(double[] high)
+    /// <summary>Interpolant of a higher-order function in the lower order's nodes.</summary>
+    public double[] Down(double[] high)
     {
-        double[] low = new double[_low.NodeCount];
+        var low = new double[_low.NodeCount];
         int nHigh = _high.Reference.NodeCount;
         int nLow = _low.Reference.NodeCount;
         var atLow = new double[nLow * nHigh];
@@ -73,12 +73,6 @@ internal sealed class OrderLift
             }
         }
 
-        double[] beyond = Up(low);
-        for (int i = 0; i < beyond.Length; i++)
-        {
-            beyond[i] = high[i] - beyond[i];
-        }
-
-        return beyond;
+        return low;
     }
 }

@@ -9,7 +9,6 @@ internal sealed class TangentSystem
     private readonly int[] _unknownOfNode;
     private readonly int _unknowns;
     private readonly Condensation _condensation;
-    private readonly CholeskyFactor _factor;
 
     public TangentSystem(
         FiniteElementSpace space, int[] unknownOfNode, int unknowns, Condensation condensation, CholeskyFactor factor)
@@ -18,8 +17,11 @@ internal sealed class TangentSystem
         _unknownOfNode = unknownOfNode;
         _unknowns = unknowns;
         _condensation = condensation;
-        _factor = factor;
+        CholeskyFactor = factor;
     }
+
+    /// <summary>The factor; its memory may be used again when this system is no longer needed.</summary>
+    internal CholeskyFactor CholeskyFactor { get; }
 
     /// <summary>Solution by node (zero on fixed nodes) for a right side by node.</summary>
     public double[] Solve(double[] rightSide) => Solve([rightSide])[0];
@@ -45,7 +47,7 @@ internal sealed class TangentSystem
             }
         }
 
-        _factor.Solve(packed, rightSides.Count);
+        CholeskyFactor.Solve(packed, rightSides.Count);
         var solutions = new double[rightSides.Count][];
         for (int k = 0; k < rightSides.Count; k++)
         {

@@ -12,6 +12,9 @@ public readonly record struct MagneticState(double FieldStrength, double Slope, 
 /// </summary>
 public abstract class MagneticLaw
 {
+    // A few roundings of a double, relative.
+    private protected const double RootTolerance = 2e-15;
+
     /// <summary>True when H is proportional to B.</summary>
     public abstract bool IsLinear { get; }
 
@@ -57,17 +60,12 @@ public abstract class MagneticLaw
             }
 
             double next = b - (excess / state.Slope);
-            if (!(next > low && next < high))
+            if (Math.Abs(next - b) <= RootTolerance * high || high - low <= RootTolerance * high)
             {
-                next = 0.5 * (low + high);
+                return b;
             }
 
-            if (Math.Abs(next - b) <= 1e-15 * high)
-            {
-                return next;
-            }
-
-            b = next;
+            b = next > low && next < high ? next : 0.5 * (low + high);
         }
 
         throw new InvalidOperationException(FormattableString.Invariant($"No flux density found for H = {h} A/m; the law does not rise."));

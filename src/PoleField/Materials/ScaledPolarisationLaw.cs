@@ -35,7 +35,7 @@ internal sealed class ScaledPolarisationLaw : MagneticLaw
     /// <inheritdoc/>
     public override MagneticState At(double b)
     {
-        MagneticState state = _law.At(BaseFluxDensity(b));
+        MagneticState state = BaseState(b);
         double h = state.FieldStrength;
         return new MagneticState(
             h, Scaled(state.Slope), (_factor * state.Energy) + ((1 - _factor) * 0.5 * Mu0 * h * h));
@@ -50,7 +50,7 @@ internal sealed class ScaledPolarisationLaw : MagneticLaw
     // dB/db; the two terms are positive because μ0 dH/db is at most 1.
     private double Rise(double slope) => (_factor * (1 - (Mu0 * slope))) + (Mu0 * slope);
 
-    private double BaseFluxDensity(double b)
+    private MagneticState BaseState(double b)
     {
         const int mostSteps = 200;
         double low = b / Math.Max(1, _factor);
@@ -70,17 +70,12 @@ internal sealed class ScaledPolarisationLaw : MagneticLaw
             }
 
             double next = x - (excess / Rise(state.Slope));
-            if (!(next > low && next < high))
+            if (Math.Abs(next - x) <= RootTolerance * high || high - low <= RootTolerance * high)
             {
-                next = 0.5 * (low + high);
+                return state;
             }
 
-            if (Math.Abs(next - x) <= 1e-15 * high)
-            {
-                return next;
-            }
-
-            x = next;
+            x = next > low && next < high ? next : 0.5 * (low + high);
         }
 
         throw new InvalidOperationException(FormattableString.Invariant($"No field strength found for B = {b} T; the law does not rise."));

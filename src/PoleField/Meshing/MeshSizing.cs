@@ -28,6 +28,10 @@ public sealed class MeshSizing
     private const double CoilShare = 0.25; // of a coil's shorter side
     private const double FrameShare = 1.0 / 20; // of the diagonal of all parts
     private const double CeilingShare = 1.0 / 12; // of the section's diagonal
+
+    // The error of a corner falls like its element size to the power 1.3, that of a smooth field like the sixth power
+    // (third-order elements; both measured): corners follow the fineness with the power 6/1.3, so that neither is wasted.
+    private const double CornerPower = 4.6;
     private const double SmoothDegrees = 3; // joints that turn less are no corners
 
     private readonly CrossSection _section;
@@ -97,6 +101,8 @@ public sealed class MeshSizing
     }
 
     private void Add(Point at, double size) => _sources.Add((at, _fineness * size));
+
+    private void AddCorner(Point at, double size) => _sources.Add((at, Math.Pow(_fineness, CornerPower) * size));
 
     // The aperture itself, its edge and a ring half-way to the nearest part, so that the layers hold across the gap.
     private void AddAperture()
@@ -189,11 +195,11 @@ public sealed class MeshSizing
             double distance = DistanceToAperture(p) / Reach;
             if (ironAngle > Math.PI)
             {
-                Add(p, RootSize * Reach);
+                AddCorner(p, RootSize * Reach);
             }
             else if (distance <= TipReach)
             {
-                Add(p, (distance <= LipReach ? LipSize : TipCornerSize) * Reach);
+                AddCorner(p, (distance <= LipReach ? LipSize : TipCornerSize) * Reach);
             }
         }
     }

@@ -15,6 +15,9 @@ public sealed record MeshOptions
     /// <summary>Radius of the open circle over that of the smallest circle around the section, more than 1.02.</summary>
     public double OpenCircleRatio { get; init; } = 1.15;
 
+    /// <summary>Edge length in the disc that stands for open space and on its rim, over its radius, at most 0.5.</summary>
+    public double OpenDiscSize { get; init; } = 0.3;
+
     /// <summary>Most triangles before giving up.</summary>
     public int MostTriangles { get; init; } = 5_000_000;
 }
@@ -35,14 +38,14 @@ public static class Mesher
         Corners.Classify(curves);
         Func<Point, double> wanted = circle is null
             ? size.At
-            : p => Math.Min(size.At(p), OpenDisc.RelativeSize * circle.Radius);
+            : p => Math.Min(size.At(p), options.OpenDiscSize * circle.Radius);
         double turn = options.LargestTurnDegrees * Math.PI / 180;
         List<(int Curve, double From, double To)> cuts = Polygonisation.Cut(curves, wanted, turn, cancellation);
         PlanarMesh inside = PlanarMesh.Start(corners, curves, cuts, []);
         RefinementLimits limits = new(options.SmallestAngleDegrees, options.MostTriangles, PiecesFixed: false);
         Refinement refinement = Refinement.Of(inside, size, limits);
         refinement.Run(cancellation);
-        PlanarMesh? disc = circle is null ? null : OpenDisc.Fill(circle, inside, refinement, limits, cancellation);
+        PlanarMesh? disc = circle is null ? null : OpenDisc.Fill(circle, options.OpenDiscSize * circle.Radius, inside, refinement, limits, cancellation);
         return MeshAssembly.Join(section, inside, circle, disc);
     }
 
@@ -51,6 +54,7 @@ public static class Mesher
         Require(o.SmallestAngleDegrees is >= 0 and <= 30, o.SmallestAngleDegrees, "smallest angle of 0 to 30 degrees");
         Require(o.LargestTurnDegrees is > 0 and <= 45, o.LargestTurnDegrees, "largest turn above 0, up to 45 degrees");
         Require(o.OpenCircleRatio is >= 1.02 and <= 100, o.OpenCircleRatio, "ratio of the open circle of 1.02 to 100");
+        Require(o.OpenDiscSize is > 0 and <= 0.5, o.OpenDiscSize, "size in the open disc above 0, up to 0.5 of its radius");
         Require(o.MostTriangles > 0, o.MostTriangles, "limit of at least one triangle");
     }
 

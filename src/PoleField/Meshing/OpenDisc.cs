@@ -6,9 +6,6 @@ namespace PoleField.Meshing;
 /// <summary>The second disc: the same rim vertices, its own inside, a vertex at its centre that stands for infinity.</summary>
 internal static class OpenDisc
 {
-    /// <summary>Size inside over the radius; smaller brings nothing there, the field is smooth.</summary>
-    public const double RelativeSize = 0.3;
-
     private const double Growth = 0.35;
 
     /// <summary>
@@ -16,13 +13,14 @@ internal static class OpenDisc
     /// there differ too much, the first sheet halves the longest of them and refines on, until the disc is good as well.
     /// </summary>
     /// <param name="circle">The circle.</param>
+    /// <param name="size">Edge length inside, metres.</param>
     /// <param name="first">Mesh of the first sheet; its last curve is the circle.</param>
     /// <param name="firstRefinement">Refinement of the first sheet.</param>
     /// <param name="limits">Limits of refinement.</param>
     /// <param name="cancellation">Stops the work.</param>
     /// <returns>The disc's mesh: vertices 0 … n − 1 are the n rim vertices along the circle, vertex n its centre.</returns>
     public static PlanarMesh Fill(
-        OpenCircle circle, PlanarMesh first, Refinement firstRefinement, RefinementLimits limits, CancellationToken cancellation)
+        OpenCircle circle, double size, PlanarMesh first, Refinement firstRefinement, RefinementLimits limits, CancellationToken cancellation)
     {
         // Halving evens the rim out, one or two edges a round; after so many rounds a poor angle in the disc is accepted.
         const int rounds = 30;
@@ -30,7 +28,7 @@ internal static class OpenDisc
         for (int round = 1; ; round++)
         {
             List<CurvePiece> rim = [.. first.Pieces.Where(p => p.Curve == curve).OrderBy(p => p.TA)];
-            PlanarMesh disc = Fill(circle, first.Curves[curve].Curve, rim, limits with { PiecesFixed = true }, cancellation);
+            PlanarMesh disc = Fill(circle, size, first.Curves[curve].Curve, rim, limits with { PiecesFixed = true }, cancellation);
             SortedSet<double> halves = RimEdgesToHalve(disc, rim, limits.SmallestAngleDegrees);
             if (halves.Count == 0 || round == rounds)
             {
@@ -76,7 +74,7 @@ internal static class OpenDisc
     private static double Extent(CurvePiece p) => p.TB - p.TA;
 
     private static PlanarMesh Fill(
-        OpenCircle circle, Curve curve, List<CurvePiece> rim, RefinementLimits limits, CancellationToken cancellation)
+        OpenCircle circle, double size, Curve curve, List<CurvePiece> rim, RefinementLimits limits, CancellationToken cancellation)
     {
         Point[] places = [.. rim.Select(p => curve.At(p.TA))];
         List<(Point At, double Size)> sources = [];
@@ -89,8 +87,8 @@ internal static class OpenDisc
         BoundaryCurve boundary = new(curve, -1, 0, 0, CrossSection.Air, CrossSection.Outside);
         PlanarMesh mesh = PlanarMesh.Start(
             [places[0]], [boundary], [.. rim.Select(p => (0, p.TA, p.TB))], [circle.Centre, .. FirstLayer(circle, places)]);
-        SizeField size = SizeField.FromSources(RelativeSize * circle.Radius, Growth, sources);
-        Refinement.Of(mesh, size, limits).Run(cancellation);
+        SizeField wanted = SizeField.FromSources(size, Growth, sources);
+        Refinement.Of(mesh, wanted, limits).Run(cancellation);
         return mesh;
     }
 

@@ -56,8 +56,8 @@ public sealed class CholeskyAnalysis
     internal FactorizationPlan Plan { get; }
 
     /// <summary>
-    /// Orders and analyses a pattern. With <paramref name="places"/> (y, z of unknown i at [2i], [2i + 1]) nested
-    /// dissection may use them; without, the graph alone.
+    /// Orders and analyses a pattern. <paramref name="places"/> (y, z of unknown i at [2i], [2i + 1]) may be given; the
+    /// present ordering looks at the graph alone.
     /// </summary>
     /// <exception cref="ArgumentException">There are places, but not two numbers for every unknown.</exception>
     public static CholeskyAnalysis Analyse(SymmetricPattern pattern, ReadOnlySpan<double> places = default)

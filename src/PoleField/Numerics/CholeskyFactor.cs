@@ -6,6 +6,9 @@ namespace PoleField.Numerics;
 /// </remarks>
 public sealed unsafe class CholeskyFactor
 {
+    // Fewer right sides are solved one by one.
+    private const int WorthABlock = 3;
+
     private readonly CholeskyAnalysis _analysis;
     private readonly PinnedNumbers _numbers;
     private readonly UpdateStore _store = new();
@@ -47,7 +50,21 @@ public sealed unsafe class CholeskyFactor
                 $"{count} right-hand sides of {_analysis.Size} unknowns, got {rightSides.Length} numbers."));
         }
 
-        TriangularSolve.Solve(_analysis, _numbers.Start, rightSides, count);
+        int n = _analysis.Size;
+        for (int done = 0, together; done < count; done += together)
+        {
+            together = Math.Min(count - done, BlockSolve.Width);
+            Span<double> part = rightSides.Slice(done * n, together * n);
+            if (together < WorthABlock)
+            {
+                TriangularSolve.Solve(_analysis, _numbers.Start, part, together);
+            }
+            else
+            {
+                BlockSolve.Solve(_analysis, _numbers.Start, part, together);
+            }
+        }
+
         GC.KeepAlive(_numbers);
     }
 

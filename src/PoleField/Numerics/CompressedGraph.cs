@@ -25,19 +25,25 @@ internal sealed class CompressedGraph
         _pattern = pattern;
         Members = Group(pattern, out int[] groupOf);
         Groups = GroupsOfElements(pattern, groupOf, Members.Count);
-        bool[] attached = FindAttached();
+        ElementLists covers = FindCovers();
         LeadingOf = new int[Members.Count];
-        Leaders = new int[attached.AsSpan().Count(false)];
-        for (int g = 0, v = 0; g < attached.Length; g++)
+        int leading = 0;
+        for (int g = 0; g < LeadingOf.Length; g++)
         {
-            LeadingOf[g] = attached[g] ? -1 : v;
-            if (!attached[g])
+            LeadingOf[g] = covers[g].IsEmpty ? leading++ : -1;
+        }
+
+        Leaders = new int[leading];
+        for (int g = 0; g < LeadingOf.Length; g++)
+        {
+            if (LeadingOf[g] >= 0)
             {
-                Leaders[v++] = g;
+                Leaders[LeadingOf[g]] = g;
             }
         }
 
-        Attachments = FindAttachments();
+        Attachments = KeepLeading(covers);
+        LeadingOfElement = FindLeadingOfElements();
         Graph = BuildGraph();
     }
 
@@ -55,6 +61,9 @@ internal sealed class CompressedGraph
 
     /// <summary>Vertices that a group is attached to (none for a leading group).</summary>
     public ElementLists Attachments { get; }
+
+    /// <summary>Vertices of <see cref="Graph"/> of each element.</summary>
+    public ElementLists LeadingOfElement { get; }
 
     /// <summary>Leading groups, neighbours when they share an element.</summary>
     public WeightedGraph Graph { get; }
@@ -82,7 +91,7 @@ internal sealed class CompressedGraph
             ReadOnlySpan<int> own = pattern.ElementsOf[i];
             foreach (int j in own.IsEmpty ? [] : pattern.Elements[own[0]])
             {
-                if (j > i && groupOf[j] < 0 && own.SequenceEqual(pattern.ElementsOf[j]))
+                if (j > i && groupOf[j] < 0 && Same(own, pattern.ElementsOf[j]))
                 {
                     groupOf[j] = count;
                 }
@@ -99,6 +108,9 @@ internal sealed class CompressedGraph
 
         return new ElementLists(start, groupOf).Transpose(count);
     }
+
+    private static bool Same(ReadOnlySpan<int> a, ReadOnlySpan<int> b) =>
+        a.Length == b.Length && a[0] == b[0] && a[^1] == b[^1] && (a.Length <= 2 || a.SequenceEqual(b));
 
     private static ElementLists GroupsOfElements(SymmetricPattern pattern, int[] groupOf, int groupCount)
     {
@@ -125,40 +137,19 @@ internal sealed class CompressedGraph
         return new ElementLists(start, items.AsSpan(0, count).ToArray());
     }
 
-    private bool[] FindAttached()
+    // All groups that cover each group; those that are themselves covered are taken out later.
+    private ElementLists FindCovers()
     {
-        var attached = new bool[Members.Count];
-        for (int g = 0; g < attached.Length; g++)
+        var start = new int[Members.Count + 1];
+        var items = new List<int>(3 * Members.Count);
+        for (int g = 0; g < Members.Count; g++)
         {
             ReadOnlySpan<int> own = ElementsOf(g);
             foreach (int other in Candidates(own))
             {
                 if (Covers(other, own))
                 {
-                    attached[g] = true;
-                    break;
-                }
-            }
-        }
-
-        return attached;
-    }
-
-    private ElementLists FindAttachments()
-    {
-        var start = new int[Members.Count + 1];
-        var items = new List<int>(2 * Members.Count);
-        for (int g = 0; g < Members.Count; g++)
-        {
-            if (LeadingOf[g] < 0)
-            {
-                ReadOnlySpan<int> own = ElementsOf(g);
-                foreach (int other in Candidates(own))
-                {
-                    if (LeadingOf[other] >= 0 && Covers(other, own))
-                    {
-                        items.Add(LeadingOf[other]);
-                    }
+                    items.Add(other);
                 }
             }
 
@@ -166,6 +157,27 @@ internal sealed class CompressedGraph
         }
 
         return new ElementLists(start, [.. items]);
+    }
+
+    private ElementLists KeepLeading(ElementLists covers)
+    {
+        var start = new int[Members.Count + 1];
+        int[] items = covers.Items;
+        int count = 0;
+        for (int g = 0; g < Members.Count; g++)
+        {
+            foreach (int other in covers[g])
+            {
+                if (LeadingOf[other] >= 0)
+                {
+                    items[count++] = LeadingOf[other];
+                }
+            }
+
+            start[g + 1] = count;
+        }
+
+        return new ElementLists(start, items);
     }
 
     private ReadOnlySpan<int> Candidates(ReadOnlySpan<int> own) =>
@@ -176,6 +188,27 @@ internal sealed class CompressedGraph
     {
         ReadOnlySpan<int> theirs = ElementsOf(other);
         return theirs.Length > own.Length && (own.Length == 1 || theirs.Contains(own[1]));
+    }
+
+    private ElementLists FindLeadingOfElements()
+    {
+        var start = new int[Groups.Count + 1];
+        var items = new int[Groups.Items.Length];
+        int count = 0;
+        for (int e = 0; e < Groups.Count; e++)
+        {
+            foreach (int group in Groups[e])
+            {
+                if (LeadingOf[group] >= 0)
+                {
+                    items[count++] = LeadingOf[group];
+                }
+            }
+
+            start[e + 1] = count;
+        }
+
+        return new ElementLists(start, items);
     }
 
     private WeightedGraph BuildGraph()
@@ -190,10 +223,9 @@ internal sealed class CompressedGraph
             marked[v] = v;
             foreach (int e in ElementsOf(Leaders[v]))
             {
-                foreach (int group in Groups[e])
+                foreach (int other in LeadingOfElement[e])
                 {
-                    int other = LeadingOf[group];
-                    if (other >= 0 && marked[other] != v)
+                    if (marked[other] != v)
                     {
                         marked[other] = v;
                         neighbours.Add(other);

@@ -22,39 +22,49 @@ internal sealed class EntryMap
     public static EntryMap Of(SymmetricPattern pattern, Supernodes fronts, int[] columnOf)
     {
         int[] frontOf = FrontOfColumn(fronts);
+        int[] start = CountEntries(pattern, fronts, columnOf, frontOf);
+        int[] next = start.AsSpan(0, fronts.Count).ToArray();
+        var source = new int[pattern.EntryCount];
+        var target = new int[pattern.EntryCount];
+        var columns = new int[pattern.EntryCount];
+
+        // In the order of elimination, because neighbours are then mostly near in memory.
+        for (int own = 0; own < columnOf.Length; own++)
+        {
+            int unknown = fronts.UnknownAt[own];
+            for (int entry = pattern.ColumnStart[unknown]; entry < pattern.ColumnStart[unknown + 1]; entry++)
+            {
+                int other = columnOf[pattern.Rows[entry]];
+                int column = Math.Min(own, other);
+                int k = next[frontOf[column]]++;
+                source[k] = entry;
+                target[k] = own ^ other ^ column;
+                columns[k] = column;
+            }
+        }
+
+        PlaceInPanels(fronts, start, columns, target);
+        return new EntryMap(start, source, target);
+    }
+
+    private static int[] CountEntries(SymmetricPattern pattern, Supernodes fronts, int[] columnOf, int[] frontOf)
+    {
         var start = new int[fronts.Count + 1];
-        ForEach(pattern, columnOf, (column, _, _) => start[frontOf[column] + 1]++);
+        for (int own = 0; own < columnOf.Length; own++)
+        {
+            int unknown = fronts.UnknownAt[own];
+            for (int entry = pattern.ColumnStart[unknown]; entry < pattern.ColumnStart[unknown + 1]; entry++)
+            {
+                start[frontOf[Math.Min(own, columnOf[pattern.Rows[entry]])] + 1]++;
+            }
+        }
+
         for (int s = 0; s < fronts.Count; s++)
         {
             start[s + 1] += start[s];
         }
 
-        int[] next = start.AsSpan(0, fronts.Count).ToArray();
-        var source = new int[pattern.EntryCount];
-        var target = new int[pattern.EntryCount];
-        var columns = new int[pattern.EntryCount];
-        ForEach(pattern, columnOf, (column, row, entry) =>
-        {
-            int k = next[frontOf[column]]++;
-            source[k] = entry;
-            target[k] = row;
-            columns[k] = column;
-        });
-        PlaceInPanels(fronts, start, columns, target);
-        return new EntryMap(start, source, target);
-    }
-
-    private static void ForEach(SymmetricPattern pattern, int[] columnOf, Action<int, int, int> use)
-    {
-        for (int j = 0; j < pattern.Size; j++)
-        {
-            int own = columnOf[j];
-            for (int k = pattern.ColumnStart[j]; k < pattern.ColumnStart[j + 1]; k++)
-            {
-                int other = columnOf[pattern.Rows[k]];
-                use(Math.Min(own, other), Math.Max(own, other), k);
-            }
-        }
+        return start;
     }
 
     private static int[] FrontOfColumn(Supernodes fronts)

@@ -20,7 +20,7 @@ internal static unsafe class FrontKernels
     /// <summary>Numbers in a tile.</summary>
     public const int Tile = Slab * Slab;
 
-    // A number with this exponent or a smaller one has no inverse square root worth having.
+    // Numbers in a 256-bit vector.
     private const int Half = 4;
 
     /// <summary>tile −= A Bᵀ over <paramref name="depth"/> columns, for the first <paramref name="columns"/> columns of the tile.</summary>

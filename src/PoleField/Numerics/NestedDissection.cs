@@ -6,8 +6,7 @@ namespace PoleField.Numerics;
 /// </summary>
 /// <remarks>
 /// George, SIAM J. Numer. Anal. 10 (1973) 345; multilevel separators after Karypis and Kumar, SIAM J. Sci. Comput. 20 (1998)
-/// 359 (both recalled from memory). Coordinates are not used: cuts along straight lines were tried as starts and
-/// lost to the graph alone, and a mesh of two sheets has no one plane.
+/// 359 (both recalled from memory). Coordinates are not used, so that a mesh of two sheets is as good as any.
 /// </remarks>
 internal sealed class NestedDissection
 {
@@ -59,7 +58,7 @@ internal sealed class NestedDissection
 
         if (sizes[0] == 0 || sizes[1] == 0)
         {
-            _leaves.Order(own);
+            // All are (nearly) neighbours of all; no order is much better than another.
             return;
         }
 

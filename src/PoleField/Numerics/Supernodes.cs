@@ -194,6 +194,12 @@ internal sealed class Supernodes
         var marked = new int[Count];
         Array.Fill(marked, -1);
         int[] groupOf = GroupOfUnknown();
+        var frontOfVertex = new int[tree.Order.Length];
+        for (int k = 0; k < frontOfVertex.Length; k++)
+        {
+            frontOfVertex[tree.Order[k]] = _frontOfCluster[k];
+        }
+
         for (int row = 0; row < UnknownAt.Length;)
         {
             int g = groupOf[UnknownAt[row]];
@@ -201,9 +207,10 @@ internal sealed class Supernodes
             int own = _frontOfCluster[_clusterOfGroup[g]];
             foreach (int e in _compressed.ElementsOf(g))
             {
-                foreach (int other in _compressed.Groups[e])
+                // A group is eliminated with a vertex of each of its elements, so the vertices say it all.
+                foreach (int v in _compressed.LeadingOfElement[e])
                 {
-                    for (int s = _frontOfCluster[_clusterOfGroup[other]]; s >= 0 && s < own && marked[s] != g; s = Parent[s])
+                    for (int s = frontOfVertex[v]; s >= 0 && s < own && marked[s] != g; s = Parent[s])
                     {
                         marked[s] = g;
                         for (int i = 0; i < size; i++)

@@ -13,7 +13,7 @@ internal static class Steps
     {
         ReadSketch = (_, name, unit) => Sketch(name, unit),
         Cut = (_, request) => Reading(request),
-        Materials = () => [Material.Air, new Material("pure-iron", new LinearLaw(5000), "Invented iron", "invented", "invented")],
+        Materials = MaterialShelf.Of(Material.Air, new Material("pure-iron", new LinearLaw(5000), "Invented iron", "invented", "invented")),
         ReadMaterial = (_, name) => new Material(name, new LinearLaw(1000), "Table", "table", "as given"),
         Solve = (_, _, options, _, _) => Solved(options),
         FieldOf = _ => place => 1e-3 / (place.SquaredLength * 100),

@@ -44,12 +44,28 @@ public partial class LayerTests
     {
         // XML references in comments name neighbours without depending on them.
         string code = Comment().Replace(source, string.Empty);
-        return Use().Matches(code).Select(m => m.Groups[1].Value).Distinct();
+        IEnumerable<string> full = FullName().Matches(code).Select(m => m.Groups[1].Value);
+        IEnumerable<string> bare = BareName().Matches(code)
+            .Where(m => TypesOf(m.Groups[1].Value).Contains(m.Groups[2].Value))
+            .Select(m => m.Groups[1].Value);
+        return full.Concat(bare).Distinct();
+    }
+
+    // A property may be called Beam: only a layer's own types count after a bare layer name.
+    private static HashSet<string> TypesOf(string layer)
+    {
+        string folder = Path.Combine(Root(), "src", "PoleField", layer);
+        return Directory.Exists(folder)
+            ? [.. Directory.GetFiles(folder, "*.cs", SearchOption.AllDirectories).Select(f => Path.GetFileNameWithoutExtension(f))]
+            : [];
     }
 
     [GeneratedRegex(@"//.*")]
     private static partial Regex Comment();
 
-    [GeneratedRegex(@"(?<![\w.])(?:PoleField\.)?(Numerics|Geometry|Drawing|Materials|Meshing|Magnetostatics|Beam|Design)[.;]")]
-    private static partial Regex Use();
+    [GeneratedRegex(@"PoleField\.(Numerics|Geometry|Drawing|Materials|Meshing|Magnetostatics|Beam|Design)[.;]")]
+    private static partial Regex FullName();
+
+    [GeneratedRegex(@"(?<![\w.])(Numerics|Geometry|Drawing|Materials|Meshing|Magnetostatics|Beam|Design)\.(\w+)")]
+    private static partial Regex BareName();
 }

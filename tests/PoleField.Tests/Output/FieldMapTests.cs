@@ -216,9 +216,11 @@ public sealed class FieldMapTests : IDisposable
             g = r.GetOutput()
             print("type=%d" % g.GetCellType(0))
             print("count=%d %d" % (g.GetNumberOfCells(), g.GetNumberOfPoints()))
-            names = g.GetFieldData().GetAbstractArray("part_names")
-            print("names=" + "|".join(names.GetValue(i) for i in range(names.GetNumberOfValues())))
-            print("title=" + g.GetFieldData().GetAbstractArray("title").GetValue(0))
+            f = g.GetFieldData()
+            names = [f.GetArrayName(i) for i in range(f.GetNumberOfArrays())]
+            print("names=" + "|".join("%d %s" % (f.GetArray(n).GetValue(0), n[15:]) for n in names if n.startswith("part number of ")))
+            t = f.GetArray("title [UTF-8]")
+            print("title=" + ascii(bytes(int(t.GetValue(i)) for i in range(t.GetNumberOfValues())).decode()))
             print("B=%.17g" % g.GetPointData().GetArray("B [T]").GetComponent(7, 2))
             """;
 
@@ -227,8 +229,8 @@ public sealed class FieldMapTests : IDisposable
 
         Assert.Equal("22", read["type"]);
         Assert.Equal("128 768", read["count"]);
-        Assert.Equal("air|YOKE|RIDGE|GROOVE|COIL LEFT|COIL RIGHT", read["names"]);
-        Assert.Equal(Origin.Title, read["title"]);
+        Assert.Equal("0 air|1 YOKE|2 RIDGE|3 GROOVE|4 COIL LEFT|5 COIL RIGHT", read["names"]);
+        Assert.Equal("'Map of two conductors, \\xb5-metal'", read["title"]);
         Assert.Equal(Cells().ElementAt(1).Samples[1].Bz, Numbers(read["B"])[0]);
     }
 
@@ -277,7 +279,7 @@ public sealed class FieldMapTests : IDisposable
     private string Save(string name, Action<Stream> write)
     {
         string path = Path.Combine(_folder, name);
-        using FileStream stream = File.Create(path);
+        using FileStream stream = new(path, FileMode.Create, FileAccess.Write); // as the tool opens its files
         write(stream);
         return path;
     }

@@ -32,6 +32,23 @@ public sealed class LevelLineTests
     }
 
     [Fact]
+    public void PiecesOfAValueThatJumpsFromCellToCellAreJoinedWithoutGaps()
+    {
+        // As |B| of finite elements: each triangle has its own copy of the cone, off by up to 0.002.
+        IEnumerable<ValueTriangle> jumping = Grid(p => p.Length).Select((t, i) =>
+        {
+            double off = 0.002 * Math.Sin(i);
+            return t with { V0 = t.V0 + off, V1 = t.V1 + off, V2 = t.V2 + off };
+        });
+
+        IReadOnlyList<LevelLine> lines = LevelLines.Trace(jumping, step: 0.4, tolerance: 1e-4, join: 0.01);
+
+        LevelLine longest = lines.Where(l => Math.Abs(l.Level - 0.4) < 1e-12).MaxBy(Length)!;
+        Assert.Equal(Math.Tau * 0.4, Length(longest), 0.1);
+        Assert.All(longest.Points, p => Assert.Equal(0.4, p.Length, 1e-2));
+    }
+
+    [Fact]
     public void FieldLinesOfTwoConductorsAreApollonianCircles()
     {
         FieldScene scene = TwoConductorScene.Scene(cells: 120);

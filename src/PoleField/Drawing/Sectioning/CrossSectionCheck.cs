@@ -156,7 +156,7 @@ public static class CrossSectionCheck
             foreach ((int region, double side) in new[] { (e.Left, off), (e.Right, -off) })
             {
                 Point p = e.Curve.At(0.5) + (side * normal);
-                int turns = region >= 0 ? Turns(s, region, p) : 1;
+                int turns = region >= 0 ? SectionPoint.Turns(s, region, p) : 1;
                 int expected = region == CrossSection.Air && !s.HasRim ? 0 : 1;
                 if (turns != expected)
                 {
@@ -164,31 +164,5 @@ public static class CrossSectionCheck
                 }
             }
         }
-    }
-
-    private static int Turns(CrossSection s, int region, Point p)
-    {
-        double angle = 0;
-        foreach (SectionEdge e in s.Edges)
-        {
-            if (e.Left == region || e.Right == region)
-            {
-                angle += (e.Left == region ? 1 : -1) * Swept(e.Curve, p, 0, 1, 0);
-            }
-        }
-
-        return (int)Math.Round(angle / Math.Tau);
-    }
-
-    // Angle under which a curve is seen, halved until every step is less than a quarter turn.
-    private static double Swept(Curve c, Point p, double from, double to, int depth)
-    {
-        double middle = 0.5 * (from + to);
-        Point a = c.At(from) - p, m = c.At(middle) - p, b = c.At(to) - p;
-        double first = Math.Atan2(a.Cross(m), a.Dot(m)), second = Math.Atan2(m.Cross(b), m.Dot(b));
-        const int least = 3, most = 40;
-        return c is Line || depth > most || (depth >= least && Math.Abs(first) < 1 && Math.Abs(second) < 1)
-            ? first + second
-            : Swept(c, p, from, middle, depth + 1) + Swept(c, p, middle, to, depth + 1);
     }
 }

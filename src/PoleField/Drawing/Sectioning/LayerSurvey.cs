@@ -1,5 +1,3 @@
-using PoleField.Geometry;
-
 namespace PoleField.Drawing;
 
 /// <summary>Says what the layers of a sketch hold, for messages.</summary>

@@ -35,25 +35,23 @@ internal sealed class Weaving
             near.Clear();
             index.FindOverlaps(new Box(p, p).Inflated(_reach.Join), near);
             near.Sort();
-            bool movable = incident[v].TrueForAll(i => _net.Pieces[i].Curve is Line) && !(_net.IsHalf && p.Y == 0);
+            bool moved = false;
             foreach (int i in near)
             {
-                movable = CutAt(i, v, incident[v], movable);
+                if (_net.Pieces[i].Start != v && _net.Pieces[i].End != v)
+                {
+                    moved |= CutAt(i, v, incident[v], moved);
+                }
             }
         }
 
         ApplyCuts();
     }
 
-    // Cuts a piece at a point near it; a point that can move moves onto the piece, once. Tells whether it still can.
-    private bool CutAt(int i, int v, List<int> incident, bool movable)
+    // Cuts a piece at a point near it. A point of straight curves moves onto the piece, once; tells whether it did.
+    private bool CutAt(int i, int v, List<int> incident, bool moved)
     {
         Piece piece = _net.Pieces[i];
-        if (piece.Start == v || piece.End == v)
-        {
-            return movable;
-        }
-
         Point p = _net.Points[v];
         double t = piece.Curve.ClosestParameter(p);
         Point foot = piece.Curve.At(t);
@@ -62,22 +60,23 @@ internal sealed class Weaving
         double toEnds = Math.Min(foot.DistanceTo(piece.Curve.Start), foot.DistanceTo(piece.Curve.End));
         if (distance > (loose ? _reach.Join : _reach.Fine) || toEnds <= _reach.Fine)
         {
-            return movable;
+            return false;
         }
 
         Cut(i, t, v);
         if (distance <= _reach.Exact)
         {
-            return movable;
+            return false;
         }
 
         _log.AddHealed(p, distance, _net.Pieces[incident[0]].Source);
+        bool movable = !moved && incident.TrueForAll(k => _net.Pieces[k].Curve is Line) && !(_net.IsHalf && p.Y == 0);
         if (movable)
         {
             _net.Points[v] = foot;
         }
 
-        return false;
+        return movable;
     }
 
     private void CutAtCrossings()
@@ -90,9 +89,12 @@ internal sealed class Weaving
             near.Clear();
             index.FindOverlaps(_net.Pieces[i].Curve.Bounds.Inflated(_reach.Exact), near);
             near.Sort();
-            foreach (int j in near.Where(j => j > i && MayCross(_net.Pieces[i], _net.Pieces[j])))
+            foreach (int j in near)
             {
-                CutAtCrossing(i, j, crossings, known);
+                if (j > i && MayCross(_net.Pieces[i], _net.Pieces[j]))
+                {
+                    CutAtCrossing(i, j, crossings, known);
+                }
             }
         }
 
@@ -185,24 +187,56 @@ internal sealed class Weaving
 
     private List<WovenEdge> LayTogether()
     {
-        List<WovenEdge> edges = [];
-        IEnumerable<IGrouping<(int, int), Piece>> groups = _net.Pieces.GroupBy(p => (Math.Min(p.Start, p.End), Math.Max(p.Start, p.End)));
-        foreach (IGrouping<(int, int), Piece> group in groups)
+        // Pieces sorted by their ends; a run of equal ends may hold pieces that lie on each other. Edges keep the order of drawing.
+        Piece[] pieces = [.. _net.Pieces];
+        long[] ends = [.. pieces.Select(p => ((long)Math.Min(p.Start, p.End) * _net.Points.Count) + Math.Max(p.Start, p.End))];
+        int[] order = [.. Enumerable.Range(0, pieces.Length)];
+        Array.Sort(order, (i, j) => ends[i] != ends[j] ? ends[i].CompareTo(ends[j]) : i.CompareTo(j));
+        SortedDictionary<int, List<Piece>> several = []; // by the first piece of the run
+        bool[] alone = new bool[pieces.Length];
+        for (int from = 0, to; from < order.Length; from = to)
         {
-            List<Piece> rest = [.. group];
-            while (rest.Count > 0)
+            for (to = from + 1; to < order.Length && ends[order[to]] == ends[order[from]]; to++)
             {
-                // A bent piece keeps its shape against a straight one; of equals the first drawn of the first layer.
-                Piece keep = rest.FirstOrDefault(p => p.Curve is not Line) ?? rest[0];
-                List<Piece> alike = rest.Count == 1 ? rest : [.. rest.Where(p => ReferenceEquals(p, keep) || AreAlike(keep, p))];
-                NoteRepeats(alike);
-                edges.Add(new WovenEdge(keep.Curve, keep.Start, keep.End, [.. alike.Select(p => p.Layer).Distinct().Order()], keep.Source));
-                rest = rest.Count == alike.Count ? [] : [.. rest.Where(p => !alike.Exists(a => ReferenceEquals(a, p)))];
+            }
+
+            alone[order[from]] = to == from + 1;
+            if (!alone[order[from]])
+            {
+                several[order[from]] = [.. order[from..to].Select(i => pieces[i])];
+            }
+        }
+
+        List<WovenEdge> edges = new(pieces.Length);
+        for (int i = 0; i < pieces.Length; i++)
+        {
+            if (alone[i])
+            {
+                edges.Add(Edge(pieces[i], [pieces[i].Layer]));
+            }
+            else if (several.TryGetValue(i, out List<Piece>? run))
+            {
+                LayTogether(run, edges);
             }
         }
 
         return edges;
     }
+
+    private void LayTogether(List<Piece> rest, List<WovenEdge> edges)
+    {
+        while (rest.Count > 0)
+        {
+            // A bent piece keeps its shape against a straight one; of equals the first drawn of the first layer.
+            Piece keep = rest.FirstOrDefault(p => p.Curve is not Line) ?? rest[0];
+            ILookup<bool, Piece> alike = rest.ToLookup(p => ReferenceEquals(p, keep) || AreAlike(keep, p));
+            NoteRepeats([.. alike[true]]);
+            edges.Add(Edge(keep, [.. alike[true].Select(p => p.Layer).Distinct().Order()]));
+            rest = [.. alike[false]];
+        }
+    }
+
+    private static WovenEdge Edge(Piece p, IReadOnlyList<int> layers) => new(p.Curve, p.Start, p.End, layers, p.Source);
 
     private void NoteRepeats(List<Piece> alike)
     {

@@ -59,7 +59,12 @@ public sealed class PoleFamiliesTests
     {
         TwoWirePair doubled = new()
         {
-            HalfSpacing = 6, RidgeRadius = 6, RidgeReach = 6 / Math.Sqrt(2), GrooveRadius = 7.2, LandEdge = 9, Frame = new YokeFrame().Scaled(2),
+            HalfSpacing = 6,
+            RidgeRadius = 6,
+            RidgeReach = 6 / Math.Sqrt(2),
+            GrooveRadius = 7.2,
+            LandEdge = 9,
+            Frame = new YokeFrame().Scaled(2),
         };
         StartingSketch large = doubled.Draw();
         StartingSketch small = new TwoWirePair().Draw();

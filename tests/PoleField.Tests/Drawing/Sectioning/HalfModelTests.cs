@@ -38,6 +38,14 @@ public sealed class HalfModelTests
     }
 
     [Fact]
+    public void CentreLineOnTheAxisIsNoFault()
+    {
+        CrossSection s = Sound(Sketch(OpenPole(), [Line("POLE", 0, -40, 0, 40)]), Half("POLE"));
+
+        Assert.Equal(6, s.Edges.Count);
+    }
+
+    [Fact]
     public void VerticesAreSymmetricToTheLastBit()
     {
         CrossSection s = Sound(Sketch(OpenPole(), [Circle("COIL", 11.3, 7.1, 1.7)]), Half("POLE", "COIL"));

@@ -160,4 +160,16 @@ public sealed class HealingTests
             "1 joint with less than 1 nm between the ends closed on layer PIN.",
             reading.Findings.Single(f => f.What == "healed-joint" && f.Layer == "PIN").Text);
     }
+
+    [Fact]
+    public void CellsOfAGridOnOneLayerAreAllMaterial()
+    {
+        IEnumerable<SketchCurve> lines = Enumerable.Range(0, 4).SelectMany(i => new[] { Line("COIL", 0, i, 3, i), Line("COIL", i, 0, i, 3) });
+
+        // Inner lines cross; drawn cell by cell they share edges instead.
+        IEnumerable<SketchCurve> cells = Enumerable.Range(0, 9).SelectMany(i => Rectangle("COIL", i % 3, i / 3, (i % 3) + 1, (i / 3) + 1));
+
+        Assert.Equal(4, Faults(PoleField.Drawing.Sectioning.Read(Sketch(lines), Parts("COIL"))).Count(f => f == "self-crossing"));
+        Assert.Equal(9, Areas(Sound(Sketch(cells), Parts("COIL")), "COIL").Length);
+    }
 }
