@@ -15,26 +15,27 @@ internal static class FormError
     public static double Variance(Face face, IReadOnlyList<(double At, double Weight)> points, double length)
     {
         double sum = 0;
-        int n = points.Count;
-        for (int i = 0; i < n; i++)
+        for (int i = 0; i < points.Count; i++)
         {
             sum += points[i].Weight * points[i].Weight;
-            for (int k = 1; k < n; k++)
+            for (int j = i + 1; j < points.Count; j++)
             {
-                int j = i + k;
-                bool wraps = j >= n;
-                double distance = points[wraps ? j - n : j].At - points[i].At + (wraps ? face.Length : 0);
-                if (distance > FarthestPair * length || (wraps && !face.IsClosed) || k > n / 2)
+                double distance = points[j].At - points[i].At;
+                if (face.IsClosed)
+                {
+                    distance = Math.Min(distance, face.Length - distance);
+                }
+                else if (distance > FarthestPair * length)
                 {
                     break;
                 }
 
                 double share = distance / length;
-                sum += 2 * points[i].Weight * points[wraps ? j - n : j].Weight * Math.Exp(-share * share);
+                sum += share > FarthestPair ? 0 : 2 * points[i].Weight * points[j].Weight * Math.Exp(-share * share);
             }
         }
 
-        return sum;
+        return Math.Max(sum, 0);
     }
 
     /// <summary>One draw of unit size on a face: white noise smoothed by the square root of the correlation.</summary>

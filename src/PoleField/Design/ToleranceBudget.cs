@@ -34,6 +34,9 @@ public sealed class ToleranceBudget
     /// <summary>The magnet.</summary>
     public Magnet Magnet => _magnet;
 
+    /// <summary>Middle of the aperture, metres.</summary>
+    public Point BeamPlace => _sensitivity.Measures.Centre.At;
+
     /// <summary>What was assumed.</summary>
     public Tolerances Tolerances { get; }
 
