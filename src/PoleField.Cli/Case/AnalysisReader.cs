@@ -86,6 +86,7 @@ internal static class AnalysisReader
         TableReader? form = table.Table("form");
         TableReader? place = table.Table("place");
         TableReader? beam = table.Table("beam_place");
+        TableReader? allow = table.Table("allow");
         var section = new ToleranceSection
         {
             FormSize = form?.RequiredQuantity("size", Dimension.Length, Allowed.NotNegative),
@@ -97,10 +98,12 @@ internal static class AnalysisReader
             Saturation = table.Quantity("saturation", Dimension.Ratio, new Allowed(0, 1)),
             BeamY = beam?.Quantity("y", Dimension.Length, Allowed.NotNegative),
             BeamZ = beam?.Quantity("z", Dimension.Length, Allowed.NotNegative),
+            AllowGradient = allow?.RequiredQuantity("gradient", Dimension.Ratio, new Allowed(0, 1, MinItself: false)),
         };
         form?.Close();
         place?.Close();
         beam?.Close();
+        allow?.Close();
         table.Close();
         return section;
     }

@@ -162,6 +162,9 @@ internal sealed record ToleranceSection
     public double? BeamY { get; init; }
 
     public double? BeamZ { get; init; }
+
+    /// <summary>Allowed relative one sigma of the gradient by form errors; the loosest form tolerance per stretch of face follows.</summary>
+    public double? AllowGradient { get; init; }
 }
 
 /// <param name="Species">The beam's particles.</param>

