@@ -23,6 +23,9 @@ public sealed record FieldScene
     /// <summary>The aperture.</summary>
     public required Aperture Aperture { get; init; }
 
+    /// <summary>Largest |B| in iron (T), where, and in which part, as the result states it; null to look for it in the triangles.</summary>
+    public (double Field, Point At, string Part)? IronPeak { get; init; }
+
     /// <summary>The numbers for the caption, such as field and gradient at the beam; one or two sentences.</summary>
     public string Caption { get; init; } = "";
 
@@ -39,6 +42,7 @@ public sealed record FieldScene
             AmpereTurns = [.. magnet.Roles.Select(r => r.AmpereTurns)],
             IsIron = [.. magnet.Roles.Select(r => r.Kind == "iron")],
             Aperture = solved.Field.Aperture,
+            IronPeak = PeakOf(report),
             Caption = $"At the beam (y = {FigureStyle.Number(1e3 * beam.At.Y)} mm, z = {FigureStyle.Number(1e3 * beam.At.Z)} mm): "
                 + $"|B| = {FigureStyle.Number(beam.Field)} T, d|B|/dz = {FigureStyle.Number(beam.Gradient)} T/m.",
         };
@@ -74,6 +78,11 @@ public sealed record FieldScene
                 ? new FieldTriangle(Place(i), Place(j), Place(k), s, t, u, CrossSection.Air)
                 : null;
     }
+
+    private static (double Field, Point At, string Part)? PeakOf(BeamReport report) =>
+        report.Parts.Where(p => p.Kind == "iron" && p.FieldMax is not null).MaxBy(p => p.FieldMax) is { FieldMaxAt: { } at } worst
+            ? (worst.FieldMax!.Value, at, worst.Layer)
+            : null;
 
     /// <summary>Ampere-turns of a region: those of its part, opposite in a mirror image.</summary>
     internal double CurrentOf(Region region) =>

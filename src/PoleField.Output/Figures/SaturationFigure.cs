@@ -19,7 +19,7 @@ public static class SaturationFigure
         double point = view.Width / PlotWidth;
         FieldTriangle[] iron = [.. scene.Triangles.Where(t => IsIron(scene, t.Region))];
         FieldRaster raster = FieldRaster.OfMagnitude(iron, view, (int)(PlotWidth * PixelsPerPoint));
-        Peak peak = Worst(iron);
+        Peak peak = Worst(scene, iron);
         double top = Math.Max(Math.Min(peak.Field, 1.03 * raster.Quantile(0.999)), 1e-6); // a sharp corner must not set the scale
         double step = FigureStyle.NiceStep(top / 4);
         IReadOnlyList<LevelLine> lines = LevelLines.Trace(
@@ -30,7 +30,7 @@ public static class SaturationFigure
             {
                 Name = "saturation",
                 Title = "Flux density in the iron",
-                Caption = Caption(scene, peak, step),
+                Caption = Caption(peak, step),
                 Key = [new("outline of a part", FigureStyle.Outline), new("line of equal |B|", FigureStyle.Contour), new("aperture", FigureStyle.Aperture)],
             },
             new PlotRoom(PlotWidth, height, Right: ColourBar.Room));
@@ -56,9 +56,15 @@ public static class SaturationFigure
         return part >= 0 && scene.IsIron[part];
     }
 
-    private static Peak Worst(FieldTriangle[] iron)
+    // As the result states it; the triangles' corners reach nearer to a sharp edge, where the value has no bound.
+    private static Peak Worst(FieldScene scene, FieldTriangle[] iron)
     {
-        Peak worst = new(0, default, -1);
+        if (scene.IronPeak is { } stated)
+        {
+            return new Peak(stated.Field, stated.At, stated.Part);
+        }
+
+        Peak worst = new(0, default, null);
         foreach (FieldTriangle t in iron)
         {
             Take(t.S0, t.P0, t.Region);
@@ -72,19 +78,18 @@ public static class SaturationFigure
         {
             if (sample.Magnitude > worst.Field)
             {
-                worst = new Peak(sample.Magnitude, p, region);
+                worst = new Peak(sample.Magnitude, p, scene.Section.Parts[scene.Section.Regions[region].Part]);
             }
         }
     }
 
-    private static string Caption(FieldScene scene, Peak peak, double step)
+    private static string Caption(Peak peak, double step)
     {
-        if (peak.Region < 0)
+        if (peak.Part is not { } part)
         {
             return "There is no iron in this section.";
         }
 
-        string part = scene.Section.Parts[scene.Section.Regions[peak.Region].Part];
         return $"Largest |B| in the iron: {FigureStyle.Number(peak.Field)} T in {part} at y = {FigureStyle.Number(1e3 * peak.At.Y)} mm, "
             + $"z = {FigureStyle.Number(1e3 * peak.At.Z)} mm (circled). Lines of equal |B| every {FigureStyle.Number(step)} T. "
             + "At a sharp corner the value grows with finer meshes; round it or read the value that 99 % of the area stays below.";
@@ -107,5 +112,5 @@ public static class SaturationFigure
         Mark.Label(rc, end, text, FigureStyle.TextSize);
     }
 
-    private readonly record struct Peak(double Field, Point At, int Region);
+    private readonly record struct Peak(double Field, Point At, string? Part);
 }

@@ -50,7 +50,7 @@ internal static class PageStyle
         @media print{
           body{background:#fff;font-size:10pt}main,header,footer{max-width:none;padding:0}header{padding-top:0}
           nav,details{display:none}section{border:0;padding:0;margin:6mm 0 0}h1{font-size:18pt}h2{font-size:13pt;break-after:avoid}
-          dl.key{grid-template-columns:repeat(5,1fr)}dl.key dd{font-size:12pt}figure,tr,dl.key div,.verdict{break-inside:avoid}figure{max-width:165mm!important}.paper{border:0;padding:0}.scroll{overflow:visible}
+          dl.key{grid-template-columns:repeat(5,1fr)}dl.key dd{font-size:12pt}figure,table,tr,dl.key div,.verdict,.cautions{break-inside:avoid}figure{max-width:165mm!important}.paper{border:0;padding:0}.scroll{overflow:visible}
           .cautions{border:1px solid var(--caution);padding:3mm}
           .verdict,.cautions{print-color-adjust:exact;-webkit-print-color-adjust:exact}
         }

@@ -1,0 +1,90 @@
+// Truth: the written contract of report (one self-contained page, all or nothing, exit status) and the result file it carries.
+using System.Text.Json;
+using System.Text.RegularExpressions;
+using PoleField.Cli.Commands;
+using PoleField.Cli.Tests.Doubles;
+using PoleField.Output.Pages;
+
+namespace PoleField.Cli.Tests.Commands;
+
+public sealed partial class ReportVerbTests
+{
+    private static readonly string[] Pictures = ["field", "field-beam", "gradient-map", "profiles", "saturation"];
+
+    [Fact]
+    public async Task ThePageHoldsTheSolveAndItsPicturesAndTheResultFile()
+    {
+        using SketchFolder folder = await SketchFolder.Of("two-wire");
+
+        Run run = await Run.Of(
+            Pipeline.OfLibrary(), "report", folder.CasePath, "--accuracy", "1e-2", "-o", folder["page.html"], "--figures", folder["pictures"]);
+
+        Assert.Equal((0, string.Empty), (run.Status, run.Out));
+        string page = await File.ReadAllTextAsync(folder["page.html"]);
+        Assert.Equal(Pictures.Length, SvgPattern().Count(page));
+        Assert.Contains("two-wire field", page, StringComparison.Ordinal); // the stated wires beside the profiles
+        Assert.DoesNotContain("http-equiv=\"refresh\"", page, StringComparison.Ordinal);
+        Assert.Empty(FetchPattern().Matches(page));
+        JsonElement result = JsonDocument.Parse(ResultPattern().Match(page).Groups[1].Value).RootElement;
+        Assert.Equal("polefield-result/1", result.GetProperty("format").GetString());
+        Assert.Equal("Two-wire pair, half spacing 3 mm", result.GetProperty("title").GetString());
+        Assert.Equal(
+            Pictures.SelectMany(p => new[] { p + ".png", p + ".svg" }),
+            Directory.GetFiles(folder["pictures"]).Select(f => Path.GetFileName(f)!).Order(StringComparer.Ordinal));
+    }
+
+    [Fact]
+    public async Task AnAnalysisAddsItsSectionAndOthersAreLeftOut()
+    {
+        using var folder = new CaseFolder();
+        var step = new AnalysisStep("probe", "Probes.")
+        {
+            Examples = [],
+            Endings = _ => [],
+            Run = _ => throw new InvalidOperationException("The verb's own run is not the report's."),
+            Report = new ReportPart([], (_, page) => page with { Ramp = new ReportSection { Heading = "Excitation", Text = "Straight to the end." } }),
+        };
+
+        Run with = await Run.Of(Steps.Sound with { Analyses = [step] }, "report", folder.CasePath, "-o", folder["with.html"]);
+        Run without = await Run.Of(Steps.Sound, "report", folder.CasePath, "-o", folder["without.html"]);
+
+        Assert.Equal((0, 0), (with.Status, without.Status));
+        Assert.Contains("Straight to the end.", await File.ReadAllTextAsync(folder["with.html"]), StringComparison.Ordinal);
+        Assert.DoesNotContain("Excitation", await File.ReadAllTextAsync(folder["without.html"]), StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public async Task AnExistingPictureRefusesAllBeforeTheSolve()
+    {
+        using var folder = new CaseFolder();
+        Directory.CreateDirectory(folder["pictures"]);
+        await File.WriteAllTextAsync(folder[Path.Combine("pictures", "profiles.svg")], "mine");
+        Pipeline pipeline = Steps.Sound with { Solve = (_, _, _, _, _) => throw new InvalidOperationException("solved") };
+
+        Run run = await Run.Of(pipeline, "report", folder.CasePath, "-o", folder["page.html"], "--figures", folder["pictures"]);
+
+        Assert.Equal(2, run.Status);
+        Assert.Contains("profiles.svg exists already", run.Error, StringComparison.Ordinal);
+        Assert.False(File.Exists(folder["page.html"]));
+    }
+
+    [Fact]
+    public async Task AMissedRequirementIsShownAndEndsWithThree()
+    {
+        using var folder = new CaseFolder(Cases.Small + "[require]\ngradient_min = \"999 T/m\"\n");
+
+        Run run = await Run.Of(Steps.Sound, "report", folder.CasePath, "-o", folder["page.html"]);
+
+        Assert.Equal(3, run.Status);
+        Assert.Contains("1 of 1 requirements not met", await File.ReadAllTextAsync(folder["page.html"]), StringComparison.Ordinal);
+    }
+
+    [GeneratedRegex("<svg ")]
+    private static partial Regex SvgPattern();
+
+    [GeneratedRegex("(src|href)=\"(https?:)?//")]
+    private static partial Regex FetchPattern();
+
+    [GeneratedRegex("<script type=\"application/json\" id=\"result\">(.*?)</script>", RegexOptions.Singleline)]
+    private static partial Regex ResultPattern();
+}

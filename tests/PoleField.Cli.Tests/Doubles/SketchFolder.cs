@@ -1,0 +1,23 @@
+namespace PoleField.Cli.Tests.Doubles;
+
+/// <summary>A folder with a case of a family, sketched by the tool itself; gone at the end of the test.</summary>
+internal sealed class SketchFolder : IDisposable
+{
+    private readonly DirectoryInfo _folder = Directory.CreateTempSubdirectory("polefield-");
+
+    private SketchFolder(string family) => CasePath = this[family + ".toml"];
+
+    public string CasePath { get; }
+
+    public string this[string name] => Path.Combine(_folder.FullName, name);
+
+    public static async Task<SketchFolder> Of(string family, params string[] dimensions)
+    {
+        var folder = new SketchFolder(family);
+        Run run = await Run.Of(Pipeline.OfLibrary(), ["sketch", family, "-o", folder._folder.FullName, .. dimensions]);
+        Assert.Equal(0, run.Status);
+        return folder;
+    }
+
+    public void Dispose() => _folder.Delete(recursive: true);
+}
