@@ -59,7 +59,13 @@ internal sealed record Pipeline
         SketchPictures = CasePictures.OfSketch,
         ResultPictures = CasePictures.OfSolution,
         Page = ReportOutput.PageOf,
-        Analyses = [MapStep.Create()],
+        Analyses =
+        [
+            MapStep.Create(),
+            RampVerbStep.Create(),
+            CompareStep.Create(),
+            DeflectStep.Create(),
+        ],
     };
 
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
