@@ -60,10 +60,10 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
         }
     }
 
-    /// <summary>Solves on the mesh of another solution of the same section, from its potential, and estimates the error.</summary>
-    public SolvedMagnet OnMeshOf(FieldSolution other)
+    /// <summary>Solves on the mesh of another solution of the same section, from its potential times a scale, and estimates the error.</summary>
+    public SolvedMagnet OnMeshOf(FieldSolution other, double scale)
     {
-        (FieldSolution solution, FieldEquations equations) = SolveOn(other.Mesh, 1, other);
+        (FieldSolution solution, FieldEquations equations) = SolveOn(other.Mesh, 1, other, scale);
         double[] chi = BandCutOff.Nodal(solution.Problem, place.Shape) ?? throw NoBand();
         return Finish(Estimate(solution, equations, chi, 1), equations, 1);
     }
@@ -86,13 +86,14 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
         return mesh;
     }
 
-    private (FieldSolution Solution, FieldEquations Equations) SolveOn(Mesh mesh, int step, FieldSolution? previous)
+    private (FieldSolution Solution, FieldEquations Equations) SolveOn(
+        Mesh mesh, int step, FieldSolution? previous, double scale = 1.0)
     {
         _solving.Start();
         FiniteElementSpace space = FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), _options.Order);
         FieldProblem problem = FieldProblem.Create(magnet, space);
         var equations = new FieldEquations(problem, _options.Threads);
-        double[]? start = previous is not null && equations.IsNonlinear ? Start(previous, equations) : null;
+        double[]? start = previous is not null && equations.IsNonlinear ? Start(previous, equations, scale) : null;
         Report("solve", step, equations.PotentialCount, 0, double.NaN);
         (double[] potential, IReadOnlyList<NewtonStep> history) = FieldSolver.Solve(
             equations,
@@ -104,11 +105,16 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
         return (new FieldSolution(problem, potential, history), equations);
     }
 
-    private static double[] Start(FieldSolution previous, FieldEquations equations)
+    private static double[] Start(FieldSolution previous, FieldEquations equations, double scale)
     {
         FiniteElementSpace space = equations.Problem.Space;
         bool sameNodes = ReferenceEquals(previous.Mesh, space.Mesh) && previous.Order == space.Order;
         double[] start = sameNodes ? (double[])previous.Potential.Clone() : previous.InterpolatedTo(space);
+        for (int node = 0; node < start.Length; node++)
+        {
+            start[node] *= scale;
+        }
+
         equations.ApplyFixedValues(start);
         return start;
     }

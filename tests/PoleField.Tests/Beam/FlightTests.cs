@@ -33,7 +33,7 @@ public sealed class FlightTests
     {
         FlightField wires = FlightField.Over(
             new Box(new Point(-0.001, 0.003), new Point(0.001, 0.008)), new TwoWireField(0.003, default, 20_000).At);
-        var trajectory = new Trajectory(wires, 7 * PhysicalConstants.AtomicMass, 0.4, 0.1);
+        var trajectory = new Trajectory(wires, 7 * PhysicalConstants.AtomicMass, 0.12, 0.1);
         Point from = new(0.0004, 0.0045);
         Point At(int steps) => trajectory.At(from, 900, _ => -MuB, steps)!.Value;
 
@@ -121,7 +121,7 @@ public sealed class FlightTests
         foreach (PatternPoint p in flight.Pattern.Where(p => p.Z > 0.2 * scale && p.Z < 2 * scale))
         {
             double exact = 0.5 * scale * scale / (p.Z * p.Z * p.Z) * Math.Exp(-scale / p.Z);
-            Assert.Equal(exact, p.Intensity, 0.02 / scale);
+            Assert.Equal(exact, p.Intensity, 0.01 / scale);
         }
     }
 
@@ -196,7 +196,7 @@ public sealed class FlightTests
         // So fast that the particle stays where it is: the gradient at the beam counts alone.
         double exact = MuB * new TwoWires(0.003, 10_000).Gradient(new Point(0, 0.0036)) * setup.Lever / (mass * 4e6);
         Assert.Equal(1.0, flight.States[0].AtMostProbable!.Value / exact, 0.01);
-        Assert.InRange(flight.Margin, 1e-6, 1e-3);
+        Assert.InRange(flight.Margin, 1e-6, 3e-3);
         Assert.True(flight.RoomTo.Z > 0.0037);
         Assert.Equal(0.0, flight.ClippedShare, 1e-9);
         Assert.Empty(flight.Findings);
