@@ -59,7 +59,14 @@ internal sealed record Pipeline
         SketchPictures = CasePictures.OfSketch,
         ResultPictures = CasePictures.OfSolution,
         Page = ReportOutput.PageOf,
-        Analyses = [MapStep.Create(), ToleranceStep.Create()],
+        Analyses =
+        [
+            MapStep.Create(),
+            RampVerbStep.Create(),
+            CompareStep.Create(),
+            DeflectStep.Create(),
+            ToleranceStep.Create(),
+        ],
     };
 
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>

@@ -174,8 +174,8 @@ internal sealed record ToleranceSection
 /// <param name="SlitHeight">Beam along z there, metres.</param>
 internal sealed record FlightSection(FlightSpecies Species, FlightSource Source, double Drift, double? SlitWidth, double? SlitHeight);
 
-/// <summary>Built-in species by name, or mass (kg) and moment (J/T).</summary>
-internal sealed record FlightSpecies(string? Name, double? Mass, double? Moment);
+/// <summary>Built-in species by name, or mass (kg) and moment (J/T), fixed or relaxed at a temperature (K).</summary>
+internal sealed record FlightSpecies(string? Name, double? Mass, double? Moment, double? RelaxedAt = null);
 
-/// <summary>Effusive source of a temperature (K), or a speed (m/s) with a relative width.</summary>
+/// <summary>Effusive source of a temperature (K), or a speed (m/s) with a relative full width at half maximum.</summary>
 internal sealed record FlightSource(double? Temperature, double? Speed, double? Width);

@@ -1,3 +1,5 @@
+using PoleField.Beam;
+
 namespace PoleField.Cli.Case;
 
 /// <summary>Reads <c>[flight]</c>.</summary>
@@ -30,6 +32,7 @@ internal static class FlightReader
         string? name = table.Text("species");
         double? mass = table.Quantity("mass", Dimension.Mass, Allowed.Positive);
         double? moment = table.Quantity("moment", Dimension.Moment, Allowed.Positive);
+        double? relaxedAt = table.Quantity("relaxed_at", Dimension.Temperature, Allowed.Positive);
         if (name is null && mass is null && moment is null)
         {
             table.Missing("species", "\"K-39\", or mass and moment");
@@ -38,13 +41,25 @@ internal static class FlightReader
         {
             table.Missing(mass is null ? "mass" : "moment", mass is null ? "\"39 u\"" : "\"1 muB\"");
         }
-        else if (name is not null && (mass is not null || moment is not null))
+        else if (name is not null && (mass is not null || moment is not null || relaxedAt is not null))
         {
             table.Faults.Add(
-                table.SpotOf("species"), "contradiction", "[flight] has a species and a mass or moment.", "Keep species, or keep mass and moment.");
+                table.SpotOf("species"),
+                "contradiction",
+                "[flight] has a species and a mass, moment or relaxed_at.",
+                "Keep species, or keep mass and moment, with relaxed_at if they relax.");
+        }
+        else if (name is not null && Atom.Find(name) is null)
+        {
+            string[] known = [.. Atom.All.Select(a => a.Name)];
+            table.Faults.Add(
+                table.SpotOf("species"),
+                "unknown-species",
+                $"There is no built-in species \"{name}\".",
+                $"Known are {string.Join(", ", known)}; or give mass and moment.");
         }
 
-        return new FlightSpecies(name, mass, moment);
+        return new FlightSpecies(name, mass, moment, relaxedAt);
     }
 
     private static FlightSource ReadSource(TableReader table)
@@ -61,7 +76,7 @@ internal static class FlightReader
 
         double? temperature = source.Quantity("temperature", Dimension.Temperature, Allowed.Positive);
         double? speed = source.Quantity("speed", Dimension.Speed, Allowed.Positive);
-        double? width = source.Quantity("width", Dimension.Ratio, Allowed.NotNegative);
+        double? width = source.Quantity("width", Dimension.Ratio, new Allowed(0, 0.5));
         if (temperature is null == speed is null)
         {
             table.Faults.Add(

@@ -1,5 +1,6 @@
 using System.CommandLine;
 using PoleField.Beam;
+using PoleField.Cli.Case;
 using PoleField.Cli.Text;
 using PoleField.Output.Pages;
 
@@ -21,6 +22,9 @@ internal sealed record AnalysisStep(string Name, string Description)
 
     /// <summary>True when the first file is JSON, which <c>--json</c> prints.</summary>
     public bool FirstIsJson { get; init; } = true;
+
+    /// <summary>What a case lacks for it, looked at before the solve.</summary>
+    public Func<CaseFile, IReadOnlyList<Finding>> Needs { get; init; } = _ => [];
 
     public required Func<AnalysisRequest, Analysis> Run { get; init; }
 

@@ -41,6 +41,11 @@ internal sealed class AnalysisVerb
             return ExitStatus.WrongInput;
         }
 
+        if (_step.Needs(loaded.Case!) is { Count: > 0 } missing)
+        {
+            throw new InputException([.. missing.Select(f => f with { File = Path.GetFileName(loaded.Path) })]);
+        }
+
         List<string> targets = Targets(arguments);
         using OutputFiles files = OutputFiles.Plan(targets, _run.Force(arguments));
         SolveOptions options = _run.OptionsOf(arguments, loaded);

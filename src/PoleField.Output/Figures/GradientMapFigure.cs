@@ -19,14 +19,26 @@ public static class GradientMapFigure
     /// <param name="aperture">The aperture.</param>
     /// <param name="values">Values at a place inside the aperture.</param>
     /// <param name="gradient">Statistics of d|B|/dz over the aperture.</param>
-    public static Figure Draw(Aperture aperture, Func<Point, BeamValues> values, ApertureStatistics gradient)
+    public static Figure Draw(Aperture aperture, Func<Point, BeamValues> values, ApertureStatistics gradient) => Draw(
+        aperture,
+        p => 100 * ((values(p).Gradient / gradient.Mean) - 1),
+        new DeviationText
+        {
+            Name = "gradient-map",
+            Title = "Gradient d|B|/dz over the aperture: deviation from its mean",
+            Caption = Caption(gradient),
+            From = "the mean",
+        });
+
+    /// <summary>Draws a deviation in per cent over the aperture.</summary>
+    internal static Figure Draw(Aperture aperture, Func<Point, double> percent, DeviationText text)
     {
         Box box = aperture.Outline.Bounds;
         Box view = box.Inflated(0.03 * Math.Min(box.Width, box.Height));
         double height = Math.Clamp(PlotWidth * view.Height / view.Width, SmallestHeight, LargestHeight);
         double stretch = height / view.Height / (PlotWidth / view.Width);
         int rows = (int)Math.Max(24, Columns * height / PlotWidth);
-        double[,] nodes = Sample(aperture, p => 100 * ((values(p).Gradient / gradient.Mean) - 1), rows);
+        double[,] nodes = Sample(aperture, percent, rows);
         double most = Largest(nodes);
         double step = FigureStyle.NiceStep(Math.Max(2 * most, 1e-9) / 7);
 
@@ -41,12 +53,12 @@ public static class GradientMapFigure
         Figure figure = FigureFrame.Begin(
             new FrameText
             {
-                Name = "gradient-map",
-                Title = "Gradient d|B|/dz over the aperture: deviation from its mean",
-                Caption = Caption(gradient, stretch),
+                Name = text.Name,
+                Title = text.Title,
+                Caption = text.Caption + Stretched(stretch),
                 Key =
                 [
-                    new("mean", MeanPen), new("stronger than the mean", FigureStyle.Contour), new("weaker than the mean", BelowPen),
+                    new($"as {text.From}", MeanPen), new($"stronger than {text.From}", FigureStyle.Contour), new($"weaker than {text.From}", BelowPen),
                 ],
             },
             new PlotRoom(PlotWidth, height, Right: ColourBar.Room + 8));
@@ -55,7 +67,7 @@ public static class GradientMapFigure
         AddLines(figure.Model, lines, step);
         figure.Model.Annotations.Add(new Strokes([SectionDrawing.Flatten(aperture.Outline, 0.1 * view.Width / PlotWidth)], FigureStyle.Outline, rim: 0));
         figure.Model.Annotations.Add(LevelLabels.Of(lines, v => Percent(v, step)));
-        figure.Model.Annotations.Add(new ColourBar("deviation from the mean (%)", -most, most, FigureStyle.Signed));
+        figure.Model.Annotations.Add(new ColourBar($"deviation from {text.From} (%)", -most, most, FigureStyle.Signed));
         return figure;
     }
 
@@ -77,12 +89,12 @@ public static class GradientMapFigure
         ? "0"
         : (value > 0 ? "+" : "") + FigureStyle.Number(value, 2) + " %";
 
-    private static string Caption(ApertureStatistics gradient, double stretch)
-    {
-        string text = $"Mean {FigureStyle.Number(gradient.Mean)} T/m, from {FigureStyle.Number(gradient.Min)} to {FigureStyle.Number(gradient.Max)} T/m; "
+    private static string Caption(ApertureStatistics gradient) =>
+        $"Mean {FigureStyle.Number(gradient.Mean)} T/m, from {FigureStyle.Number(gradient.Min)} to {FigureStyle.Number(gradient.Max)} T/m; "
             + $"spread {FigureStyle.Number(100 * gradient.Spread, 3)} %, rms {FigureStyle.Number(100 * gradient.Rms, 3)} %.";
-        return Math.Abs(stretch - 1) < 0.01 ? text : text + $" z is drawn {FigureStyle.Number(stretch, 2)} times as large as y.";
-    }
+
+    private static string Stretched(double stretch) =>
+        Math.Abs(stretch - 1) < 0.01 ? string.Empty : $" z is drawn {FigureStyle.Number(stretch, 2)} times as large as y.";
 
     // Deviation in per cent at node i, j of a grid that spans the aperture's box; not a number outside the aperture.
     private static double[,] Sample(Aperture aperture, Func<Point, double> deviation, int rows)
@@ -155,4 +167,17 @@ public static class GradientMapFigure
             columns * 3,
             rows * 3);
     }
+}
+
+/// <summary>What stands around a map of deviations.</summary>
+internal sealed record DeviationText
+{
+    public required string Name { get; init; }
+
+    public required string Title { get; init; }
+
+    public required string Caption { get; init; }
+
+    /// <summary>What it deviates from, with its article.</summary>
+    public required string From { get; init; }
 }

@@ -80,7 +80,7 @@ public static class ResultJson
             "Give a result file written by this version, or solve again.") { File = fileName, Line = line },
     ]);
 
-    private static BeamSection Beam(BeamReport report)
+    internal static BeamSection Beam(BeamReport report)
     {
         BeamValues b = report.Beam;
         return new BeamSection(
@@ -148,11 +148,11 @@ public static class ResultJson
             Finite(result.Record.AccuracyAsked));
     }
 
-    private static double? Finite(double? value) => value is double v && double.IsFinite(v) ? v : null;
+    internal static double? Finite(double? value) => value is double v && double.IsFinite(v) ? v : null;
 
-    private static double? Millimetres(double metres) => Finite(metres * 1e3);
+    internal static double? Millimetres(double metres) => Finite(metres * 1e3);
 
-    private static double[]? Pair(Point p) => p.IsFinite ? [p.Y, p.Z] : null;
+    internal static double[]? Pair(Point p) => p.IsFinite ? [p.Y, p.Z] : null;
 
     private static JsonSerializerOptions MakeOptions()
     {

@@ -1,4 +1,5 @@
 using System.Diagnostics;
+using PoleField.Geometry;
 using PoleField.Magnetostatics;
 using PoleField.Meshing;
 
@@ -68,10 +69,10 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
         }
     }
 
-    /// <summary>Solves on the mesh of another solution of the same section, from its potential, and estimates the error.</summary>
-    public SolvedMagnet OnMeshOf(FieldSolution other)
+    /// <summary>Solves on the mesh of another solution of the same section, from its potential times a scale, and estimates the error.</summary>
+    public SolvedMagnet OnMeshOf(FieldSolution other, double scale)
     {
-        (FieldSolution solution, FieldEquations equations) = SolveOn(other.Mesh, 1, other);
+        (FieldSolution solution, FieldEquations equations) = SolveOn(other.Mesh, 1, other, scale);
         double[] chi = BandCutOff.Nodal(solution.Problem, place.Shape) ?? throw NoBand();
         return Finish(Estimate(solution, equations, chi, 1), equations, 1);
     }
@@ -88,6 +89,13 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     private static int[] MagneticParts(Magnet magnet) =>
         [.. Enumerable.Range(0, magnet.Roles.Count).Where(part => magnet.Roles[part].Material.IsMagnetic)];
 
+    // The open circle keeps as far from the aperture as the parts do, so that the band of the extraction has room.
+    private Point[] EnclosedPlaces()
+    {
+        Box box = place.Aperture.Outline.Bounds.Inflated(Math.Min(place.Clearance, magnet.Section.Bounds.Diagonal));
+        return [box.Min, box.Max, new Point(box.Min.Y, box.Max.Z), new Point(box.Max.Y, box.Min.Z)];
+    }
+
     private MeshingException NoBand() =>
         new("No band of air elements fits between the aperture and its surroundings.", place.Aperture.Centre);
 
@@ -95,18 +103,19 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     {
         Report("mesh", step, 0, 0, double.NaN);
         _meshing.Start();
-        Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { OpenDiscSize = _openDiscSize, Enclosed = place.Shape.Corners }, _cancellation);
+        Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { OpenDiscSize = _openDiscSize, Enclosed = EnclosedPlaces() }, _cancellation);
         _meshing.Stop();
         return mesh;
     }
 
-    private (FieldSolution Solution, FieldEquations Equations) SolveOn(Mesh mesh, int step, FieldSolution? previous)
+    private (FieldSolution Solution, FieldEquations Equations) SolveOn(
+        Mesh mesh, int step, FieldSolution? previous, double scale = 1.0)
     {
         _solving.Start();
         FiniteElementSpace space = FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), _options.Order);
         FieldProblem problem = FieldProblem.Create(magnet, space);
         var equations = new FieldEquations(problem, _options.Threads);
-        double[]? start = previous is not null && equations.IsNonlinear ? Start(previous, equations) : null;
+        double[]? start = previous is not null && equations.IsNonlinear ? Start(previous, equations, scale) : null;
         Report("solve", step, equations.PotentialCount, 0, double.NaN);
         (double[] potential, IReadOnlyList<NewtonStep> history) = FieldSolver.Solve(
             equations,
@@ -118,11 +127,16 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
         return (new FieldSolution(problem, potential, history), equations);
     }
 
-    private static double[] Start(FieldSolution previous, FieldEquations equations)
+    private static double[] Start(FieldSolution previous, FieldEquations equations, double scale)
     {
         FiniteElementSpace space = equations.Problem.Space;
         bool sameNodes = ReferenceEquals(previous.Mesh, space.Mesh) && previous.Order == space.Order;
         double[] start = sameNodes ? (double[])previous.Potential.Clone() : previous.InterpolatedTo(space);
+        for (int node = 0; node < start.Length; node++)
+        {
+            start[node] *= scale;
+        }
+
         equations.ApplyFixedValues(start);
         return start;
     }

@@ -37,14 +37,21 @@ public static class MagnetSolver
         SolvedMagnet near,
         SolveOptions? options = null,
         Action<SolveProgress>? progress = null,
-        CancellationToken cancellation = default)
+        CancellationToken cancellation = default) =>
+        SolveOnMeshOf(magnet, near, 1.0, new RunSettings(options ?? new SolveOptions(), progress, cancellation));
+
+    /// <inheritdoc cref="SolveOnMeshOf(Magnet, SolvedMagnet, SolveOptions?, Action{SolveProgress}?, CancellationToken)"/>
+    /// <param name="magnet">Magnet with the section of <paramref name="near"/>.</param>
+    /// <param name="near">A solved magnet.</param>
+    /// <param name="scale">Newton starts at this many times the potential of <paramref name="near"/>.</param>
+    /// <param name="settings">Options, progress and cancellation.</param>
+    internal static SolvedMagnet SolveOnMeshOf(Magnet magnet, SolvedMagnet near, double scale, RunSettings settings)
     {
         if (!ReferenceEquals(magnet.Section, near.Solution.Magnet.Section))
         {
             throw new ArgumentException("A mesh serves only the section it was made for.", nameof(magnet));
         }
 
-        var settings = new RunSettings(options ?? new SolveOptions(), progress, cancellation);
-        return new AdaptiveRun(magnet, BeamPlace.In(magnet, near.Field.Aperture), settings).OnMeshOf(near.Solution);
+        return new AdaptiveRun(magnet, BeamPlace.In(magnet, near.Field.Aperture), settings).OnMeshOf(near.Solution, scale);
     }
 }

@@ -11,6 +11,7 @@ public sealed class Flight
 {
     private const int PointsAcross = 5;
     private const int Strips = 7;
+    private const int PiecesPerCell = 6;
     private const int EdgeSearch = 12;         // halvings to find the speed at which particles begin to be lost
     private const double MostUnsettled = 1e-4;
 
@@ -139,13 +140,37 @@ public sealed class Flight
                 (slow, low) = Slowest(entrance, state, slow, fast, high);
             }
 
-            double weight = of.Share * _setup.Speeds.Share(slow, fast);
-            bundles.Add(new RayBundle(Math.Min(low!.Value, high), Math.Max(low.Value, high), _height / Strips, weight, of.Pull));
+            AddCell(bundles, (slow, low!.Value), (fast, high), of);
             (fast, high) = (slow, low.Value);
             if (last)
             {
                 return;
             }
+        }
+    }
+
+    // Heights go nearly straight with 1/v², which makes the intensity within a cell smooth without more trajectories.
+    private void AddCell(
+        List<RayBundle> bundles, (double Speed, double Height) slow, (double Speed, double Height) fast, (double Share, int Pull) of)
+    {
+        double strip = _height / Strips;
+        if (slow.Speed == fast.Speed)
+        {
+            bundles.Add(new RayBundle(slow.Height, slow.Height, strip, of.Share * _setup.Speeds.Share(slow.Speed, fast.Speed), of.Pull));
+            return;
+        }
+
+        double slowest = 1 / (slow.Speed * slow.Speed);
+        double range = (1 / (fast.Speed * fast.Speed)) - slowest;
+        (double Speed, double Height) last = slow;
+        for (int i = 1; i <= PiecesPerCell; i++)
+        {
+            double t = (double)i / PiecesPerCell;
+            double speed = i == PiecesPerCell ? fast.Speed : 1 / Math.Sqrt(slowest + (t * range));
+            double height = slow.Height + (t * (fast.Height - slow.Height));
+            double share = of.Share * _setup.Speeds.Share(last.Speed, speed);
+            bundles.Add(new RayBundle(Math.Min(last.Height, height), Math.Max(last.Height, height), strip, share, of.Pull));
+            last = (speed, height);
         }
     }
 

@@ -12,8 +12,10 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
     private const double LargestGrowth = 4.0;   // on each side, in widths or heights of the beam
     private const int MostMoves = 24;
 
-    // Of the aperture's clearance; the extraction needs a layer of air elements in what is kept.
-    private static readonly double[] Margins = [0.12, 0.25, 0.45, 0.7];
+    // Margin as a share of the aperture's clearance, and growth as a share of the largest: the extraction needs a layer of
+    // air elements in what is kept, and far from the beam elements are large.
+    private static readonly (double Margin, double Growth)[] Attempts =
+        [(0.12, 1), (0.25, 1), (0.25, 0.5), (0.45, 0.5), (0.45, 0.2), (0.7, 0.2), (0.7, 0.05)];
 
     /// <summary>Finds the room in a solved magnet.</summary>
     /// <exception cref="InputException">The rectangle around the aperture does not lie in air.</exception>
@@ -32,10 +34,10 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
         }
 
         double usable = Math.Min(clearance, LargestGrowth * beam.Diagonal);
-        foreach (double share in Margins)
+        foreach ((double share, double growth) in Attempts)
         {
             double margin = share * usable;
-            Box room = Grown(magnet, beam, margin);
+            Box room = Grown(magnet, beam, margin, growth * LargestGrowth);
             if (FieldOver(solved, room) is { } field)
             {
                 return new FlightRoom(FlightField.Over(room, field.At), margin);
@@ -46,13 +48,13 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
     }
 
     // Each side moves out as far as the remaining clearance surely allows, again and again.
-    private static Box Grown(Magnet magnet, Box beam, double margin)
+    private static Box Grown(Magnet magnet, Box beam, double margin, double growth)
     {
         Box room = beam;
-        double tall = LargestGrowth * Math.Max(beam.Height, beam.Width);
+        double tall = growth * Math.Max(beam.Height, beam.Width);
         foreach (Point direction in new[] { new Point(0, 1), new Point(0, -1), new Point(1, 0), new Point(-1, 0) })
         {
-            double most = direction.Y == 0 ? tall : beam.Width;
+            double most = direction.Y == 0 ? tall : Math.Min(1, growth) * beam.Width;
             double moved = 0;
             for (int k = 0; k < MostMoves && moved < most; k++)
             {

@@ -37,7 +37,7 @@ public sealed class SpeedDistribution
     /// <param name="mass">Mass, kg, positive.</param>
     public static SpeedDistribution Effusive(double temperature, double mass)
     {
-        const int cells = 80;
+        const int cells = 60;
         const double slowest = 0.1;   // of α: 5e-5 of the flux is slower
         const double fastest = 4.2;   // of α: 4e-7 of the flux is faster
         double alpha = Math.Sqrt(2 * PhysicalConstants.Boltzmann * temperature / mass);
@@ -72,7 +72,7 @@ public sealed class SpeedDistribution
             return new SpeedDistribution(speed, speed, [speed, speed], _ => 0);
         }
 
-        const int cells = 48;
+        const int cells = 32;
         const double reach = 4;       // standard deviations; 6e-5 of the beam lies beyond
         double sigma = speed * width / (2 * Math.Sqrt(2 * Math.Log(2)));
         double[] edges = [.. Enumerable.Range(0, cells + 1).Select(i => speed + (sigma * reach * ((2.0 * i / cells) - 1)))];

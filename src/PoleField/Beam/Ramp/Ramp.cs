@@ -54,15 +54,17 @@ public sealed class Ramp
 
     private RampReport Run()
     {
-        SolvedMagnet last = SolveAt(StartFactor, _full, out bool ownMesh);
+        SolvedMagnet last = SolveAt(StartFactor, (1.0, _full), out bool ownMesh);
         _halfSpacing = HalfSpacing(last);
         RampStep start = StepOf(StartFactor, last, ownMesh);
         var steps = new List<RampStep>();
         var near = new List<SolvedMagnet>();
+        double lastFactor = StartFactor;
         foreach (double factor in _settings.Factors)
         {
             bool own = false;
-            last = factor == 1.0 ? _full : SolveAt(factor, last, out own);
+            last = factor == 1.0 ? _full : SolveAt(factor, (lastFactor, last), out own);
+            lastFactor = factor;
             steps.Add(StepOf(factor, last, own));
             near.Add(last);
         }
@@ -80,10 +82,12 @@ public sealed class Ramp
         };
     }
 
-    private SolvedMagnet SolveAt(double factor, SolvedMagnet near, out bool ownMesh)
+    // Newton starts as if the neighbour's field grew with the currents: too strong a field in saturating iron is the good side.
+    private SolvedMagnet SolveAt(double factor, (double Factor, SolvedMagnet Solved) near, out bool ownMesh)
     {
         Magnet magnet = _full.Solution.Magnet.WithCurrentsScaled(factor);
-        SolvedMagnet solved = MagnetSolver.SolveOnMeshOf(magnet, near, _run.Options, _run.Progress, _run.Cancellation);
+        double scale = _otherSources ? 1.0 : factor / near.Factor;
+        SolvedMagnet solved = MagnetSolver.SolveOnMeshOf(magnet, near.Solved, scale, _run);
         ownMesh = !solved.Record.AccuracyMet && _full.Record.AccuracyMet;
         return ownMesh
             ? MagnetSolver.Solve(magnet, _full.Field.Aperture, _run.Options, _run.Progress, _run.Cancellation)
@@ -157,7 +161,7 @@ public sealed class Ramp
         double found = from + ((to - from) * fromExcess / (fromExcess - toExcess));
         for (int k = 0; k < OnsetSolves; k++)
         {
-            double excess = Excess(StepOf(found, SolveAt(found, near, out _), false), best);
+            double excess = Excess(StepOf(found, SolveAt(found, (after.Factor, near), out _), false), best);
             if (Math.Abs(excess) < OnsetTolerance * _settings.Onset)
             {
                 break;
