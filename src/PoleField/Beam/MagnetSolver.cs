@@ -72,6 +72,7 @@ public static class MagnetSolver
         CancellationToken cancellation)
     {
         private readonly ApertureShape _shape = new(aperture);
+        private readonly Point[] _enclosed = EnclosedPlaces(magnet, aperture);
         private readonly Stopwatch _meshing = new();
         private readonly Stopwatch _solving = new();
         private readonly Stopwatch _evaluating = new();
@@ -133,6 +134,13 @@ public static class MagnetSolver
         private static double Fineness(double accuracy) =>
             Math.Clamp(Math.Pow(accuracy / RuleAccuracy, 1 / RuleOrder), Finest, Coarsest);
 
+        // The open circle keeps as far from the aperture as the parts do, so that the band of the extraction has room.
+        private static Point[] EnclosedPlaces(Magnet magnet, Aperture aperture)
+        {
+            Box box = aperture.Outline.Bounds.Inflated(Math.Min(Clearance.Of(magnet, aperture), magnet.Section.Bounds.Diagonal));
+            return [box.Min, box.Max, new Point(box.Min.Y, box.Max.Z), new Point(box.Max.Y, box.Min.Z)];
+        }
+
         private static int[] MagneticParts(Magnet magnet) =>
             [.. Enumerable.Range(0, magnet.Roles.Count).Where(part => magnet.Roles[part].Material.IsMagnetic)];
 
@@ -140,7 +148,7 @@ public static class MagnetSolver
         {
             Report("mesh", step, 0, 0, double.NaN);
             _meshing.Start();
-            Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { Enclosed = _shape.Corners }, cancellation);
+            Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { Enclosed = _enclosed }, cancellation);
             _meshing.Stop();
             _solving.Start();
             FiniteElementSpace space = FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), options.Order);

@@ -265,7 +265,7 @@ internal sealed class FieldEquations
     private static (double[] OnRim, double[] Load) BackgroundTerms(FieldProblem problem)
     {
         FiniteElementSpace space = problem.Space;
-        if (problem.Magnet.AppliedField == default || space.Mesh.Circle is null)
+        if (space.Mesh.Circle is null || (problem.Magnet.AppliedField == default && problem.NetCurrent == 0.0))
         {
             return ([], []);
         }
@@ -293,7 +293,59 @@ internal sealed class FieldEquations
             }
         }
 
-        return (onRim, RimLoad(problem, isRim));
+        double[] load = RimLoad(problem, isRim);
+        SpreadReturnCurrent(problem, isRim, load);
+        return (onRim, load);
+    }
+
+    // A net current I makes A grow like the logarithm of the distance. The second disc holds what is left after taking
+    // −(μ0 I/2π) ln(r/R) out, which vanishes on the rim and leaves there the load −I/(2πR) ∮ v ds.
+    private static void SpreadReturnCurrent(FieldProblem problem, bool[] isRim, double[] load)
+    {
+        if (problem.NetCurrent == 0.0)
+        {
+            return;
+        }
+
+        FiniteElementSpace space = problem.Space;
+        double perLength = problem.NetCurrent / (Math.Tau * space.Mesh.Circle!.Radius);
+        for (int e = 0; e < space.ElementCount; e++)
+        {
+            for (int side = 0; side < 3 && space.Mesh.Regions[e] != Mesh.Exterior; side++)
+            {
+                int c = space.Edges.CurveEdgeOf(space.Edges.OfTriangle(e, side));
+                if (c >= 0 && space.Mesh.CurveEdges[c].SectionEdge < 0)
+                {
+                    AddSideLoad(space, (e, side), -perLength, load);
+                }
+            }
+        }
+    }
+
+    // factor · ∫ v ds along one side of an element.
+    private static void AddSideLoad(FiniteElementSpace space, (int Element, int Side) at, double factor, double[] load)
+    {
+        ReadOnlySpan<(double Xi, double Eta)> corners = [(0, 0), (1, 0), (0, 1)];
+        (double x0, double e0) = corners[at.Side];
+        (double x1, double e1) = corners[(at.Side + 1) % 3];
+        ReadOnlySpan<int> nodes = space.NodesOf(at.Element);
+        Span<double> values = stackalloc double[nodes.Length];
+        Span<double> byXi = stackalloc double[nodes.Length];
+        Span<double> byEta = stackalloc double[nodes.Length];
+        GaussRule rule = GaussRule.Legendre(space.Order + 2);
+        for (int q = 0; q < rule.Nodes.Length; q++)
+        {
+            double xi = x0 + (rule.Nodes[q] * (x1 - x0));
+            double eta = e0 + (rule.Nodes[q] * (e1 - e0));
+            space.Reference.Values(xi, eta, values);
+            space.Reference.Gradients(xi, eta, byXi, byEta);
+            Jacobian j = space.JacobianAt(at.Element, byXi, byEta);
+            double length = (((x1 - x0) * j.ByXi) + ((e1 - e0) * j.ByEta)).Length;
+            for (int i = 0; i < nodes.Length; i++)
+            {
+                load[nodes[i]] += factor * rule.Weights[q] * length * values[i];
+            }
+        }
     }
 
     // ∮ ν0 ∂nA v ds of the background, by the divergence theorem: only rim nodes keep a share.
