@@ -79,7 +79,7 @@ internal sealed record BeamEstimate
                 ElsewhereFactor * Measures.FieldDifference(CorrectedMeasures) * Measures.Field.Largest),
             GradientError = Math.Max(
                 Bar(Measures.Centre.Gradient, CorrectedMeasures.Centre.Gradient, floor),
-                ElsewhereFactor * Measures.GradientDifference(CorrectedMeasures) * Measures.Gradient.Largest),
+                ElsewhereFactor * Measures.GradientDifference(CorrectedMeasures) * Measures.GradientScale),
             ApertureArea = place.Aperture.Outline.Area,
             Clearance = place.Clearance,
             Field = Measures.Field,

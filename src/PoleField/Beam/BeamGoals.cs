@@ -12,16 +12,18 @@ internal static class BeamGoals
     public static IReadOnlyList<double[]> Derivatives(BeamExtraction extraction, BeamField field, ApertureShape shape)
     {
         BeamValues centre = field.At(field.Aperture.Centre);
+        double reach = shape.Corners.Max(p => p.DistanceTo(field.Aperture.Centre));
+        double gradientScale = Math.Max(new Point(centre.DByDz, centre.DBzDz).Length, BeamMeasures.LeastGradient(centre.Field, reach));
         var goals = new List<double[]>
         {
             FieldDerivative(extraction, centre, 1.0 / centre.Field),
-            GradientDerivative(extraction, centre, 1.0 / GradientScale(centre)),
+            GradientDerivative(extraction, centre, 1.0 / gradientScale),
         };
         Point[] rim = [.. shape.EdgePoints(perSide: 1)];
         int stride = Math.Max(1, rim.Length / RimPoints);
         for (int i = 0; i < rim.Length && goals.Count < RimPoints + 2; i += stride)
         {
-            goals.Add(GradientDerivative(extraction, field.At(rim[i]), 1.0 / GradientScale(centre)));
+            goals.Add(GradientDerivative(extraction, field.At(rim[i]), 1.0 / gradientScale));
         }
 
         return goals;
@@ -52,8 +54,4 @@ internal static class BeamGoals
         var second = new Complex(-v.By, -v.Bz) * (factor / v.Field);
         return new BeamTerm(v.At, first, second);
     }
-
-    // In a field without gradient along z the transverse one sets the scale.
-    private static double GradientScale(BeamValues v) =>
-        Math.Max(new Point(v.DByDz, v.DBzDz).Length, double.Epsilon);
 }

@@ -5,6 +5,8 @@ namespace PoleField.Beam;
 /// <summary>The beam's numbers of one extracted field; comparing two of them gives the errors of all numbers at once.</summary>
 internal sealed record BeamMeasures
 {
+    private const double GradientOfNote = 0.1; // change of the field over the aperture, relative
+
     public required BeamValues Centre { get; init; }
 
     public required ApertureStatistics Field { get; init; }
@@ -44,9 +46,18 @@ internal sealed record BeamMeasures
     public double FieldDifference(BeamMeasures other) =>
         Largest(other, v => v.Field) / Field.Largest;
 
-    /// <summary>Largest difference of G between two fields at all sample points, over the largest |G|.</summary>
-    public double GradientDifference(BeamMeasures other) =>
-        Largest(other, v => v.Gradient) / Gradient.Largest;
+    /// <summary>Largest difference of G between two fields at all sample points, over <see cref="GradientScale"/>.</summary>
+    public double GradientDifference(BeamMeasures other) => Largest(other, v => v.Gradient) / GradientScale;
+
+    /// <summary>The largest |G| over the aperture, but at least what counts as a gradient there, T/m.</summary>
+    public double GradientScale => Math.Max(
+        Gradient.Largest, LeastGradient(Field.Largest, Edge.Max(v => v.At.DistanceTo(Centre.At))));
+
+    /// <summary>
+    /// Gradient that counts as none, T/m: it changes the field by a tenth over the aperture's greatest reach from its centre.
+    /// In a uniform field the accuracy asked for is relative to this.
+    /// </summary>
+    public static double LeastGradient(double field, double reach) => GradientOfNote * field / reach;
 
     private double Largest(BeamMeasures other, Func<BeamValues, double> quantity)
     {

@@ -17,7 +17,7 @@ internal static class Circuit
         double driving = DrivingAmpereTurns(solution.Magnet);
         double gap = GapAmpereTurns(solution, beam);
         (double energy, double linkage) = Energies(solution);
-        double? inductance = driving > 0 ? linkage / (driving * driving) : null;
+        double? inductance = driving > 0 && !HasEnergyAtInfinity(solution.Problem) ? linkage / (driving * driving) : null;
         return new CircuitReport(driving, gap, driving - gap, energy, inductance)
         {
             GapPullPerMetre = ForceReports.AcrossGap(solution, beam),
@@ -102,6 +102,10 @@ internal static class Circuit
         return part >= 0 && solution.Magnet.Roles[part].Material.IsMagnetic;
     }
 
+    /// <summary>With a uniform background, or a net current in open surroundings, the energy of all space is infinite.</summary>
+    public static bool HasEnergyAtInfinity(FieldProblem problem) =>
+        problem.Magnet.AppliedField != default || (problem.Space.Mesh.Circle is not null && problem.NetCurrent != 0.0);
+
     /// <summary>Stored energy per metre ∫ w dS over all space, and ∫ J A dS, J/m.</summary>
     public static (double Energy, double Linkage) Energies(FieldSolution solution)
     {
@@ -135,7 +139,6 @@ internal static class Circuit
             }
         }
 
-        // With a uniform background the energy of all space is infinite.
-        return (problem.Magnet.AppliedField == default ? energy : double.NaN, linkage);
+        return (HasEnergyAtInfinity(problem) ? double.NaN : energy, linkage);
     }
 }

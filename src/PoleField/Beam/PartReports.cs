@@ -38,7 +38,7 @@ internal static class PartReports
     private static double? TurnsPerFieldProduct(FieldSolution solution)
     {
         double driving = Circuit.DrivingAmpereTurns(solution.Magnet);
-        bool currentsOnly = solution.Magnet.AppliedField == default && solution.Magnet.Roles.All(r => r.Remanence == default);
+        bool currentsOnly = !Circuit.HasEnergyAtInfinity(solution.Problem) && solution.Magnet.Roles.All(r => r.Remanence == default);
         return currentsOnly && driving > 0 ? driving / Circuit.Energies(solution).Linkage : null;
     }
 

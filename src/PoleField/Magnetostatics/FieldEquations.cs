@@ -26,7 +26,7 @@ internal sealed class FieldEquations
         _unknownOfNode = NumberUnknowns(problem.Space, out int count);
         UnknownCount = count;
         (_linear, _nonlinear) = SplitByLaw(problem);
-        (Background, _backgroundLoad) = BackgroundTerms(problem);
+        (Background, _backgroundLoad) = RimTerms.Of(problem);
         Pattern = MakePattern(out int[] scatter);
         _sweep = new ElementSweep(problem, Background, scatter, threads);
         Analysis = CholeskyAnalysis.Analyse(Pattern, UnknownPlaces());
@@ -248,89 +248,6 @@ internal sealed class FieldEquations
         }
 
         return places;
-    }
-
-    private static (double[] OnRim, double[] Load) BackgroundTerms(FieldProblem problem)
-    {
-        double[] onRim = RimBackground(problem, out bool[] isRim);
-        return (onRim, onRim.Length == 0 ? [] : RimLoad(problem, isRim));
-    }
-
-    /// <summary>Potential of the uniform background on the rim between the discs, by node; empty without background.</summary>
-    public static double[] RimBackground(FieldProblem problem) => RimBackground(problem, out _);
-
-    private static double[] RimBackground(FieldProblem problem, out bool[] isRim)
-    {
-        FiniteElementSpace space = problem.Space;
-        isRim = new bool[space.NodeCount];
-        if (problem.Magnet.AppliedField == default || space.Mesh.Circle is null)
-        {
-            return [];
-        }
-
-        var onRim = new double[space.NodeCount];
-        for (int e = 0; e < space.ElementCount; e++)
-        {
-            for (int side = 0; side < 3; side++)
-            {
-                int edge = space.Edges.OfTriangle(e, side);
-                int c = space.Edges.CurveEdgeOf(edge);
-                if (c < 0 || space.Mesh.CurveEdges[c].SectionEdge >= 0)
-                {
-                    continue;
-                }
-
-                (int lower, int higher) = space.Edges.Ends(edge);
-                int first = space.Mesh.Vertices.Count + (edge * (space.Order - 1));
-                foreach (int node in (IEnumerable<int>)[lower, higher, .. Enumerable.Range(first, space.Order - 1)])
-                {
-                    isRim[node] = true;
-                    onRim[node] = problem.BackgroundPotential(space.Places[node]);
-                }
-            }
-        }
-
-        return onRim;
-    }
-
-    // ∮ ν0 ∂nA v ds of the background, by the divergence theorem: only rim nodes keep a share.
-    private static double[] RimLoad(FieldProblem problem, bool[] isRim)
-    {
-        FiniteElementSpace space = problem.Space;
-        var load = new double[space.NodeCount];
-        var kernel = new ElementKernel(problem);
-        for (int e = 0; e < space.ElementCount; e++)
-        {
-            ReadOnlySpan<int> nodes = space.NodesOf(e);
-            if (space.Mesh.Regions[e] == Mesh.Exterior || !nodes.ContainsAnyWhere(isRim))
-            {
-                continue;
-            }
-
-            kernel.EvaluateLinear(e, PhysicalConstants.Nu0);
-            int k = 0;
-            for (int i = 0; i < nodes.Length; i++)
-            {
-                for (int j = 0; j <= i; j++, k++)
-                {
-                    load[nodes[i]] += kernel.Packed[k] * problem.BackgroundPotential(space.Places[nodes[j]]);
-                    if (j < i)
-                    {
-                        load[nodes[j]] += kernel.Packed[k] * problem.BackgroundPotential(space.Places[nodes[i]]);
-                    }
-                }
-            }
-        }
-
-        for (int node = 0; node < load.Length; node++)
-        {
-            if (!isRim[node])
-            {
-                load[node] = 0;
-            }
-        }
-
-        return load;
     }
 }
 

@@ -15,8 +15,11 @@ namespace PoleField.Magnetostatics;
 /// </remarks>
 internal sealed class FieldProblem
 {
-    private FieldProblem(Magnet magnet, FiniteElementSpace space, RegionPhysics[] regions)
+    private const double NetCurrentRounding = 1e-12; // of the sum of all sizes
+
+    private FieldProblem(Magnet magnet, FiniteElementSpace space, RegionPhysics[] regions, double netCurrent)
     {
+        NetCurrent = netCurrent;
         Magnet = magnet;
         Space = space;
         Regions = regions;
@@ -28,6 +31,9 @@ internal sealed class FieldProblem
 
     /// <summary>Physics of each region of the section; the last entry is the second disc's.</summary>
     public RegionPhysics[] Regions { get; }
+
+    /// <summary>Sum of all ampere-turns along the beam, A: it returns at infinity.</summary>
+    public double NetCurrent { get; }
 
     /// <summary>Physics of an element.</summary>
     public ref readonly RegionPhysics PhysicsOf(int element)
@@ -42,6 +48,8 @@ internal sealed class FieldProblem
         CrossSection section = magnet.Section;
         double[] areas = RegionAreas(space, section.Regions.Count);
         var regions = new RegionPhysics[section.Regions.Count + 1];
+        double net = 0;
+        double size = 0;
         for (int r = 0; r < section.Regions.Count; r++)
         {
             Region region = section.Regions[r];
@@ -57,13 +65,16 @@ internal sealed class FieldProblem
             // The mirror image of a magnetised part, like that of a current, keeps Bz and turns By over.
             Point remanence = region.MirrorImage ? new Point(-role.Remanence.Y, role.Remanence.Z) : role.Remanence;
 
+            net += turns;
+            size += Math.Abs(turns);
+
             // By the elements' own area, so that the ampere-turns are exact whatever the curves' approximation.
             double density = turns == 0 ? 0 : turns / areas[r];
             regions[r] = new RegionPhysics(role.Material.Law, new Point(-remanence.Z, remanence.Y), density);
         }
 
         regions[^1] = new RegionPhysics(LinearLaw.Vacuum, default, 0);
-        return new FieldProblem(magnet, space, regions);
+        return new FieldProblem(magnet, space, regions, Math.Abs(net) <= NetCurrentRounding * size ? 0.0 : net);
     }
 
     /// <summary>The same magnet and mesh in another order.</summary>

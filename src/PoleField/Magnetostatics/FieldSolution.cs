@@ -167,8 +167,12 @@ public sealed class FieldSolution
 
         (double a, Point inDisc) = OuterPotentialAndGradient(element, xi, eta);
         Point gradient = Kelvin.GradientOutside(circle, p, inDisc);
-        double by = gradient.Z + Magnet.AppliedField.Y;
-        double bz = -gradient.Y + Magnet.AppliedField.Z;
+        Point d = p - circle.Centre;
+        double ofNetCurrent = PhysicalConstants.Mu0 * Problem.NetCurrent / Math.Tau;
+        Point line = (ofNetCurrent / d.SquaredLength) * d.Perpendicular;
+        double by = gradient.Z + Magnet.AppliedField.Y + line.Y;
+        double bz = -gradient.Y + Magnet.AppliedField.Z + line.Z;
+        a -= ofNetCurrent * Math.Log(d.Length / circle.Radius);
         return new FieldSample(
             a + Problem.BackgroundPotential(p), by, bz, PhysicalConstants.Nu0 * new Point(by, bz).Length, 0);
     }
@@ -193,7 +197,7 @@ public sealed class FieldSolution
         for (int i = 0; i < n; i++)
         {
             double v = Potential[nodes[i]];
-            if (withoutBackground && IsOnRim(nodes[i]))
+            if (withoutBackground && Magnet.AppliedField != default && IsOnRim(nodes[i]))
             {
                 v -= Problem.BackgroundPotential(space.Places[nodes[i]]);
             }

@@ -18,7 +18,7 @@ internal sealed class HigherOrderStep
         FieldSolution solution, FieldEquations equations, TangentSystem tangent, OrderLift lift, double[] lifted, double[] correction)
     {
         _solution = solution;
-        _lowBackground = FieldEquations.RimBackground(solution.Problem);
+        _lowBackground = RimTerms.Background(solution.Problem);
         _equations = equations;
         _tangent = tangent;
         _lift = lift;

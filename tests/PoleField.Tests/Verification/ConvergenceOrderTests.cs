@@ -27,7 +27,7 @@ public class ConvergenceOrderTests
             .Part("WIRE LEFT", Material.Air, -10_000)
             .Magnet();
         Aperture aperture = Drawn.Beam(0, 1.2 * A, 1.5, 0.6);
-        Mesh mesh = Mesher.Mesh(magnet.Section, SizeField.FromSources(0.9e-3, 0.35, []));
+        Mesh mesh = Mesher.Mesh(magnet.Section, SizeField.FromSources(0.9e-3, 0.35, []), new MeshOptions { OpenCircleRatio = 1.7 });
         var field = new List<double>();
         var gradient = new List<double>();
 

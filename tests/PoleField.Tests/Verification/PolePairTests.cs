@@ -52,7 +52,7 @@ public class PolePairTests
             .Closed("IRON", window)
             .Rectangle("COIL LEFT", -18, -15, 12, 20)
             .Rectangle("COIL RIGHT", 18, -15, 12, 20)
-            .Linear("IRON", 1e5)
+            .Linear("IRON", 1e6)
             .Part("COIL LEFT", Material.Air, Turns)
             .Part("COIL RIGHT", Material.Air, -Turns)
             .Magnet();
