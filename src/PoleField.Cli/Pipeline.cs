@@ -59,7 +59,7 @@ internal sealed record Pipeline
         SketchPictures = CasePictures.OfSketch,
         ResultPictures = CasePictures.OfSolution,
         Page = ReportOutput.PageOf,
-        Analyses = [MapStep.Create(), ToleranceStep.Create()],
+        Analyses = [MapStep.Create(), ToleranceStep.Create(), TuneVerbStep.Create()],
     };
 
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
