@@ -6,7 +6,7 @@ namespace PoleField.Design;
 /// <summary>Which stretch of which face moves.</summary>
 internal static class TuneReach
 {
-    private const double Wanted = 0.95;  // share of a face's effect on the gradient that a stretch must hold
+    private const double Wanted = 0.99;  // share of a face's effect on the gradient that a stretch must hold
     private const double Farthest = 6;   // in distances from the beam to the face: half the longest stretch
     private const int Samples = 512;
 
@@ -37,12 +37,28 @@ internal static class TuneReach
     }
 
     // A magnet that is its own mirror image has a field of one direction on y = 0, and |By| the same on both sides.
-    private static bool IsMirrored(BeamMeasures m)
+    public static bool IsMirrored(BeamMeasures m)
     {
         const double tolerance = 1e-4;
         double scale = Math.Abs(m.Centre.Bz);
         return Math.Abs(m.Centre.At.Y) < 1e-9
             && m.ProfileY.Zip(m.ProfileY.Reverse(), (a, b) => Math.Abs(a.Bz - b.Bz) + Math.Abs(a.By + b.By)).Max() < tolerance * scale;
+    }
+
+    /// <summary>
+    /// Places and weights for tuning: more of them along the aperture's longer side than the report has, because faces with
+    /// many freedoms could make a few places right and leave those between them wrong.
+    /// </summary>
+    public static (Point[] Places, double[] Weights) Places(Aperture aperture, bool mirrored)
+    {
+        const int many = 20, few = 4, equal = 10;
+        Box box = aperture.Outline.Bounds;
+        double ratio = box.Width / box.Height;
+        var samples = ApertureSamples.Of(
+            aperture, new ApertureShape(aperture), ratio > 2 ? (few, many) : ratio < 0.5 ? (many, few) : (equal, equal));
+        int[] kept = [.. Enumerable.Range(0, samples.Inside.Length).Where(k => !mirrored || samples.Inside[k].Y >= 0)];
+        double total = kept.Sum(k => samples.Weights[k]);
+        return ([.. kept.Select(k => samples.Inside[k])], [.. kept.Select(k => samples.Weights[k] / total)]);
     }
 
     private static (double At, double Distance) Nearest(Face face, Point p)

@@ -28,7 +28,7 @@ public sealed record TuneSettings
     public double LeastClearance { get; init; }
 
     /// <summary>Most steps.</summary>
-    public int MostSteps { get; init; } = 16;
+    public int MostSteps { get; init; } = 14;
 
     /// <summary>Threads, at least 1.</summary>
     public int Threads { get; init; } = 1;

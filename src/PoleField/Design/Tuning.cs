@@ -15,7 +15,7 @@ public sealed class Tuning
     private const double StartDamping = 1e-2;
     private const double LeastDamping = 1e-7;
     private const double MostDamping = 1e4;
-    private const double Enough = 1e-3;       // relative gain of a step below which it ends
+    private const double Enough = 0.1;        // relative gain of a step below which it ends
     private const double HoldWeight = 5.0;    // of a relative violation against the relative deviation
     private const double HoldMargin = 1e-3;   // holds are aimed at a little inside
     private const double FirstReach = 0.25;   // of the reach: largest move of one step
@@ -28,6 +28,8 @@ public sealed class Tuning
     private readonly FaceModes[] _modes;
     private readonly int[] _first; // first coefficient of each face's modes
     private readonly CancellationToken _cancellation;
+    private readonly Point[] _places;      // where the gradient is looked at, denser than the report's
+    private readonly double[] _weights;
     private int _solves;
 
     private Tuning(Magnet magnet, Aperture aperture, TuneSettings settings, CancellationToken cancellation)
@@ -35,6 +37,7 @@ public sealed class Tuning
         (_magnet, _aperture, _settings, _cancellation) = (magnet, aperture, settings, cancellation);
         _faces = Face.Of(magnet);
         FixedMeshSolve start = Solve(magnet.Section, null);
+        (_places, _weights) = TuneReach.Places(aperture, TuneReach.IsMirrored(start.Measures));
         _modes = [.. TuneReach.Modes(_faces, settings, start, aperture)];
         _first = [.. _modes.Select((_, k) => _modes.Take(k).Sum(m => m.Count))];
         Start = start;
@@ -88,7 +91,19 @@ public sealed class Tuning
         }
     }
 
-    private double RmsOf(FixedMeshSolve s) => (_settings.OfProduct ? s.Measures.FieldTimesGradient : s.Measures.Gradient).Rms;
+    private double RmsOf(FixedMeshSolve s)
+    {
+        double[] values = [.. _places.Select(p => PointOf(s.Field.At(p)).Value)];
+        double mean = values.Select((v, k) => _weights[k] * v).Sum();
+        return Math.Sqrt(values.Select((v, k) => _weights[k] * (v - mean) * (v - mean)).Sum()) / Math.Abs(mean);
+    }
+
+    private (double Value, IReadOnlyList<BeamTerm> Terms) PointOf(BeamValues v)
+    {
+        (double value, Func<double, IEnumerable<BeamTerm>> terms) =
+            _settings.OfProduct ? DesignQuantities.ProductAt(v) : DesignQuantities.GradientAt(v);
+        return (value, [.. terms(1)]);
+    }
 
     private double[] Range(double[] moves, int side) =>
         [.. moves.Select(x => side * Math.Min(FirstReach * _settings.Reach, Math.Max(_settings.Reach - (side * x), 0)))];
@@ -177,10 +192,10 @@ public sealed class Tuning
     private List<(double Residual, double[] Row)> Rows(State state)
     {
         Sensitivity s = Sensitivity.Of(state.Solve);
-        BeamMeasures measures = state.Solve.Measures;
-        double[] weights = s.SampleWeights;
-        (double Value, IReadOnlyList<BeamTerm> Terms)[] points = [.. measures.Inside.Append(measures.Centre).Select((v, k) => Point(v, k < weights.Length))];
-        double[][] derivatives = new ModeDerivatives(_modes, _first).Of(s, s.Densities([.. points.Select(p => p.Terms)]));
+        double[] weights = _weights;
+        (double Value, IReadOnlyList<BeamTerm> Terms)[] points = [.. _places.Select(p => PointOf(state.Solve.Field.At(p)))];
+        IReadOnlyList<BeamTerm> centre = [BeamGoals.GradientTerm(state.Solve.Measures.Centre, 1)];
+        double[][] derivatives = new ModeDerivatives(_modes, _first).Of(s, s.Densities([.. points.Select(p => p.Terms), centre]));
         double mean = weights.Select((w, k) => w * points[k].Value).Sum();
         double[] byMean = Sum(derivatives, weights);
         var rows = new List<(double, double[])>();
@@ -193,13 +208,6 @@ public sealed class Tuning
 
         AddHolds(rows, state, s, derivatives[^1]);
         return rows;
-
-        (double, IReadOnlyList<BeamTerm>) Point(BeamValues v, bool inside)
-        {
-            (double value, Func<double, IEnumerable<BeamTerm>> terms) =
-                inside && _settings.OfProduct ? DesignQuantities.ProductAt(v) : DesignQuantities.GradientAt(v);
-            return (value, [.. terms(1)]);
-        }
     }
 
     private void AddHolds(List<(double, double[])> rows, State state, Sensitivity s, double[] byGradient)
