@@ -65,6 +65,7 @@ internal sealed record Pipeline
             RampVerbStep.Create(),
             CompareStep.Create(),
             DeflectStep.Create(),
+            TuneVerbStep.Create(),
             ToleranceStep.Create(),
         ],
     };

@@ -36,10 +36,14 @@ internal sealed class ApertureSamples
 
     public Point[] ProfileZ { get; }
 
-    public static ApertureSamples Of(Aperture aperture, ApertureShape shape)
+    public static ApertureSamples Of(Aperture aperture, ApertureShape shape) =>
+        Of(aperture, shape, (PointsPerStrip, PointsPerStrip));
+
+    /// <summary>With given numbers of Gauss points across each strip (lines) and along each line.</summary>
+    public static ApertureSamples Of(Aperture aperture, ApertureShape shape, (int Lines, int Points) perStrip)
     {
         Point centre = aperture.Centre;
-        (Point[] inside, double[] weights) = Strips(aperture, shape);
+        (Point[] inside, double[] weights) = Strips(aperture, shape, perStrip);
         return new ApertureSamples(
             centre,
             inside,
@@ -58,24 +62,26 @@ internal sealed class ApertureSamples
     }
 
     // Strips between the heights of the outline's corners; in each the width is a smooth function of z.
-    private static (Point[] Inside, double[] Weights) Strips(Aperture aperture, ApertureShape shape)
+    private static (Point[] Inside, double[] Weights) Strips(
+        Aperture aperture, ApertureShape shape, (int Lines, int Points) perStrip)
     {
-        GaussRule rule = GaussRule.Legendre(PointsPerStrip);
+        GaussRule lines = GaussRule.Legendre(perStrip.Lines);
+        GaussRule rule = GaussRule.Legendre(perStrip.Points);
         double[] levels = Levels(aperture.Outline);
         var inside = new List<Point>();
         var weights = new List<double>();
         for (int s = 0; s + 1 < levels.Length; s++)
         {
             double height = levels[s + 1] - levels[s];
-            for (int i = 0; i < rule.Nodes.Length; i++)
+            for (int i = 0; i < lines.Nodes.Length; i++)
             {
-                double z = levels[s] + (height * rule.Nodes[i]);
+                double z = levels[s] + (height * lines.Nodes[i]);
                 foreach ((double from, double to) in shape.Across(z))
                 {
                     for (int j = 0; j < rule.Nodes.Length; j++)
                     {
                         inside.Add(new Point(from + ((to - from) * rule.Nodes[j]), z));
-                        weights.Add(height * rule.Weights[i] * (to - from) * rule.Weights[j]);
+                        weights.Add(height * lines.Weights[i] * (to - from) * rule.Weights[j]);
                     }
                 }
             }

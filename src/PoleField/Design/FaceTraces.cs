@@ -63,6 +63,10 @@ internal sealed class FaceTraces
         return density;
     }
 
+    /// <summary>True when iron touches a conductor, so that a moved face changes the conductor's area.</summary>
+    public bool TouchesConductor => _points.Exists(p =>
+        _solution.Problem.Regions[p.Outer].CurrentDensity != 0 && !SameLaw(_solution.Problem.Regions[p.Inner].Law, LinearLaw.Vacuum));
+
     private double Current(int region, double value, double[] means)
     {
         double density = _solution.Problem.Regions[region].CurrentDensity;

@@ -80,9 +80,16 @@ public sealed class Sensitivity
         return [.. quantities.Select((q, k) => Collect(q, adjoints[k], [.. shifted.Select(m => q.Value(m))], step))];
     }
 
-    /// <summary>Derivative densities at <see cref="Points"/> of sums of terms, one sum per row.</summary>
-    internal double[][] Densities(IReadOnlyList<IReadOnlyList<BeamTerm>> sums) =>
-        [.. Adjoints(sums).Select(a => _faces.Density(a, Means(MaterialDerivatives.Of(_solution, a))))];
+    /// <summary>Derivative densities at <see cref="Points"/> on the iron of sums of terms, one sum per row.</summary>
+    internal double[][] Densities(IReadOnlyList<IReadOnlyList<BeamTerm>> sums)
+    {
+        bool touches = _faces.TouchesConductor;
+        return
+        [
+            .. Adjoints(sums).Select(a => _faces.Density(
+                a, touches ? Means(MaterialDerivatives.Of(_solution, a)) : new double[Section.Regions.Count])),
+        ];
+    }
 
     private double[][] Adjoints(IReadOnlyList<IReadOnlyList<BeamTerm>> sums) =>
         _tangent.Solve([.. sums.Select(_extraction.Functional)]);

@@ -24,8 +24,8 @@ public class CylinderSensitivityTests
         double k = (permeability - 1) / (permeability + 1);
         (double field, double gradient, _) = Grown(Linear(permeability), 1.0);
 
-        Assert.Equal(1.0, field / (2 * k * Radius / (Height * Height)), 1e-4);
-        Assert.Equal(1.0, gradient / (-4 * k * Radius / Math.Pow(Height, 3)), 1e-4);
+        Assert.Equal(1.0, field / (2 * k * Radius / (Height * Height)), 2e-4);
+        Assert.Equal(1.0, gradient / (-4 * k * Radius / Math.Pow(Height, 3)), 2e-4);
     }
 
     [Theory]
@@ -55,7 +55,7 @@ public class CylinderSensitivityTests
 
         (_, _, QuantityDerivatives field) = Grown(steel, background);
 
-        Assert.Equal(1.0, field.Parts[0].Saturation / expected, 1e-4);
+        Assert.Equal(1.0, field.Parts[0].Saturation / expected, 2e-4);
     }
 
     [Fact]
@@ -82,7 +82,7 @@ public class CylinderSensitivityTests
 
         const double step = 1e-7;
         double expected = (Coated(inner + step) - Coated(inner - step)) / (2 * step) * Radius * Radius / (Height * Height);
-        Assert.Equal(1.0, byJoint / expected, 1e-4);
+        Assert.Equal(1.0, byJoint / expected, 2e-4);
     }
 
     [Fact]
