@@ -57,7 +57,7 @@ public sealed record FieldScene
         }
 
         const int around = 360, outwards = 30;
-        const double first = 1.0005, last = 2; // radii of the ring over that of the circle
+        const double first = 0.998, last = 2; // radii of the ring over that of the circle; it overlaps a little so that no pixel stays empty
         FieldSample?[] samples = new FieldSample?[(around + 1) * (outwards + 1)];
         for (int i = 0; i < samples.Length; i++)
         {
