@@ -20,6 +20,8 @@ internal static class MapStep
         ["vtu"] = [".map.vtu"],
     };
 
+    private static readonly double[] RoundNumbers = [1, 2, 5, 10];
+
     public static AnalysisStep Create()
     {
         var format = new Option<string[]>("--format")
@@ -46,13 +48,13 @@ internal static class MapStep
     }
 
     /// <summary>
-    /// The grid of a case. Without [map]: the aperture and the air around it as far as the nearest part, at most as far as the
-    /// aperture is large, in round steps that give about a hundred places along the longer side.
+    /// The grid of a case. Without [map]: the aperture with a margin of air that even at its corners ends before the nearest part,
+    /// at most as wide as the aperture is large, in round steps that give about a hundred places along the longer side.
     /// </summary>
     public static MapGrid GridOf(MapSection section, SolvedMagnet solved)
     {
         Box aperture = solved.Field.Aperture.Outline.Bounds;
-        double around = Math.Min(solved.Report.Clearance, Math.Max(aperture.Width, aperture.Height));
+        double around = Math.Min(solved.Report.Clearance / Math.Sqrt(2), Math.Max(aperture.Width, aperture.Height));
         Box box = section is { From: { } from, To: { } to } ? new Box(from, to) : aperture.Inflated(around);
         double step = section.Step ?? RoundStep(Math.Max(box.Width, box.Height) / 100);
         if (section.From is not null)
@@ -134,6 +136,6 @@ internal static class MapStep
     private static double RoundStep(double least)
     {
         double decade = Math.Pow(10, Math.Floor(Math.Log10(least)));
-        return new[] { 1.0, 2.0, 5.0, 10.0 }.Select(m => m * decade).First(s => s >= least * (1 - 1e-9));
+        return RoundNumbers.Select(m => m * decade).First(s => s >= least * (1 - 1e-9));
     }
 }

@@ -1,6 +1,4 @@
 using PoleField.Beam;
-using PoleField.Cli.Case;
-using PoleField.Geometry;
 using PoleField.Output.Figures;
 using PoleField.Output.Pages;
 

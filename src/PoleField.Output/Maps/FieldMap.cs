@@ -77,6 +77,9 @@ public sealed record MapProvenance(string Title, string CaseSha256, string Sketc
 /// <summary>The field at the places of a grid.</summary>
 public sealed class FieldMap
 {
+    // Places nearer to the aperture's edge than this lie on it, metres; the extracted field holds there.
+    private const double Rounding = 1e-9;
+
     private FieldMap(MapGrid grid, IReadOnlyList<MapSample> samples, MapProvenance provenance)
     {
         Grid = grid;
@@ -98,7 +101,8 @@ public sealed class FieldMap
     {
         Outline aperture = solved.Field.Aperture.Outline;
         CrossSection section = solved.Solution.Magnet.Section;
-        return p => aperture.Contains(p)
+        Box near = aperture.Bounds.Inflated(Rounding);
+        return p => near.Contains(p) && (aperture.Contains(p) || aperture.Curves.Min(c => c.DistanceTo(p)) <= Rounding)
             ? MapSample.From(solved.Field.At(p))
             : MapSample.From(solved.Solution.At(p), MediumOf);
 

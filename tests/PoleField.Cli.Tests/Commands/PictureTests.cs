@@ -56,13 +56,13 @@ public sealed class PictureTests
     [Fact]
     public async Task TheWholeFieldOfBareWiresShowsTheBeamAboveThem()
     {
-        using SketchFolder folder = await SketchFolder.Of("round-wires", "--beam-place", "3"); // far above the wires' box
+        using SketchFolder folder = await SketchFolder.Of("round-wires", "--wire-radius", "1.5 mm"); // beam at z = 3.6 mm
 
         Run run = await Run.Of(Pipeline.OfLibrary(), "solve", folder.CasePath, "--accuracy", "1e-2", "-o", folder["out.json"], "--figures", folder["pictures"]);
 
         Assert.Equal(0, run.Status);
         string[] words = TextOf(folder[Path.Combine("pictures", "field.svg")]).Split('\n');
-        Assert.Contains("8", words); // an axis label between the wires (z up to 2 mm) and the beam at 9 mm
+        Assert.Equal(2, words.Count(w => w == "3")); // on both axes: the wires' box with its margin alone ends below z = 3 mm
     }
 
     [Fact]

@@ -29,7 +29,7 @@ public sealed partial class ReportVerbTests
         Assert.Equal("polefield-result/1", result.GetProperty("format").GetString());
         Assert.Equal("Two-wire pair, half spacing 3 mm", result.GetProperty("title").GetString());
         Assert.Equal(
-            Pictures.SelectMany(p => new[] { p + ".png", p + ".svg" }),
+            Pictures.SelectMany(p => new[] { p + ".png", p + ".svg" }).Order(StringComparer.Ordinal),
             Directory.GetFiles(folder["pictures"]).Select(f => Path.GetFileName(f)!).Order(StringComparer.Ordinal));
     }
 

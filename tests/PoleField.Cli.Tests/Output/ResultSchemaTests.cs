@@ -5,7 +5,6 @@ using Json.Schema;
 using PoleField.Beam;
 using PoleField.Geometry;
 using PoleField.Output.Results;
-using Xunit;
 
 namespace PoleField.Cli.Tests.Output;
 
