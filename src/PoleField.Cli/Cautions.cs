@@ -7,9 +7,6 @@ namespace PoleField.Cli;
 /// <summary>What a person must know before the magnet is built or switched on, with this magnet's numbers.</summary>
 internal static class Cautions
 {
-    // Copper at 20 °C: the international annealed copper standard, 1/58 µΩ·m (IEC 60028, recalled).
-    private const double CopperResistivity = 1.0 / 58e6;
-
     // Common practice: about 2 A/mm² without, about 10 A/mm² with water cooling.
     private const double AirCooled = 2e6;
     private const double WaterCooled = 10e6;
@@ -17,7 +14,7 @@ internal static class Cautions
     /// <summary>The cautions of a result, the most telling first.</summary>
     /// <param name="file">The case.</param>
     /// <param name="report">The answer.</param>
-    /// <param name="strayReach">Distance from the middle of the section inside which the field exceeds <see cref="StrayField.Limit"/>; null when unknown.</param>
+    /// <param name="strayReach">Distance from the middle of the section inside which the field exceeds <see cref="StrayField.ImplantLevel"/>; null when unknown.</param>
     public static IReadOnlyList<string> Of(CaseFile file, BeamReport report, double? strayReach)
     {
         var cautions = new List<string>();
@@ -73,7 +70,7 @@ internal static class Cautions
             PartSection? section = file.Parts.FirstOrDefault(p => p.Layer == part.Layer);
             if (part.CurrentDensity is { } density && section?.Fill is { } fill)
             {
-                heat += CopperResistivity * density * density * part.Area * fill;
+                heat += new CoilReport(part.Layer, part.Area * fill, Math.Abs(density)).HeatPerMetre();
                 densest = Math.Max(densest, Math.Abs(density));
             }
         }

@@ -1,33 +1,11 @@
-// Truth: closed forms: a dipole's |B| = c / r^2 in the plane; copper's heat rho j^2 A; forces and energy times the length.
+// Truth: closed forms: copper's heat rho j^2 A; forces and energy times the length.
 using PoleField.Cli.Case;
 using PoleField.Cli.Tests.Doubles;
-using PoleField.Geometry;
 
 namespace PoleField.Cli.Tests;
 
 public sealed class CautionTests
 {
-    private static readonly Box Unit = new(new Point(-0.05, -0.05), new Point(0.05, 0.05));
-
-    [Theory]
-    [InlineData(1e-3)] // 0.5 mT at sqrt(2) m
-    [InlineData(2e-5)] // 0.5 mT at 0.2 m
-    public void TheStrayFieldReachesWhereTheDipoleFallsToTheLimit(double strength)
-    {
-        double exact = Math.Sqrt(strength / StrayField.Limit);
-
-        double? reach = StrayField.Reach(p => strength / p.SquaredLength, Unit);
-
-        Assert.InRange(reach!.Value, exact, 1.1 * 1.1 * exact); // never less; the circles grow by a tenth
-    }
-
-    [Fact]
-    public void AnUnknownOrEndlessStrayFieldIsNotCalledSmall()
-    {
-        Assert.Null(StrayField.Reach(_ => null, Unit));
-        Assert.Null(StrayField.Reach(_ => 1e-3, Unit));
-    }
-
     [Fact]
     public void ForceEnergyAndHeatCarryTheLengthOfTheMagnet()
     {

@@ -69,7 +69,9 @@ internal sealed class CaseRun(Tool tool, string outDescription)
         cancellation.ThrowIfCancellationRequested();
 
         // A uniform background never falls off.
-        double? reach = magnet.AppliedField == default ? StrayField.Reach(tool.Pipeline.FieldOf(solved), magnet.Section.Bounds) : null;
+        double? reach = magnet.AppliedField == default
+            ? StrayField.Reach(tool.Pipeline.FieldOf(solved), magnet.Section.Bounds, StrayField.ImplantLevel)
+            : null;
         using var process = Process.GetCurrentProcess();
         return new SolvedCase
         {

@@ -65,7 +65,7 @@ internal static class DeflectStep
             SlitWidth = flight.SlitWidth,
             SlitHeight = flight.SlitHeight,
         };
-        return Flight.Through(request.Solved.Solved, setup, request.Options.Threads, request.Cancellation);
+        return Flight.Through(request.Solved.Solved, setup, request.Options, request.Progress, request.Cancellation);
     }
 
     // The reader has checked that a name is known, and that without one mass and moment are there.

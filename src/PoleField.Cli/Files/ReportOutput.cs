@@ -1,4 +1,7 @@
 using PoleField.Beam;
+using PoleField.Cli.Case;
+using PoleField.Cli.Text;
+using PoleField.Geometry;
 using PoleField.Output.Figures;
 using PoleField.Output.Pages;
 
@@ -20,6 +23,8 @@ internal static class ReportOutput
             Result = ResultOutput.Of(result),
             Field = [.. CasePictures.DrawField(scene).Select(f => new ReportPicture(f))],
             Aperture = [new ReportPicture(CasePictures.DrawGradient(solved)), Profiles(result)],
+            Coil = CoilText.Coils(solved.Solution.Magnet, result.Case.Case?.Length)?.ForPage(),
+            StrayField = CoilText.StrayFieldOf(solved)?.ForPage(),
             Saturation = scene.IsIron.Any(iron => iron) ? new ReportPicture(SaturationFigure.Draw(scene)) : null,
         };
     }

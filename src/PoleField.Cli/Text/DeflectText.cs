@@ -18,12 +18,12 @@ internal static class DeflectText
             [
                 ["species", setup.Species.Name],
                 ["mass, u", Numbers.Significant(setup.Species.Mass / PhysicalConstants.AtomicMass, 6)],
-                ["moment in this field, muB", Numbers.Significant(strongest.Moment / PhysicalConstants.BohrMagneton)],
+                [$"moment of {strongest.Name}, muB", Numbers.Significant(strongest.Moment / PhysicalConstants.BohrMagneton)],
                 ["speed, most probable, m/s", Numbers.Significant(setup.Speeds.MostProbable)],
                 ["speed, mean, m/s", Numbers.Significant(setup.Speeds.Mean)],
                 ["lever L(L/2 + D), m²", Numbers.Significant(setup.Lever)],
-                ["deflection at the most probable speed, mm", Height(strongest.AtMostProbable)],
-                ["deflection at the mean speed, mm", Height(strongest.AtMean)],
+                ["its deflection at the most probable speed, mm", Height(strongest.AtMostProbable)],
+                ["its deflection at the mean speed, mm", Height(strongest.AtMean)],
                 ["splitting of the peaks, mm", Height(flight.Splitting)],
                 ["clipped in the magnet", Numbers.Percent(flight.ClippedShare)],
             ]);

@@ -67,8 +67,11 @@ public sealed class RampTests
     [Fact]
     public void AMagnetWithoutCurrentsCannotBeRamped()
     {
-        SolvedMagnet none = MagnetSolver.Solve(
-            new Drawn().Circle("ROD", 0, 0, 2).Linear("ROD", 100).Magnet(new Point(0, 0.1)), Drawn.Beam(0, 3.6, 1, 0.3), Coarse);
+        SolvedMagnet full = Solve(new Material("linear", new LinearLaw(500), "linear", "test", "exact"), 4000);
+        SolvedMagnet none = full with
+        {
+            Report = full.Report with { Circuit = full.Report.Circuit with { AmpereTurns = 0 } },
+        };
 
         Assert.Equal("no-ampere-turns", Assert.Throws<InputException>(() => Ramp.Of(none, new RampSettings([1]))).Findings[0].What);
     }

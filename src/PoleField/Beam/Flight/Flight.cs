@@ -33,13 +33,23 @@ public sealed class Flight
     }
 
     /// <summary>Flies a beam through a solved magnet.</summary>
-    /// <exception cref="InputException">The aperture's surroundings leave no room to follow particles.</exception>
+    /// <param name="solved">The magnet.</param>
+    /// <param name="setup">The beam.</param>
+    /// <param name="options">For the field around the aperture, which may take one more solve.</param>
+    /// <param name="progress">Called at each step of that solve.</param>
+    /// <param name="cancellation">Checked on the way.</param>
+    /// <exception cref="InputException">The rectangle around the aperture does not lie in air.</exception>
     public static FlightReport Through(
-        SolvedMagnet solved, FlightSetup setup, int threads = 1, CancellationToken cancellation = default)
+        SolvedMagnet solved,
+        FlightSetup setup,
+        SolveOptions? options = null,
+        Action<SolveProgress>? progress = null,
+        CancellationToken cancellation = default)
     {
-        FlightRoom room = FlightRoom.In(solved);
+        options ??= new SolveOptions();
+        FlightRoom room = FlightRoom.In(solved, new RunSettings(options, progress, cancellation));
         Aperture aperture = solved.Field.Aperture;
-        return Through(room.Field, aperture.Outline.Bounds, aperture.Centre, setup, threads, cancellation) with { Margin = room.Margin };
+        return Through(room.Field, aperture.Outline.Bounds, aperture.Centre, setup, options.Threads, cancellation) with { Margin = room.Margin };
     }
 
     internal static FlightReport Through(

@@ -1,4 +1,3 @@
-using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
 
@@ -12,14 +11,15 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
     private const double LargestGrowth = 4.0;   // on each side, in widths or heights of the beam
     private const int MostMoves = 24;
 
-    // Margin as a share of the aperture's clearance, and growth as a share of the largest: the extraction needs a layer of
-    // air elements in what is kept, and far from the beam elements are large.
-    private static readonly (double Margin, double Growth)[] Attempts =
-        [(0.12, 1), (0.25, 1), (0.25, 0.5), (0.45, 0.5), (0.45, 0.2), (0.7, 0.2), (0.7, 0.05)];
+    private const double KeptClearance = 0.2;   // of the aperture's
+    private const double Accuracy = 1e-3;       // of the field over the whole room; the beam starts where it is better
 
-    /// <summary>Finds the room in a solved magnet.</summary>
+    /// <summary>
+    /// Finds the room in a solved magnet. Where the mesh leaves no layer of air between room and parts, the magnet is solved
+    /// once more with the room for its aperture.
+    /// </summary>
     /// <exception cref="InputException">The rectangle around the aperture does not lie in air.</exception>
-    public static FlightRoom In(SolvedMagnet solved)
+    public static FlightRoom In(SolvedMagnet solved, RunSettings settings)
     {
         Box beam = solved.Field.Aperture.Outline.Bounds;
         Magnet magnet = solved.Solution.Magnet;
@@ -33,32 +33,31 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
                 "Shrink the aperture so that the rectangle around it lies in air.") { At = beam.Centre }]);
         }
 
-        double usable = Math.Min(clearance, LargestGrowth * beam.Diagonal);
-        foreach ((double share, double growth) in Attempts)
-        {
-            double margin = share * usable;
-            Box room = Grown(magnet, beam, margin, growth * LargestGrowth);
-            if (FieldOver(solved, room) is { } field)
-            {
-                return new FlightRoom(FlightField.Over(room, field.At), margin);
-            }
-        }
-
-        return new FlightRoom(FlightField.Over(beam, solved.Field.At), clearance);
+        double margin = KeptClearance * Math.Min(clearance, LargestGrowth * beam.Diagonal);
+        Box room = Grown(magnet, beam, margin);
+        BeamField field = FieldOver(solved, room) ?? SolvedOver(magnet, room, settings);
+        return new FlightRoom(FlightField.Over(room, field.At), margin);
     }
 
-    // Each side moves out as far as the remaining clearance surely allows, again and again.
-    private static Box Grown(Magnet magnet, Box beam, double margin, double growth)
+    private static BeamField SolvedOver(Magnet magnet, Box room, RunSettings settings)
+    {
+        SolveOptions options = settings.Options with { Accuracy = Math.Max(Accuracy, settings.Options.Accuracy) };
+        Aperture wide = Aperture.Rectangle(room.Centre, room.Width, room.Height);
+        return MagnetSolver.Solve(magnet, wide, options, settings.Progress, settings.Cancellation).Field;
+    }
+
+    // Each side moves out as far as its own clearance surely allows, again and again.
+    private static Box Grown(Magnet magnet, Box beam, double margin)
     {
         Box room = beam;
-        double tall = growth * Math.Max(beam.Height, beam.Width);
+        double tall = LargestGrowth * Math.Max(beam.Height, beam.Width);
         foreach (Point direction in new[] { new Point(0, 1), new Point(0, -1), new Point(1, 0), new Point(-1, 0) })
         {
-            double most = direction.Y == 0 ? tall : Math.Min(1, growth) * beam.Width;
+            double most = direction.Y == 0 ? tall : beam.Width;
             double moved = 0;
             for (int k = 0; k < MostMoves && moved < most; k++)
             {
-                double step = Math.Min(ClearanceOf(magnet, room) - margin, most - moved);
+                double step = Math.Min(ClearanceOf(magnet, Side(room, direction, 1e-3 * margin)) - margin, most - moved);
                 if (step < 0.02 * margin)
                 {
                     break;
@@ -71,6 +70,15 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
 
         return room;
     }
+
+    // A thin rectangle along one side.
+    private static Box Side(Box room, Point direction, double thickness) => direction switch
+    {
+        { Z: > 0 } => new Box(new Point(room.Min.Y, room.Max.Z - thickness), room.Max),
+        { Z: < 0 } => new Box(room.Min, new Point(room.Max.Y, room.Min.Z + thickness)),
+        { Y: > 0 } => new Box(new Point(room.Max.Y - thickness, room.Min.Z), room.Max),
+        _ => new Box(room.Min, new Point(room.Min.Y + thickness, room.Max.Z)),
+    };
 
     private static double ClearanceOf(Magnet magnet, Box box) =>
         Clearance.Of(magnet, Aperture.Rectangle(box.Centre, box.Width, box.Height));

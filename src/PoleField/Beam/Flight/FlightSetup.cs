@@ -48,8 +48,15 @@ public sealed record FlightReport
     /// <summary>Each state's central particle.</summary>
     public required IReadOnlyList<StateDeflection> States { get; init; }
 
-    /// <summary>The state with the largest moment towards stronger field.</summary>
-    public StateDeflection Strongest => States.MaxBy(s => s.Moment)!;
+    /// <summary>
+    /// The state whose central particle speaks for the beam: one that arrives at the most probable speed, of the largest
+    /// moment, rather pulled towards stronger field than pushed away.
+    /// </summary>
+    public StateDeflection Strongest => States
+        .OrderByDescending(s => s.AtMostProbable is not null)
+        .ThenByDescending(s => Math.Round(Math.Abs(s.Moment / PhysicalConstants.BohrMagneton), 6))
+        .ThenByDescending(s => s.Moment)
+        .First();
 
     /// <summary>Distance between the peaks of what is pulled and what is pushed, metres; null when there is only one.</summary>
     public required double? Splitting { get; init; }

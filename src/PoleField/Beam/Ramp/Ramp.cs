@@ -10,8 +10,8 @@ public sealed class Ramp
 {
     private const double StartFactor = 1e-3;
     private const double SaturatedShare = 0.005;    // of a part's area, worth naming
-    private const int OnsetSolves = 4;
-    private const double OnsetTolerance = 1e-3;     // of the fall that is looked for
+    private const int OnsetSolves = 8;
+    private const double OnsetTolerance = 5e-3;     // of the fall that is looked for
     private const double TwoWireGradient = 0.02;    // rms deviation up to which two wires describe the field
     private const double TwoWireField = 0.01;
 
@@ -99,7 +99,7 @@ public sealed class Ramp
         Factor = factor,
         Report = solved.Report,
         Accuracy = solved.Record.AccuracyReached,
-        NewtonSteps = solved.Record.NewtonSteps,
+        NewtonSteps = solved.Solution.History.Count,
         OwnMesh = ownMesh,
         ShapeFactor = _halfSpacing is { } a ? Beam.TwoWireField.ShapeFactor(solved.Report.Beam, a) : null,
     };

@@ -18,7 +18,7 @@ public sealed record RampStep
     /// <summary>Relative error bar of field and gradient over the aperture.</summary>
     public required double Accuracy { get; init; }
 
-    /// <summary>Newton steps it took.</summary>
+    /// <summary>Newton steps on its mesh.</summary>
     public required int NewtonSteps { get; init; }
 
     /// <summary>True when the common mesh was not fine enough here and another one was made.</summary>
