@@ -44,9 +44,12 @@ internal sealed record BeamMeasures
 
     /// <summary>Largest difference of G between two fields at all sample points, over the largest |G| (see <see cref="LeastGradient"/>).</summary>
     public double GradientDifference(BeamMeasures other) =>
-        Largest(other, v => v.Gradient) / Math.Max(
+        LargestGradientDifference(other) / Math.Max(
             Math.Max(Math.Abs(Gradient.Max), Math.Abs(Gradient.Min)),
             LeastGradient(Math.Max(Math.Abs(Field.Max), Math.Abs(Field.Min)), Edge.Max(v => v.At.DistanceTo(Centre.At))));
+
+    /// <summary>Largest difference of G between two fields at all sample points, T/m.</summary>
+    public double LargestGradientDifference(BeamMeasures other) => Largest(other, v => v.Gradient);
 
     /// <summary>
     /// Gradient that counts as none, T/m: it changes the field by a tenth over the aperture's greatest reach from its centre.

@@ -10,6 +10,10 @@ namespace PoleField.Beam;
 public static class MagnetSolver
 {
     private const double ErrorBarFactor = 3.0;     // with corners in saturated iron the estimate was seen low by up to 2.7
+
+    // At one point contributions of many corners may cancel in the estimate and not in the error: on the model problem the
+    // centre's field was seen off by 4.5 times its estimate, and by at most 1.9 times the largest one over the aperture.
+    private const double LeastShare = 2.0;
     private const double QuadratureTolerance = 1e-9;
 
     // The rules' own mesh reaches about 1e-5 with third-order elements on saturated poles with corners (measured), and the
@@ -198,8 +202,12 @@ public static class MagnetSolver
             BeamReport report = new()
             {
                 Beam = measures.Centre,
-                FieldError = Bar(measures.Centre.Field, corrected.Centre.Field, floor),
-                GradientError = Bar(measures.Centre.Gradient, corrected.Centre.Gradient, floor),
+                FieldError = Math.Max(
+                    Bar(measures.Centre.Field, corrected.Centre.Field, floor),
+                    LeastShare * measures.FieldDifference(corrected) * measures.Field.Max),
+                GradientError = Math.Max(
+                    Bar(measures.Centre.Gradient, corrected.Centre.Gradient, floor),
+                    LeastShare * measures.LargestGradientDifference(corrected)),
                 ApertureArea = aperture.Outline.Area,
                 Clearance = clearance,
                 Field = measures.Field,
