@@ -71,9 +71,36 @@ internal static class BandCutOff
                     obstacle[node] = true;
                 }
             }
+
+            MarkRim(space, e, obstacle);
         }
 
         return obstacle;
+    }
+
+    // Beyond the rim of a closed model there is no air that the band could end in.
+    private static void MarkRim(FiniteElementSpace space, int element, bool[] obstacle)
+    {
+        ReadOnlySpan<int> nodes = space.NodesOf(element);
+        for (int side = 0; side < 3; side++)
+        {
+            int c = space.Edges.CurveEdgeOf(space.Edges.OfTriangle(element, side));
+            if (c < 0 || space.Mesh.CurveEdges[c].SectionEdge is not (>= 0 and int index))
+            {
+                continue;
+            }
+
+            Drawing.SectionEdge edge = space.Mesh.Section.Edges[index];
+            if (edge.Left == Drawing.CrossSection.Outside || edge.Right == Drawing.CrossSection.Outside)
+            {
+                obstacle[nodes[side]] = true;
+                obstacle[nodes[(side + 1) % 3]] = true;
+                for (int m = 1; m < space.Order; m++)
+                {
+                    obstacle[nodes[space.Reference.EdgeNode(side, m)]] = true;
+                }
+            }
+        }
     }
 
     // The second disc lies over the first in the plane; only the rim, which both share, is near anything.

@@ -10,8 +10,9 @@ internal sealed record BeamEstimate
     // With corners in saturated iron the estimate was seen low by up to 2.7.
     public const double ErrorBarFactor = 3.0;
 
-    // A small difference at the centre alone may be chance.
-    private const double ElsewhereFactor = 1.5;
+    // At one point contributions of many corners may cancel in the estimate and not in the error: on the model problem the
+    // centre's field was seen off by 4.5 times its estimate, and by at most 1.9 times the largest one over the aperture.
+    private const double ElsewhereFactor = 2.0;
     private const double QuadratureTolerance = 1e-9;
 
     public required FieldSolution Solution { get; init; }

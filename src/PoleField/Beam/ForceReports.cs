@@ -13,8 +13,8 @@ internal static class ForceReports
     private const int PointsPerInterval = 6;
 
     /// <summary>
-    /// Force on a part: ∫ J × B for conductors; for iron and magnets Maxwell's stress in the air around them, or, where
-    /// something touches them, on their free faces (joints left out).
+    /// Force on a part: ∫ J × B for conductors; for iron and magnets Maxwell's stress in the air around them, where they
+    /// touch other iron on their free faces alone.
     /// </summary>
     public static (Point? PerMetre, bool FreeFacesOnly) Of(FieldSolution solution, int part)
     {
@@ -31,18 +31,8 @@ internal static class ForceReports
             return (ForceOnCurrent.Of(solution, body), false);
         }
 
-        if (ForceShell.Around(solution, body) is { } shell)
-        {
-            return (shell.OverShell(), false);
-        }
-
-        if (role.AmpereTurns != 0.0)
-        {
-            return (null, false); // current in iron that touches something: neither form covers it
-        }
-
-        ForceOnFaces faces = ForceOnFaces.Of(solution, body);
-        return (faces.PerMetre, faces.HasJoints);
+        ForceShell shell = ForceShell.Around(solution, body);
+        return (shell.OverShell(), shell.HasJoints);
     }
 
     /// <summary>

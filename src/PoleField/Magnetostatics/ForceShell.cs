@@ -5,13 +5,14 @@ using PoleField.Meshing;
 namespace PoleField.Magnetostatics;
 
 /// <summary>
-/// A shell of air elements around a body and the force on the body by Maxwell's stress T = ν0 (B Bᵀ − ½|B|² I) in it, in two
-/// ways: over the whole shell, F = −∫ T ∇χ dS, and along a closed path through it, F = ∮ T n ds.
+/// The shell of elements around a body and the force on the body by Maxwell's stress T = ν0 (B Bᵀ − ½|B|² I) in it, in two
+/// ways: over the whole shell, F = −∫ (T ∇χ + χ J × B) dS, and along a closed path through it, F = ∮ T n ds.
 /// </summary>
 /// <remarks>
-/// χ is linear in each element, 1 on the body and 0 on everything else that is not air. The shell form is the derivative of
-/// the stored energy when the body moves and the elements of the shell stretch (Coulomb 1983, recalled from memory), and
-/// inherits the energy's accuracy; the path runs where χ = ½.
+/// χ is linear in each element, 1 on the body and 0 away from it. The shell form is the derivative of the stored energy when
+/// the body moves and the elements of the shell stretch (Coulomb 1983, recalled from memory), and inherits the energy's
+/// accuracy; the path runs where χ = ½. Where bodies of iron or magnets touch, each gets an equal share of χ at the common
+/// vertices: the sum of their forces is that on the whole; how the joint itself divides it is a question of mechanics.
 /// </remarks>
 internal sealed class ForceShell
 {
@@ -19,51 +20,67 @@ internal sealed class ForceShell
     private const double OnPath = 0.5;      // χ there
 
     private readonly FieldSolution _solution;
-    private readonly bool[] _inside;        // by vertex: χ = 1
+    private readonly bool[] _body;          // by region
+    private readonly double[] _chi;         // by vertex
 
-    private ForceShell(FieldSolution solution, bool[] inside)
+    private ForceShell(FieldSolution solution, bool[] body, double[] chi, bool hasJoints)
     {
         _solution = solution;
-        _inside = inside;
+        _body = body;
+        _chi = chi;
+        HasJoints = hasJoints;
     }
 
-    /// <summary>
-    /// The shell of the elements that touch a body, <paramref name="layers"/> − 1 layers of elements away from it where there
-    /// is room; null when something other than air touches the body.
-    /// </summary>
-    /// <param name="solution">The field.</param>
-    /// <param name="body">By region of the section: true for the body's.</param>
-    /// <param name="layers">1 for the elements that touch the body.</param>
-    public static ForceShell? Around(FieldSolution solution, bool[] body, int layers = 1)
+    /// <summary>True when the body touches other iron or magnets, or the rim of a closed model.</summary>
+    public bool HasJoints { get; }
+
+    /// <summary>The shell of the elements that touch a body, given by region of the section.</summary>
+    public static ForceShell Around(FieldSolution solution, bool[] body)
     {
         Mesh mesh = solution.Mesh;
-        var inside = new bool[mesh.Vertices.Count];
-        var barred = new bool[mesh.Vertices.Count];
+        var own = new bool[mesh.Vertices.Count];
+        MarkRegions(mesh, body, own);
+        int[] sharers = Sharers(solution, body);
+        var chi = new double[own.Length];
+        bool joints = false;
+        for (int v = 0; v < chi.Length; v++)
+        {
+            chi[v] = own[v] ? 1.0 / (1 + sharers[v]) : 0.0;
+            joints |= own[v] && sharers[v] > 0;
+        }
+
+        return new ForceShell(solution, body, chi, joints);
+    }
+
+    /// <summary>The shell moved one layer of elements away from the body where there is room; only without joints.</summary>
+    public ForceShell Outward()
+    {
+        Mesh mesh = _solution.Mesh;
+        var barred = new bool[_chi.Length];
         for (int t = 0; t < mesh.TriangleCount; t++)
         {
             int region = mesh.Regions[t];
-            bool own = region != Mesh.Exterior && body[region];
-            if (own || !IsAir(solution.Problem, t))
+            if (!(region != Mesh.Exterior && _body[region]) && !IsAir(t))
             {
-                Mark(mesh, t, own ? inside : barred);
+                Mark(mesh, t, barred);
             }
         }
 
-        BarRim(mesh, barred);
-        for (int v = 0; v < inside.Length; v++)
+        MarkRim(mesh, barred);
+        var chi = (double[])_chi.Clone();
+        for (int t = 0; t < mesh.TriangleCount; t++)
         {
-            if (inside[v] && barred[v])
+            for (int c = 0; c < 3; c++)
             {
-                return null;
+                int v = mesh.Triangles[(3 * t) + c];
+                if (!barred[v] && Chi(t, 0) + Chi(t, 1) + Chi(t, 2) > 0)
+                {
+                    chi[v] = 1.0;
+                }
             }
         }
 
-        for (int layer = 1; layer < layers; layer++)
-        {
-            inside = Grown(mesh, inside, barred);
-        }
-
-        return new ForceShell(solution, inside);
+        return new ForceShell(_solution, _body, chi, HasJoints);
     }
 
     /// <summary>Force per metre on the body from the whole shell (y, z), N/m.</summary>
@@ -75,25 +92,28 @@ internal sealed class ForceShell
         Point force = default;
         for (int e = 0; e < space.ElementCount; e++)
         {
-            if (!Crosses(e))
+            if (!IsInShell(e))
             {
                 continue;
             }
 
             double corner = Chi(e, 0);
             (double byXi, double byEta) = (Chi(e, 1) - corner, Chi(e, 2) - corner);
+            double current = _solution.Problem.PhysicsOf(e).CurrentDensity;
             for (int q = 0; q < rule.Count; q++)
             {
                 Jacobian j = space.JacobianAt(e, table.XiRow(q), table.EtaRow(q));
                 Point b = FluxDensity(e, rule.Xi[q], rule.Eta[q]);
-                force -= rule.Weights[q] * j.Determinant * Traction(b, j.Gradient(byXi, byEta));
+                double chi = corner + (byXi * rule.Xi[q]) + (byEta * rule.Eta[q]);
+                force -= (rule.Weights[q] * j.Determinant)
+                    * (Traction(b, j.Gradient(byXi, byEta)) + ((chi * current) * b.Perpendicular));
             }
         }
 
         return force;
     }
 
-    /// <summary>Force per metre on the body from the closed path χ = ½ (y, z), N/m.</summary>
+    /// <summary>Force per metre on the body from the closed path χ = ½ (y, z), N/m; only without joints.</summary>
     public Point AlongPath()
     {
         FiniteElementSpace space = _solution.Problem.Space;
@@ -103,7 +123,7 @@ internal sealed class ForceShell
         Point force = default;
         for (int e = 0; e < space.ElementCount; e++)
         {
-            if (!Crosses(e))
+            if (!IsInShell(e))
             {
                 continue;
             }
@@ -129,14 +149,43 @@ internal sealed class ForceShell
     public static Point Traction(Point b, Point normal) =>
         PhysicalConstants.Nu0 * ((b.Dot(normal) * b) - (0.5 * b.SquaredLength * normal));
 
-    /// <summary>True where the stress of vacuum is free of divergence: no iron, no remanence, no current, not the second disc.</summary>
-    private static bool IsAir(FieldProblem problem, int element)
+    // Bodies of iron or magnets, other than this one, that own each vertex; the rim of a closed model counts as one.
+    private static int[] Sharers(FieldSolution solution, bool[] body)
     {
-        ref readonly RegionPhysics physics = ref problem.PhysicsOf(element);
-        return problem.Space.Mesh.Regions[element] != Mesh.Exterior
-            && physics.Law is LinearLaw { RelativePermeability: 1.0 }
-            && physics.CurrentDensity == 0.0
-            && physics.RemanentGradient == default;
+        Mesh mesh = solution.Mesh;
+        var sharers = new int[mesh.Vertices.Count];
+        for (int part = 0; part < solution.Magnet.Roles.Count; part++)
+        {
+            PartRole role = solution.Magnet.Roles[part];
+            if (role.Material.IsMagnetic || role.Remanence != default)
+            {
+                Count(flags => MarkRegions(mesh, [.. mesh.Section.Regions.Select((r, i) => r.Part == part && !body[i])], flags));
+            }
+        }
+
+        Count(flags => MarkRim(mesh, flags));
+        return sharers;
+
+        void Count(Action<bool[]> mark)
+        {
+            var flags = new bool[sharers.Length];
+            mark(flags);
+            for (int v = 0; v < flags.Length; v++)
+            {
+                sharers[v] += flags[v] ? 1 : 0;
+            }
+        }
+    }
+
+    private static void MarkRegions(Mesh mesh, bool[] regions, bool[] flags)
+    {
+        for (int t = 0; t < mesh.TriangleCount; t++)
+        {
+            if (mesh.Regions[t] != Mesh.Exterior && regions[mesh.Regions[t]])
+            {
+                Mark(mesh, t, flags);
+            }
+        }
     }
 
     private static void Mark(Mesh mesh, int triangle, bool[] flags)
@@ -147,7 +196,7 @@ internal sealed class ForceShell
         }
     }
 
-    private static void BarRim(Mesh mesh, bool[] barred)
+    private static void MarkRim(Mesh mesh, bool[] flags)
     {
         foreach (CurveEdge edge in mesh.CurveEdges)
         {
@@ -156,39 +205,30 @@ internal sealed class ForceShell
                 || mesh.Section.Edges[edge.SectionEdge].Right == Drawing.CrossSection.Outside;
             if (rim)
             {
-                barred[edge.A] = true;
-                barred[edge.B] = true;
+                flags[edge.A] = true;
+                flags[edge.B] = true;
             }
         }
     }
 
-    private static bool[] Grown(Mesh mesh, bool[] inside, bool[] barred)
+    private double Chi(int element, int corner) => _chi[_solution.Mesh.Triangles[(3 * element) + corner]];
+
+    private bool IsAir(int element) => IsVacuum(element) && _solution.Problem.PhysicsOf(element).CurrentDensity == 0.0;
+
+    // Where the stress of vacuum holds: no iron, no remanence, not the second disc, whose plane is another.
+    private bool IsVacuum(int element)
     {
-        var grown = (bool[])inside.Clone();
-        for (int t = 0; t < mesh.TriangleCount; t++)
-        {
-            bool touches = false;
-            for (int c = 0; c < 3; c++)
-            {
-                touches |= inside[mesh.Triangles[(3 * t) + c]];
-            }
-
-            for (int c = 0; touches && c < 3; c++)
-            {
-                int v = mesh.Triangles[(3 * t) + c];
-                grown[v] |= !barred[v];
-            }
-        }
-
-        return grown;
+        ref readonly RegionPhysics physics = ref _solution.Problem.PhysicsOf(element);
+        return _solution.Mesh.Regions[element] != Mesh.Exterior
+            && physics.Law is LinearLaw { RelativePermeability: 1.0 }
+            && physics.RemanentGradient == default;
     }
 
-    private double Chi(int element, int corner) => _inside[_solution.Mesh.Triangles[(3 * element) + corner]] ? 1.0 : 0.0;
-
-    private bool Crosses(int element)
+    private bool IsInShell(int element)
     {
-        double sum = Chi(element, 0) + Chi(element, 1) + Chi(element, 2);
-        return sum is > 0 and < 3;
+        (double a, double b, double c) = (Chi(element, 0), Chi(element, 1), Chi(element, 2));
+        return (a > 0 || b > 0 || c > 0) && !(a == b && b == c && IsAir(element))
+            && IsVacuum(element) && !_body[_solution.Mesh.Regions[element]];
     }
 
     // From the middle of one side to that of another, the corners with χ = 1 on the left.

@@ -1,4 +1,4 @@
-// Truth: closed forms — two line currents pull with μ0 I²/(2π d); a line current outside a permeable cylinder is pulled by
+// Truth: closed forms — two opposite line currents push with μ0 I²/(2π d); a line current outside a permeable cylinder is pulled by
 // its images with μ0 I² k/(2π) · R²/(d (d² − R²)), k = (μr − 1)/(μr + 1); a pole face is pulled with B²/(2 μ0) — and
 // conservation laws: action equals reaction; the force is the derivative of the co-energy by displacement at fixed currents.
 using PoleField.Beam;
@@ -16,24 +16,24 @@ public class ForceTests(VerificationRecord record)
     private static readonly SolveOptions Fine = new() { Accuracy = 1e-5 };
 
     [Fact]
-    public void TwoConductorsPullAsAmpereSays()
+    public void TwoOppositeConductorsPushAsAmpereSays()
     {
         const double spacing = 0.010;
         const double current = 1000;
         Magnet magnet = new Drawn().Circle("UPPER", 0, 5, 2).Circle("LOWER", 0, -5, 2)
-            .Part("UPPER", Material.Air, current).Part("LOWER", Material.Air, current).Magnet();
+            .Part("UPPER", Material.Air, current).Part("LOWER", Material.Air, -current).Magnet();
         double truth = PhysicalConstants.Mu0 * current * current / (Math.Tau * spacing);
 
         SolvedMagnet solved = MagnetSolver.Solve(magnet, Drawn.Beam(0, 0, 2, 1), Fine);
 
         Point upper = solved.Report.Parts[0].ForcePerMetre!.Value;
         Point lower = solved.Report.Parts[1].ForcePerMetre!.Value;
-        record.Relative("two conductors: pull on the upper, J × B, N/m", -truth, upper.Z, 1e-4);
-        record.Absolute("two conductors: sum of both forces over one, J × B", 0, (upper + lower).Length / truth, 1e-4);
-        ForceShell shell = ForceShell.Around(solved.Solution, Body(magnet, 0))!;
-        record.Relative("two conductors: pull on the upper, stress over the shell, N/m", -truth, shell.OverShell().Z, 1e-4);
-        record.Relative("two conductors: pull on the upper, stress along the path, N/m", -truth, shell.AlongPath().Z, 1e-3);
-        record.Relative("two conductors: pull across the plane between them, N/m", truth, solved.Report.Circuit.GapPullPerMetre, 1e-4);
+        record.Relative("two opposite conductors: push on the upper, J × B, N/m", truth, upper.Z, 1e-4);
+        record.Absolute("two opposite conductors: sum of both forces over one, J × B", 0, (upper + lower).Length / truth, 1e-4);
+        ForceShell shell = ForceShell.Around(solved.Solution, Body(magnet, 0));
+        record.Relative("two opposite conductors: push on the upper, stress over the shell, N/m", truth, shell.OverShell().Z, 1e-4);
+        record.Relative("two opposite conductors: push on the upper, stress along the path, N/m", truth, shell.AlongPath().Z, 1e-3);
+        record.Relative("two opposite conductors: pull across the plane between them, N/m", -truth, solved.Report.Circuit.GapPullPerMetre, 1e-4);
     }
 
     [Fact]
@@ -54,8 +54,8 @@ public class ForceTests(VerificationRecord record)
         record.Relative("wire by cylinder: pull on the cylinder, stress over the shell, N/m", truth, solved.Report.Parts[0].ForcePerMetre!.Value.Y, 1e-4);
         record.Relative(
             "wire by cylinder: pull on the cylinder, stress along the path, N/m",
-            truth, ForceShell.Around(solved.Solution, Body(magnet, 0), layers: 2)!.AlongPath().Y, 1e-3);
-        record.Relative("wire by cylinder: pull on the cylinder, traction on its face, N/m", truth, ForceOnFaces.Of(solved.Solution, Body(magnet, 0)).PerMetre.Y, 1e-4);
+            truth, ForceShell.Around(solved.Solution, Body(magnet, 0)).Outward().AlongPath().Y, 1e-3);
+        record.Relative("wire by cylinder: pull on the cylinder, stress over a shell further out, N/m", truth, ForceShell.Around(solved.Solution, Body(magnet, 0)).Outward().OverShell().Y, 1e-4);
         foreach ((double y, double z, double by, double bz) in new[]
         {
             (25, 0, 0, -0.03087541), (0, 30, -0.0022358741, -0.0058026166), (-30, 0, 0, -0.0012861497), (50.0, 20.0, -0.0059118577, 0.0057540362),
@@ -75,7 +75,7 @@ public class ForceTests(VerificationRecord record)
         const double move = 2e-5;
 
         FieldSolution solution = Solve(magnet, mesh, default).Solution;
-        Point shell = ForceShell.Around(solution, Body(magnet, 0))!.OverShell();
+        Point shell = ForceShell.Around(solution, Body(magnet, 0)).OverShell();
         double along = (CoEnergy(magnet, mesh, new Point(move, 0)) - CoEnergy(magnet, mesh, new Point(-move, 0))) / (2 * move);
         double across = (CoEnergy(magnet, mesh, new Point(0, move)) - CoEnergy(magnet, mesh, new Point(0, -move))) / (2 * move);
 
@@ -122,7 +122,7 @@ public class ForceTests(VerificationRecord record)
         Point sum = parts.Aggregate(default(Point), (total, p) => total + p.ForcePerMetre!.Value);
         Assert.Equal([true, true, true, false, false], parts.Select(p => p.ForceOnFreeFacesOnly));
         record.Absolute("C magnet: sum of the forces of all parts over the gap's pull", 0, sum.Length / pull, 2e-3);
-        record.Absolute("C magnet: sum of the parts' and the air's shares of the ampere-turns (iron, less than all)", 0.5, parts.Sum(p => p.MmfDrop ?? 0) / 5000, 0.5);
+        Assert.True(parts.Sum(p => p.MmfDrop ?? 0) is > 0 and < 5000);
         Assert.True(pull > 0 && parts[1].ForcePerMetre!.Value.Z > 0 && parts[2].ForcePerMetre!.Value.Z < 0);
 
         // The lower half: everything below the plane of the beam, by the pull across the plane.
