@@ -1,4 +1,3 @@
-using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
 using PoleField.Materials;

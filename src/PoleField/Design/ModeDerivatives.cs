@@ -1,4 +1,3 @@
-using PoleField.Geometry;
 
 namespace PoleField.Design;
 

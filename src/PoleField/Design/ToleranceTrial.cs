@@ -1,5 +1,4 @@
 using PoleField.Beam;
-using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
 
