@@ -6,6 +6,8 @@ namespace PoleField.Design;
 /// <summary>What the errors of shape, place, current and material cost, to first order.</summary>
 public sealed class ToleranceBudget
 {
+    private const double LeastShare = 3e-3; // of the total: 1e-5 of the variance
+
     private readonly Magnet _magnet;
     private readonly Sensitivity _sensitivity;
     private readonly int[][] _points;      // of each face, in rising arc length
@@ -92,6 +94,24 @@ public sealed class ToleranceBudget
         }
 
         return [.. Shares(stretches, allowed * allowed, loosest)];
+    }
+
+    /// <summary>True when a face's form error has a share in some quantity that a trial could see.</summary>
+    internal bool FormMatters(int face)
+    {
+        IReadOnlyList<double> total = Total;
+        return Enumerable.Range(0, Quantities.Count).Any(q => Tolerances.FormSize
+            * Math.Sqrt(FormError.Variance(Faces[face], Weighted(face, q, 0, Faces[face].Length), Tolerances.FormLength)) > LeastShare * total[q]);
+    }
+
+    /// <summary>True when a part's place has a share in some quantity that a trial could see.</summary>
+    internal bool PlaceMatters(int part)
+    {
+        IReadOnlyList<double> total = Total;
+        return Derivatives.Select((d, q) => (d.Parts[part], total[q])).Any(x =>
+            Math.Max(
+                Math.Max(Math.Abs(x.Item1.Shift.Y) * Tolerances.PlaceY, Math.Abs(x.Item1.Shift.Z) * Tolerances.PlaceZ),
+                Math.Abs(x.Item1.Turn) * Tolerances.Turn) > LeastShare * x.Item2);
     }
 
     internal double StretchLength(int face) => Math.Max(Tolerances.FormLength, Faces[face].Length / 400);

@@ -15,7 +15,10 @@ public sealed record ToleranceTrial(
     /// <summary>Relative sampling error of a standard deviation found from so many draws, one sigma.</summary>
     public double SamplingError => 1 / Math.Sqrt(2.0 * (Draws - 1));
 
-    /// <summary>Draws errors of form, place, current, material and beam, and solves each magnet anew.</summary>
+    /// <summary>
+    /// Draws errors of form, place, current, material and beam, and solves each magnet anew. Faces and places without a share in
+    /// any quantity (1e-5 of the variance) are left as drawn.
+    /// </summary>
     /// <param name="budget">Budget.</param>
     /// <param name="aperture">Where the beam flies.</param>
     /// <param name="options">Number of draws, seed, threads.</param>
@@ -92,10 +95,10 @@ internal sealed class TrialDraw
         Tolerances t = budget.Tolerances;
         Func<double, double>[] form =
         [
-            .. budget.Faces.Select(f =>
+            .. budget.Faces.Select((f, k) =>
             {
                 Func<double, double> unit = FormError.Draw(f, t.FormLength, random);
-                return (Func<double, double>)(s => t.FormSize == 0 ? 0 : t.FormSize * unit(s));
+                return budget.FormMatters(k) ? s => t.FormSize * unit(s) : (Func<double, double>)(_ => 0);
             }),
         ];
         var materials = new Dictionary<string, double>();
@@ -104,10 +107,14 @@ internal sealed class TrialDraw
         for (int part = 0; part < places.Length; part++)
         {
             PartRole role = budget.Magnet.Roles[part];
-            if (role.Kind == "iron")
+            if (role.Kind == "iron" && budget.PlaceMatters(part))
             {
                 places[part] = (
                     new Point(t.PlaceY * FormError.Normal(random), t.PlaceZ * FormError.Normal(random)), t.Turn * FormError.Normal(random));
+            }
+
+            if (role.Kind == "iron")
+            {
                 materials.TryAdd(role.Material.Name, t.Saturation * FormError.Normal(random));
                 saturation[part] = materials[role.Material.Name];
             }

@@ -71,7 +71,7 @@ public class TuningTests
         }
 
         FixedMeshSolve Solved(double[] moves) => FixedMeshSolve.Of(
-            magnet with { Section = MovedSection.Of(magnet.Section, faces, (_, arc) => modes.Move(moves, arc), modes.Spacing / 4) },
+            magnet with { Section = MovedSection.Of(magnet.Section, faces, (_, arc) => modes.Move(moves, arc), modes.Spacing / 16) },
             new FixedMeshOptions(Drawn.Beam(0, 15, 3, 1), 1) { Order = 4, Fineness = 0.6 });
     }
 
