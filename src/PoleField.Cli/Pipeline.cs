@@ -1,7 +1,7 @@
 using PoleField.Beam;
 using PoleField.Cli.Case;
-using PoleField.Cli.Files;
 using PoleField.Cli.Commands;
+using PoleField.Cli.Files;
 using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;

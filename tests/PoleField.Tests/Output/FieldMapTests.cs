@@ -158,7 +158,7 @@ public sealed class FieldMapTests : IDisposable
         Assert.Equal("/data/%T/", read["basePath"]);
         Assert.Equal(Origin.Title, read["comment"]);
         Assert.Equal(Origin.CaseSha256, read["caseSha256"]);
-        Assert.Equal("B dBy_dy dBy_dz dBz_dy dBz_dz grad_absB medium", read["records"]);
+        Assert.Equal("B dBy_dy dBy_dz dBz_dy dBz_dz grad_absB medium obtained", read["records"]);
         Assert.Equal("z y", read["axes"]);
         Assert.Equal("4 5 4 5", read["shape"]);
         Assert.Equal(3.7e-3, Numbers(read["at"])[0], 1e-15);
