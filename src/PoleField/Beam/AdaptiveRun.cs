@@ -37,7 +37,7 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
             previous = solution;
             if (BandCutOff.Nodal(solution.Problem, place.Shape) is not { } chi)
             {
-                size = size.With([.. place.Shape.EdgePoints(8).Select(p => (p, 0.5 * size.At(p)))]);
+                size = size.With([.. place.Shape.EdgePoints(PointsPerSide()).Select(p => (p, 0.5 * size.At(p)))]);
                 if (step > _options.MostAdaptiveSteps)
                 {
                     throw NoBand();
@@ -73,6 +73,13 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
 
     private static int[] MagneticParts(Magnet magnet) =>
         [.. Enumerable.Range(0, magnet.Roles.Count).Where(part => magnet.Roles[part].Material.IsMagnetic)];
+
+    // Close enough that no large element is left between two of them.
+    private int PointsPerSide()
+    {
+        Geometry.Box box = place.Aperture.Outline.Bounds;
+        return (int)Math.Clamp(Math.Ceiling(2 * Math.Max(box.Width, box.Height) / place.Clearance), 8, 200);
+    }
 
     private MeshingException NoBand() =>
         new("No band of air elements fits between the aperture and its surroundings.", place.Aperture.Centre);
