@@ -50,7 +50,7 @@ public sealed class Flight
         FlightRoom room = FlightRoom.In(solved, new RunSettings(options, progress, cancellation));
         Aperture aperture = solved.Field.Aperture;
         FlightReport report = Through(room.Field, aperture.Outline.Bounds, aperture.Centre, setup, options.Threads, cancellation);
-        return report with { Margin = room.Margin, Findings = room.IsApertureOnly ? [.. report.Findings, Narrow()] : report.Findings };
+        return report with { Margin = room.Margin, Findings = room.WhyApertureOnly is { } why ? [.. report.Findings, Narrow(why)] : report.Findings };
     }
 
     internal static FlightReport Through(
@@ -85,10 +85,10 @@ public sealed class Flight
         };
     }
 
-    private static Finding Narrow() => new(
+    private static Finding Narrow(string why) => new(
         Severity.Warning,
         "flight-room",
-        "Particles could be followed inside the aperture only; those that leave it count as clipped though they may pass.",
+        $"Particles could be followed inside the aperture only ({why.TrimEnd('.')}); those that leave it count as clipped though they may pass.",
         "Draw a larger aperture, and give the beam's own size as slit in [flight].");
 
     private Finding Rough() => new(

@@ -15,8 +15,8 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
     private const double KeptClearance = 0.2;   // of the aperture's
     private const double Accuracy = 1e-3;       // of the field over the whole room; the beam starts where it is better
 
-    /// <summary>True when no field could be had around the aperture, so that particles that leave it are lost.</summary>
-    public bool IsApertureOnly { get; private init; }
+    /// <summary>Why no field could be had around the aperture, so that particles that leave it are lost; null when it could.</summary>
+    public string? WhyApertureOnly { get; private init; }
 
     /// <summary>
     /// Finds the room in a solved magnet. Where the mesh leaves no layer of air between room and parts, the magnet is solved
@@ -44,9 +44,9 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
             BeamField field = FieldOver(solved, room) ?? SolvedOver(magnet, room, settings);
             return new FlightRoom(FlightField.Over(room, field.At), margin);
         }
-        catch (MeshingException)
+        catch (MeshingException e)
         {
-            return new FlightRoom(FlightField.Over(beam, solved.Field.At), clearance) { IsApertureOnly = true };
+            return new FlightRoom(FlightField.Over(beam, solved.Field.At), clearance) { WhyApertureOnly = e.Message };
         }
     }
 
