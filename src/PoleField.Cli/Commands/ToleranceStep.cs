@@ -147,7 +147,8 @@ internal static class ToleranceStep
     private static double Preferred(double size)
     {
         double decade = Math.Pow(10, Math.Floor(Math.Log10(size * 1e6)));
-        return 1e-6 * new[] { 5.0, 2.0, 1.0 }.Select(m => m * decade).First(s => s <= size * 1e6 * (1 + 1e-9));
+        double lead = (size * 1e6 * (1 + 1e-9) / decade) switch { >= 5 => 5, >= 2 => 2, _ => 1 };
+        return 1e-6 * lead * decade;
     }
 
     private static void Trial(TextWriter writer, Ink ink, ToleranceBudget budget, ToleranceTrial trial)

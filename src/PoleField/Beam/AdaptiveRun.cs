@@ -44,7 +44,7 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
             previous = solution;
             if (BandCutOff.Nodal(solution.Problem, place.Shape) is not { } chi)
             {
-                size = size.With([.. place.Shape.EdgePoints(8).Select(p => (p, 0.5 * size.At(p)))]);
+                size = size.With([.. place.Shape.EdgePoints(PointsPerSide()).Select(p => (p, 0.5 * size.At(p)))]);
                 if (step > _options.MostAdaptiveSteps)
                 {
                     throw NoBand();
@@ -94,6 +94,13 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     {
         Box box = place.Aperture.Outline.Bounds.Inflated(Math.Min(place.Clearance, magnet.Section.Bounds.Diagonal));
         return [box.Min, box.Max, new Point(box.Min.Y, box.Max.Z), new Point(box.Max.Y, box.Min.Z)];
+    }
+
+    // Close enough that no large element is left between two of them.
+    private int PointsPerSide()
+    {
+        Box box = place.Aperture.Outline.Bounds;
+        return (int)Math.Clamp(Math.Ceiling(2 * Math.Max(box.Width, box.Height) / place.Clearance), 8, 200);
     }
 
     private MeshingException NoBand() =>

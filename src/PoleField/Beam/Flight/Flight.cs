@@ -10,7 +10,7 @@ namespace PoleField.Beam;
 public sealed class Flight
 {
     private const int PointsAcross = 5;
-    private const int Strips = 7;
+    private const int Strips = 15;
     private const int PiecesPerCell = 6;
     private const int EdgeSearch = 12;         // halvings to find the speed at which particles begin to be lost
     private const double MostUnsettled = 1e-4;
@@ -49,7 +49,8 @@ public sealed class Flight
         options ??= new SolveOptions();
         FlightRoom room = FlightRoom.In(solved, new RunSettings(options, progress, cancellation));
         Aperture aperture = solved.Field.Aperture;
-        return Through(room.Field, aperture.Outline.Bounds, aperture.Centre, setup, options.Threads, cancellation) with { Margin = room.Margin };
+        FlightReport report = Through(room.Field, aperture.Outline.Bounds, aperture.Centre, setup, options.Threads, cancellation);
+        return report with { Margin = room.Margin, Findings = room.WhyApertureOnly is { } why ? [.. report.Findings, Narrow(why)] : report.Findings };
     }
 
     internal static FlightReport Through(
@@ -83,6 +84,12 @@ public sealed class Flight
             Findings = _field.Unsettled <= MostUnsettled ? [] : [Rough()],
         };
     }
+
+    private static Finding Narrow(string why) => new(
+        Severity.Warning,
+        "flight-room",
+        $"Particles could be followed inside the aperture only ({why.TrimEnd('.')}); those that leave it count as clipped though they may pass.",
+        "Draw a larger aperture, and give the beam's own size as slit in [flight].");
 
     private Finding Rough() => new(
         Severity.Warning,

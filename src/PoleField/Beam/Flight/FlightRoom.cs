@@ -1,5 +1,6 @@
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
+using PoleField.Meshing;
 
 namespace PoleField.Beam;
 
@@ -8,11 +9,14 @@ namespace PoleField.Beam;
 /// <param name="Margin">Distance that is kept to anything that is not air, metres.</param>
 internal sealed record FlightRoom(FlightField Field, double Margin)
 {
-    private const double LargestGrowth = 4.0;   // on each side, in widths or heights of the beam
+    private const double LargestGrowth = 2.0;   // on each side, in widths or heights of the beam
     private const int MostMoves = 24;
 
     private const double KeptClearance = 0.2;   // of the aperture's
     private const double Accuracy = 1e-3;       // of the field over the whole room; the beam starts where it is better
+
+    /// <summary>Why no field could be had around the aperture, so that particles that leave it are lost; null when it could.</summary>
+    public string? WhyApertureOnly { get; private init; }
 
     /// <summary>
     /// Finds the room in a solved magnet. Where the mesh leaves no layer of air between room and parts, the magnet is solved
@@ -35,8 +39,15 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
 
         double margin = KeptClearance * Math.Min(clearance, LargestGrowth * beam.Diagonal);
         Box room = Grown(magnet, beam, margin);
-        BeamField field = FieldOver(solved, room) ?? SolvedOver(magnet, room, settings);
-        return new FlightRoom(FlightField.Over(room, field.At), margin);
+        try
+        {
+            BeamField field = FieldOver(solved, room) ?? SolvedOver(magnet, room, settings);
+            return new FlightRoom(FlightField.Over(room, field.At), margin);
+        }
+        catch (MeshingException e)
+        {
+            return new FlightRoom(FlightField.Over(beam, solved.Field.At), clearance) { WhyApertureOnly = e.Message };
+        }
     }
 
     private static BeamField SolvedOver(Magnet magnet, Box room, RunSettings settings)

@@ -78,7 +78,7 @@ public sealed class HealingTests
 
         Assert.Equal(100, Areas(reading.Section!, "IRON").Single(), 9);
         Assert.Equal(3, reading.Findings.Count(f => f.What == "duplicate"));
-        Assert.NotEmpty(reading.Findings.Where(f => f.What == "overlap-merged"));
+        Assert.Contains(reading.Findings, f => f.What == "overlap-merged");
         Assert.Equal(
             "A curve of length 10 mm through (10, 5) mm is drawn more than once; one was kept.",
             reading.Findings.First(f => f.What == "duplicate").Text);
