@@ -1,5 +1,6 @@
 // Truth: closed forms. A permeable pipe in a uniform field shields its bore by 4μr/((μr+1)² − (μr−1)²(a/b)²); two wires in
-// a closed circle with A = 0 have opposite images at D²/a (inversion of the plane), and the open model has none.
+// a closed circle with A = 0 have opposite images at D²/a (inversion of the plane), and the open model has none; a single
+// conductor has B = μ0 I/(2πr) at any distance (Ampère).
 using PoleField.Beam;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
@@ -26,6 +27,28 @@ public class LinearBodyTests(VerificationRecord record)
         record.Relative(
             FormattableString.Invariant($"pipe {inner}/{outer} mm, μr {permeability}: field in the bore over outside"),
             share, solved.Report.Beam.Bz, 1e-5);
+    }
+
+    [Fact]
+    public void CurrentWithoutReturnHasItsFieldNearAndFar()
+    {
+        Magnet magnet = new Drawn().Circle("WIRE", 4, 1, 2).Part("WIRE", Material.Air, 1000).Magnet();
+        var wire = new Point(0.004, 0.001);
+
+        SolvedMagnet solved = MagnetSolver.Solve(magnet, Drawn.Beam(4, 11, 2, 1), new SolveOptions { Accuracy = 1e-6 });
+
+        record.Relative("one conductor without return: B 10 mm away, T", 0.02, solved.Report.Beam.Field, 1e-6);
+        record.Relative("one conductor without return: dB/dz 10 mm away, T/m", -2, solved.Report.Beam.Gradient, 1e-6);
+        foreach (double distance in new[] { 0.1, 3.0 })
+        {
+            FieldSample far = solved.Solution.At(wire + Point.Polar(distance, 0.3))!.Value;
+            record.Relative(
+                FormattableString.Invariant($"one conductor without return: B {distance} m away, T"),
+                PhysicalConstants.Mu0 * 1000 / (Math.Tau * distance), far.Magnitude, 1e-5);
+        }
+
+        Assert.True(double.IsNaN(solved.Report.Circuit.EnergyPerMetre)); // infinite
+        Assert.Null(solved.Report.Circuit.InductancePerMetre);
     }
 
     [Theory]

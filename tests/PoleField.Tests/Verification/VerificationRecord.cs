@@ -52,7 +52,7 @@ public sealed class VerificationRecord : IDisposable
         {
             text.Append(
                 CultureInfo.InvariantCulture,
-                $"| {row.What} | {row.Truth:g8} | {row.Obtained:g8} | {row.Error:e1} | {row.Tolerance:g2} | {row.Kind} |\n");
+                $"| {row.What.Replace("|", "\\|", StringComparison.Ordinal)} | {row.Truth:g8} | {row.Obtained:g8} | {row.Error:0.0e+0} | {row.Tolerance:g2} | {row.Kind} |\n");
         }
 
         return text.ToString();
