@@ -1,7 +1,6 @@
 // Truth: Ampère's law and superposition (a linear magnet's field is proportional to its current; saturating iron gives ever
 // less per ampere-turn); the closed form B + μ0 H = 2 B0 for what a solve on a given mesh must reproduce.
 using PoleField.Beam;
-using PoleField.Geometry;
 using PoleField.Magnetostatics;
 using PoleField.Materials;
 using PoleField.Tests.Verification;

@@ -1,7 +1,6 @@
 // Truth: a cylinder in a uniform field outside which the field is the background plus a dipole of strength k R² B0 (any
 // textbook of electromagnetism), k = B/B0 − 1 from B + μ0 H(B) = 2 B0 for one material, the coated cylinder's closed form for
 // two. On the axis B = B0 (1 + k R²/z²), so every derivative is known in closed form.
-using PoleField.Beam;
 using PoleField.Design;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;

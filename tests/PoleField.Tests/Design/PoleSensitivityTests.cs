@@ -2,7 +2,6 @@
 // the adjoint), and the identity that moving everything one way is moving the beam the other way.
 using PoleField.Beam;
 using PoleField.Design;
-using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
 using PoleField.Materials;

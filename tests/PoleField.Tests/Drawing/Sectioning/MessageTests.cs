@@ -1,6 +1,5 @@
 // Truth: the sketch as drawn, place and size of each fault known from its coordinates.
 using PoleField.Drawing;
-using PoleField.Geometry;
 using Xunit;
 using static PoleField.Tests.Drawing.Sectioning.Drafts;
 

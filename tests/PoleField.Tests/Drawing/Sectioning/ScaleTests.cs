@@ -1,6 +1,5 @@
 // Truth: closed-form areas, independent of where the drawing lies and of how many curves it has.
 using PoleField.Drawing;
-using PoleField.Geometry;
 using Xunit;
 using static PoleField.Tests.Drawing.Sectioning.Drafts;
 
