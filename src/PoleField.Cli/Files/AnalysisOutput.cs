@@ -1,4 +1,3 @@
-using PoleField.Cli.Commands;
 using PoleField.Output.Results;
 
 namespace PoleField.Cli.Files;

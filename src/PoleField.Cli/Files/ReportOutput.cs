@@ -1,7 +1,5 @@
 using PoleField.Beam;
-using PoleField.Cli.Case;
 using PoleField.Cli.Text;
-using PoleField.Geometry;
 using PoleField.Output.Figures;
 using PoleField.Output.Pages;
 
