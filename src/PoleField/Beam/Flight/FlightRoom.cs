@@ -38,7 +38,7 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
         }
 
         double margin = KeptClearance * Math.Min(clearance, LargestGrowth * beam.Diagonal);
-        Box room = Grown(magnet, beam, margin);
+        Box room = Grown(solved.Solution, beam, margin);
         try
         {
             BeamField field = FieldOver(solved, room) ?? SolvedOver(magnet, room, settings);
@@ -58,7 +58,7 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
     }
 
     // Each side moves out as far as its own clearance surely allows, again and again.
-    private static Box Grown(Magnet magnet, Box beam, double margin)
+    private static Box Grown(FieldSolution solution, Box beam, double margin)
     {
         Box room = beam;
         double tall = LargestGrowth * Math.Max(beam.Height, beam.Width);
@@ -68,19 +68,30 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
             double moved = 0;
             for (int k = 0; k < MostMoves && moved < most; k++)
             {
-                double step = Math.Min(ClearanceOf(magnet, Side(room, direction, 1e-3 * margin)) - margin, most - moved);
+                double step = Math.Min(ClearanceOf(solution.Magnet, Side(room, direction, 1e-3 * margin)) - margin, most - moved);
+                Point corner = direction.Y + direction.Z > 0 ? room.Max : room.Min;
+                while (step >= 0.02 * margin && !IsMeshed(solution.Mesh.Circle, room.Including(corner + (step * direction))))
+                {
+                    step *= 0.5;
+                }
+
                 if (step < 0.02 * margin)
                 {
                     break;
                 }
 
                 moved += step;
-                room = room.Including((direction.Y + direction.Z > 0 ? room.Max : room.Min) + (step * direction));
+                room = room.Including(corner + (step * direction));
             }
         }
 
         return room;
     }
+
+    // Well inside the meshed circle of open surroundings.
+    private static bool IsMeshed(OpenCircle? circle, Box room) => circle is null
+        || new[] { room.Min, room.Max, new Point(room.Min.Y, room.Max.Z), new Point(room.Max.Y, room.Min.Z) }
+            .All(p => p.DistanceTo(circle.Centre) < 0.85 * circle.Radius);
 
     // A thin rectangle along one side.
     private static Box Side(Box room, Point direction, double thickness) => direction switch
