@@ -77,7 +77,14 @@ public class ToleranceTests
         Sensitivity s = Sensitivity.Of(FixedMeshSolve.Of(magnet, new FixedMeshOptions(Beam, 1)));
         var budget = ToleranceBudget.Of(s, new Tolerances
         {
-            FormSize = 20e-6, FormLength = 6e-3, PlaceY = 20e-6, PlaceZ = 20e-6, Turn = 1e-3, Saturation = 0.005, BeamY = 20e-6, BeamZ = 20e-6,
+            FormSize = 20e-6,
+            FormLength = 6e-3,
+            PlaceY = 20e-6,
+            PlaceZ = 20e-6,
+            Turn = 1e-3,
+            Saturation = 0.005,
+            BeamY = 20e-6,
+            BeamZ = 20e-6,
         });
 
         ToleranceTrial trial = ToleranceTrial.Run(budget, Beam, new TrialOptions(12, 1));
