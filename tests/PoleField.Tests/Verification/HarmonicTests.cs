@@ -2,7 +2,6 @@
 // of divergence and curl, whatever the finite elements did (Cauchy and Riemann).
 using PoleField.Beam;
 using PoleField.Geometry;
-using PoleField.Magnetostatics;
 using Xunit;
 
 namespace PoleField.Tests.Verification;
