@@ -62,4 +62,4 @@ public sealed class VerificationRecord : IDisposable
 }
 
 [CollectionDefinition(VerificationRecord.Collection)]
-public sealed class VerificationRecordSharing : ICollectionFixture<VerificationRecord>;
+public sealed class VerificationGroup : ICollectionFixture<VerificationRecord>;
