@@ -12,6 +12,8 @@ namespace PoleField.Cli.Commands;
 internal static class ToleranceStep
 {
     private const double Loosest = 200e-6; // metres; common practice: what any mill keeps without asking
+    private static readonly double[] Series = [5.0, 2.0, 1.0];
+
     private const double TooFarFromLinear = 0.2; // of the deviation found, from which on a warning says so
 
     public static AnalysisStep Create()
@@ -147,7 +149,7 @@ internal static class ToleranceStep
     private static double Preferred(double size)
     {
         double decade = Math.Pow(10, Math.Floor(Math.Log10(size * 1e6)));
-        return 1e-6 * new[] { 5.0, 2.0, 1.0 }.Select(m => m * decade).First(s => s <= size * 1e6 * (1 + 1e-9));
+        return 1e-6 * Series.Select(m => m * decade).First(s => s <= size * 1e6 * (1 + 1e-9));
     }
 
     private static void Trial(TextWriter writer, Ink ink, ToleranceBudget budget, ToleranceTrial trial)

@@ -1,6 +1,5 @@
 using System.Text;
 using System.Text.RegularExpressions;
-using PoleField.Cli.Case;
 using PoleField.Design;
 using PoleField.Drawing;
 using PoleField.Geometry;
