@@ -89,13 +89,6 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     private static int[] MagneticParts(Magnet magnet) =>
         [.. Enumerable.Range(0, magnet.Roles.Count).Where(part => magnet.Roles[part].Material.IsMagnetic)];
 
-    // The open circle keeps as far from the aperture as the parts do, so that the band of the extraction has room.
-    private Point[] EnclosedPlaces()
-    {
-        Box box = place.Aperture.Outline.Bounds.Inflated(Math.Min(place.Clearance, magnet.Section.Bounds.Diagonal));
-        return [box.Min, box.Max, new Point(box.Min.Y, box.Max.Z), new Point(box.Max.Y, box.Min.Z)];
-    }
-
     // Close enough that no large element is left between two of them.
     private int PointsPerSide()
     {
@@ -110,7 +103,7 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     {
         Report("mesh", step, 0, 0, double.NaN);
         _meshing.Start();
-        Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { OpenDiscSize = _openDiscSize, Enclosed = EnclosedPlaces() }, _cancellation);
+        Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { OpenDiscSize = _openDiscSize, Enclosed = EnclosedPlaces.Around(magnet, place.Aperture) }, _cancellation);
         _meshing.Stop();
         return mesh;
     }

@@ -30,7 +30,7 @@ internal sealed record FixedMeshSolve
         SizeField size = options.Size ?? MeshSizing.For(magnet.Section, aperture.Outline, magnetic, options.Fineness);
         for (int attempt = 0; ; attempt++)
         {
-            Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions(), options.Cancellation);
+            Mesh mesh = Mesher.Mesh(magnet.Section, size, new MeshOptions { Enclosed = EnclosedPlaces.Around(magnet, aperture) }, options.Cancellation);
             FiniteElementSpace space = FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), options.Order);
             FieldProblem problem = FieldProblem.Create(magnet, space);
             if (BandCutOff.Nodal(problem, shape) is { } chi)

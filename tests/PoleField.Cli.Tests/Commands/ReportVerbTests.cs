@@ -9,7 +9,7 @@ namespace PoleField.Cli.Tests.Commands;
 
 public sealed partial class ReportVerbTests
 {
-    private static readonly string[] Pictures = ["field", "field-beam", "gradient-map", "profiles", "saturation"];
+    private static readonly string[] Pictures = ["field", "field-beam", "gradient-map", "profiles", "saturation", "two-wire-deviation", "two-wire-profiles"];
 
     [Fact]
     public async Task ThePageHoldsTheSolveAndItsPicturesAndTheResultFile()
