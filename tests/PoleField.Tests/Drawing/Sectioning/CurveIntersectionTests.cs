@@ -1,6 +1,7 @@
 // Truth: intersections of conics in closed form.
 using CsCheck;
 using PoleField.Geometry;
+using PoleField.Tests.House;
 using Xunit;
 
 namespace PoleField.Tests.Drawing.Sectioning;
@@ -72,7 +73,7 @@ public sealed class CurveIntersectionTests
 
     [Fact]
     public void GeneralSearchAgreesWithTheClosedForm() =>
-        Gen.Select(Gen.Double[-2, 2], Gen.Double[-2, 2], Gen.Double[0.5, 2], Gen.Double[0.5, 5], Gen.Double[0, 6]).Sample((y, z, radius, sweep, start) =>
+        Gen.Select(Gen.Double[-2, 2], Gen.Double[-2, 2], Gen.Double[0.5, 2], Gen.Double[0.5, 5], Gen.Double[0, 6]).SampleFixed((y, z, radius, sweep, start) =>
         {
             // Near-contacts and near-ends are counted by tolerance, not by geometry.
             double apart = new Point(y, z).Length;
