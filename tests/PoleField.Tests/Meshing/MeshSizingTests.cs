@@ -97,7 +97,7 @@ public sealed class MeshSizingTests
         SizeField rule = MeshSizing.For(ProblemP.Section(), ProblemP.Aperture, Iron);
         SizeField fine = MeshSizing.For(ProblemP.Section(), ProblemP.Aperture, Iron, fineness: 0.5);
 
-        // At the lip's corner: 0.5 to the power 6/1.3. At the aperture.s corner: in proportion.
+        // At the lip's corner: 0.5 to the power 6/1.3. At the aperture's corner: in proportion.
         Point lip = new(4.5e-3, 3.79e-3);
         Assert.InRange(fine.At(lip) / rule.At(lip), 0.5 * Math.Pow(0.5, 4.6), 2 * Math.Pow(0.5, 4.6));
         Assert.InRange(fine.At(ProblemP.Aperture.Curves[0].Start) / rule.At(ProblemP.Aperture.Curves[0].Start), 0.45, 0.55);

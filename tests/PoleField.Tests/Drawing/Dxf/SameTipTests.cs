@@ -91,7 +91,8 @@ public sealed class SameTipTests
         "old polyline" => HandDrawn.With(Old).Read(),
         "old polyline without SEQEND" => HandDrawn.With(Old.Replace("; 0 SEQEND", "", StringComparison.Ordinal)).Read(),
         "block" => (HandDrawn.With("0 INSERT; 8 IRON; 2 TIP; 10 0; 20 0; 43 0")
-            with { Blocks = HandDrawn.Block("TIP", Light) }).Read(),
+            with
+        { Blocks = HandDrawn.Block("TIP", Light) }).Read(),
         "nested block, turned back" => (HandDrawn.With("0 INSERT; 8 IRON; 2 OUTER; 10 7; 20 0; 50 90")
             with
         {
@@ -126,7 +127,8 @@ public sealed class SameTipTests
         return parts[0] is "10" or "20" or "11" or "21" or "40"
             ? FormattableString.Invariant($"{parts[0]} {factor * double.Parse(parts[1], CultureInfo.InvariantCulture)}")
             : pair;
-    })))]) with { Header = FormattableString.Invariant($"9 $INSUNITS; 70 {unit}; 9 $MEASUREMENT; 70 1") };
+    })))]) with
+    { Header = FormattableString.Invariant($"9 $INSUNITS; 70 {unit}; 9 $MEASUREMENT; 70 1") };
 
     private static string Blanked(string text)
     {
