@@ -118,27 +118,24 @@ internal sealed record BeamPlace(Aperture Aperture, ApertureShape Shape, Apertur
     {
         double clearance = Beam.Clearance.Of(magnet, aperture);
         Point centre = aperture.Centre;
-        string? problem = null;
-        if (!(clearance > 0.0))
-        {
-            problem = "touches";
-        }
-        else if (SectionPoint.RegionAt(magnet.Section, centre) is int region && Beam.Clearance.IsSolid(magnet, region))
-        {
-            problem = "lies inside";
-        }
-
-        if (problem is null)
+        int region = SectionPoint.RegionAt(magnet.Section, centre);
+        bool inside = Beam.Clearance.IsSolid(magnet, region);
+        bool outside = region == CrossSection.Outside;
+        if (clearance > 0.0 && !inside && !outside)
         {
             var shape = new ApertureShape(aperture);
             return new BeamPlace(aperture, shape, ApertureSamples.Of(aperture, shape), clearance);
         }
 
+        string? layer = inside ? magnet.Section.Parts[magnet.Section.Regions[region].Part] : null;
+        string problem = outside ? "lies outside the model's rim"
+            : layer is null ? "touches or crosses a part of iron, a magnet or a conductor"
+            : $"lies inside the part on layer {layer}";
         throw new InputException([new Finding(
             Severity.Fault,
             "beam-in-part",
             FormattableString.Invariant(
-                $"The beam's aperture around ({1e3 * centre.Y:g6}, {1e3 * centre.Z:g6}) mm {problem} a part of iron, a magnet or a conductor."),
-            "Move or shrink the aperture so that it lies in air.") { At = centre }]);
+                $"The beam's aperture around ({1e3 * centre.Y:g6}, {1e3 * centre.Z:g6}) mm {problem}."),
+            "Move or shrink the aperture so that it lies in air.") { At = centre, Layer = layer }]);
     }
 }

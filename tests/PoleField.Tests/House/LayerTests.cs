@@ -1,5 +1,4 @@
 // Truth: the order of the layers as DEVELOPERS.md states it; a folder may use only folders left of it.
-using System.Runtime.CompilerServices;
 using System.Text.RegularExpressions;
 using Xunit;
 
@@ -17,7 +16,8 @@ public partial class LayerTests
         for (int i = 0; i < Layers.Length; i++)
         {
             string folder = Path.Combine(Root(), "src", "PoleField", Layers[i]);
-            string[] files = Directory.Exists(folder) ? Directory.GetFiles(folder, "*.cs", SearchOption.AllDirectories) : [];
+            string[] files = Directory.GetFiles(folder, "*.cs", SearchOption.AllDirectories);
+            Assert.NotEmpty(files);
             foreach (string file in files)
             {
                 offences.AddRange(Uses(File.ReadAllText(file))
@@ -37,8 +37,19 @@ public partial class LayerTests
         Assert.Contains("Meshing", Uses("Meshing.Mesh mesh;"));
     }
 
-    internal static string Root([CallerFilePath] string here = "") =>
-        Path.GetFullPath(Path.Combine(Path.GetDirectoryName(here)!, "..", "..", ".."));
+    // Upwards from the test's own binaries: paths compiled in are masked in reproducible builds.
+    internal static string Root()
+    {
+        for (string? folder = AppContext.BaseDirectory; folder is not null; folder = Path.GetDirectoryName(folder))
+        {
+            if (File.Exists(Path.Combine(folder, "PoleField.sln")))
+            {
+                return folder;
+            }
+        }
+
+        throw new DirectoryNotFoundException("PoleField.sln is not above the tests' binaries.");
+    }
 
     private static IEnumerable<string> Uses(string source)
     {
@@ -55,9 +66,7 @@ public partial class LayerTests
     private static HashSet<string> TypesOf(string layer)
     {
         string folder = Path.Combine(Root(), "src", "PoleField", layer);
-        return Directory.Exists(folder)
-            ? [.. Directory.GetFiles(folder, "*.cs", SearchOption.AllDirectories).Select(f => Path.GetFileNameWithoutExtension(f))]
-            : [];
+        return [.. Directory.GetFiles(folder, "*.cs", SearchOption.AllDirectories).Select(f => Path.GetFileNameWithoutExtension(f))];
     }
 
     [GeneratedRegex(@"//.*")]

@@ -1,6 +1,7 @@
 // Truth: closed form of two opposite line currents. Round conductors with even current density have exactly that field
 // outside themselves (Ampère's law and superposition).
 using PoleField.Beam;
+using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
 using PoleField.Materials;
@@ -30,6 +31,20 @@ public class TwoWireTests
     }
 
     [Fact]
+    public void TheWholeChainFromADrawingFileKeepsTheAccuracy()
+    {
+        Drawn drawn = Conductors();
+        using var file = new MemoryStream();
+        DxfWriter.Write(drawn.Sketch(), file);
+        file.Position = 0;
+
+        Sketch read = DxfReader.Read(file, "wires.dxf");
+        BeamReport report = MagnetSolver.Solve(drawn.MagnetOf(read), Drawn.Beam(0, 1.2 * A, 3, 0.3)).Report;
+
+        Assert.InRange(Math.Abs((report.Beam.Gradient / Exact.Gradient(report.Beam.At)) - 1), 0, 1e-4);
+    }
+
+    [Fact]
     public void FieldAndGradientAreRightAllOverTheAperture()
     {
         SolvedMagnet solved = MagnetSolver.Solve(Wires(), Drawn.Beam(0, 1.2 * A, 3, 0.3));
@@ -56,10 +71,11 @@ public class TwoWireTests
         }
     }
 
-    private static Magnet Wires() => new Drawn()
+    private static Magnet Wires() => Conductors().Magnet();
+
+    private static Drawn Conductors() => new Drawn()
         .Circle("WIRE RIGHT", A, 0, 1.0)
         .Circle("WIRE LEFT", -A, 0, 1.0)
         .Part("WIRE RIGHT", Material.Air, Current)
-        .Part("WIRE LEFT", Material.Air, -Current)
-        .Magnet();
+        .Part("WIRE LEFT", Material.Air, -Current);
 }
