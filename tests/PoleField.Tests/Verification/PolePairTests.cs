@@ -20,12 +20,12 @@ public class PolePairTests
     [InlineData(1.3, 1.155389, 1.116733)]
     public void FieldAndGradientPerAmpereTurnFollowTheClosedForm(double height, double fieldNumber, double gradientNumber)
     {
-        SolvedMagnet solved = MagnetSolver.Solve(Poles(), Drawn.Beam(0, height * A, 1.5, 0.3));
+        SolvedMagnet solved = MagnetSolver.Solve(Poles(permeability: 1e5), Drawn.Beam(0, height * A, 1.5, 0.3));
 
         double unit = PhysicalConstants.Mu0 * Turns / (A / 1000);
         Assert.Equal(1.0, solved.Report.Beam.Field / (fieldNumber * unit), 5e-3);
         Assert.Equal(1.0, Math.Abs(solved.Report.Beam.Gradient) / (gradientNumber * unit / (A / 1000)), 5e-3);
-        Assert.InRange(solved.Report.Circuit.Efficiency!.Value, 0.999, 1.0001);
+        Assert.InRange(solved.Report.Circuit.Efficiency!.Value, 0.998, 1.0001); // iron at 1e5 takes its share
     }
 
     // Rule for poles of infinite permeability (derived with boundary elements): cutting the groove at tau in bipolar
@@ -50,7 +50,7 @@ public class PolePairTests
         Assert.InRange(ofGradient / ofField, 2, 10);
     }
 
-    internal static Magnet Poles(double beyondHalfCircle = 20)
+    internal static Magnet Poles(double beyondHalfCircle = 20, double permeability = 1e6)
     {
         const double r = 1.25 * A;
         double cut = beyondHalfCircle * Math.PI / 180;
@@ -74,7 +74,7 @@ public class PolePairTests
             .Closed("IRON", window)
             .Rectangle("COIL LEFT", -18, -15, 12, 20)
             .Rectangle("COIL RIGHT", 18, -15, 12, 20)
-            .Linear("IRON", 1e6)
+            .Linear("IRON", permeability)
             .Part("COIL LEFT", Material.Air, Turns)
             .Part("COIL RIGHT", Material.Air, -Turns)
             .Magnet();
