@@ -36,9 +36,6 @@ internal static class FigureStyle
     /// <summary>A curve to compare with.</summary>
     public static Pen Reference { get; } = new(OxyColor.FromRgb(0xc0, 0x6a, 0x12), 1.8, 5, 3);
 
-    /// <summary>A third curve.</summary>
-    public static Pen Third { get; } = new(OxyColor.FromRgb(0x55, 0x55, 0x55), 1.5, 1.2, 2.2);
-
     /// <summary>Outlines of parts.</summary>
     public static Pen Outline { get; } = new(Ink, 1.5);
 

@@ -37,9 +37,6 @@ public sealed class SizeField
     /// <summary>Growth of edge length per length of distance from a source, ≥ 0; 0.35 is usual.</summary>
     public double Growth { get; }
 
-    /// <summary>Number of sources that count.</summary>
-    public int SourceCount => _sources.Length;
-
     /// <summary>The same size everywhere.</summary>
     /// <exception cref="ArgumentException">The size is not positive and finite.</exception>
     public static SizeField Uniform(double size) => FromSources(size, 0, []);

@@ -12,9 +12,6 @@ internal sealed class GainQueue(int vertices)
     /// <summary>The vertex of the largest gain.</summary>
     public int Top => _heap[0];
 
-    /// <summary>Gain of <see cref="Top"/>.</summary>
-    public int TopGain => _gain[_heap[0]];
-
     public void Clear()
     {
         for (int i = 0; i < Count; i++)

@@ -48,22 +48,6 @@ internal sealed class Net
             Pieces[i] = p with { Curve = CurveEnds.Move(p.Curve, Points[p.Start], Points[p.End]) };
         }
     }
-
-    /// <summary>Number of piece ends of one layer at each point.</summary>
-    public int[] EndsAtPoints(int layer)
-    {
-        int[] ends = new int[Points.Count];
-        foreach (Piece p in Pieces)
-        {
-            if (p.Layer == layer)
-            {
-                ends[p.Start]++;
-                ends[p.End]++;
-            }
-        }
-
-        return ends;
-    }
 }
 
 /// <summary>A boundary curve between faces: one or more layers' pieces at the same place.</summary>
