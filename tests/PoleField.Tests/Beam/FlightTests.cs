@@ -45,15 +45,34 @@ public sealed class FlightTests
     }
 
     [Fact]
-    public void TheSeriesIsTheFieldItIsMadeFrom()
+    public void TheTableIsTheFieldItIsMadeFromWithinItsOwnError()
     {
         var wires = new TwoWireField(0.003, default, 20_000);
-        FlightField series = FlightField.Over(new Box(new Point(-0.001, 0.0033), new Point(0.001, 0.005)), wires.At);
-        foreach (Point p in new[] { new Point(-0.001, 0.0033), new Point(0.00037, 0.0041), new Point(0.0009, 0.00499) })
+        var room = new Box(new Point(-0.001, 0.0033), new Point(0.001, 0.005));
+        FlightField table = FlightField.Over(room, wires.At, 2);
+        double field = wires.At(new Point(0, 0.0033)).Field;
+        var random = new Random(5);
+        double worst = 0;
+        for (int k = 0; k < 500; k++)
         {
-            Assert.Equal(1.0, series.At(p).Field / wires.At(p).Field, 1e-8);
-            Assert.Equal(1.0, series.At(p).Gradient / wires.At(p).Gradient, 1e-8);
+            Point p = room.Min + new Point(random.NextDouble() * room.Width, random.NextDouble() * room.Height);
+            worst = Math.Max(worst, Math.Abs(table.At(p).Field - wires.At(p).Field) / field);
+            Assert.Equal(1.0, table.At(p).Gradient / wires.At(p).Gradient, 1e-6);
         }
+
+        Assert.InRange(worst, 0, table.Error);
+        Assert.InRange(table.Error, 1e-16, 1e-6); // of a field as smooth as this
+    }
+
+    [Fact]
+    public void TheTableSaysWhenAFieldIsTooSharpForIt()
+    {
+        // A wire a hair's breadth beside the room: no table of this size can follow.
+        var wires = new TwoWireField(0.001001, default, 20_000);
+
+        FlightField table = FlightField.Over(new Box(new Point(-0.001, -0.001), new Point(0.001, 0.001)), wires.At);
+
+        Assert.True(table.Error > 1e-4);
     }
 
     // Smallest and largest |μ|/μB of the non-stretched states, computed apart from this program.

@@ -13,7 +13,7 @@ public sealed class Flight
     private const int Strips = 15;
     private const int PiecesPerCell = 6;
     private const int EdgeSearch = 12;         // halvings to find the speed at which particles begin to be lost
-    private const double MostUnsettled = 1e-4;
+    private const double LargestTableError = 1e-4;
 
     private readonly FlightSetup _setup;
     private readonly FlightField _field;
@@ -81,7 +81,7 @@ public sealed class Flight
             RoomFrom = _field.Room.Min,
             RoomTo = _field.Room.Max,
             Margin = 0,
-            Findings = _field.Unsettled <= MostUnsettled ? [] : [Rough()],
+            Findings = _field.Error <= LargestTableError ? [] : [Rough()],
         };
     }
 
@@ -94,7 +94,7 @@ public sealed class Flight
     private Finding Rough() => new(
         Severity.Warning,
         "flight-field",
-        FormattableString.Invariant($"The field along the trajectories is known to about {_field.Unsettled:g1} of its size only."),
+        FormattableString.Invariant($"The field along the trajectories is known to about {_field.Error:g1} of its size only."),
         "Give the aperture more clearance, or ask for a finer accuracy.");
 
     private (Point At, double Share)[] SlitPoints()

@@ -42,11 +42,11 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
         try
         {
             BeamField field = FieldOver(solved, room) ?? SolvedOver(magnet, room, settings);
-            return new FlightRoom(FlightField.Over(room, field.At), margin);
+            return new FlightRoom(FlightField.Over(room, field.At, settings.Options.Threads), margin);
         }
         catch (MeshingException e)
         {
-            return new FlightRoom(FlightField.Over(beam, solved.Field.At), clearance) { WhyApertureOnly = e.Message };
+            return new FlightRoom(FlightField.Over(beam, solved.Field.At, settings.Options.Threads), clearance) { WhyApertureOnly = e.Message };
         }
     }
 
