@@ -14,15 +14,21 @@ internal sealed class CaseLoader(Pipeline pipeline)
 {
     private static readonly UTF8Encoding StrictUtf8 = new(false, throwOnInvalidBytes: true);
 
+    private readonly List<InputFile> _inputs = [];
+
     /// <summary>Loads the case at <paramref name="path"/>; faults are in the findings, not thrown.</summary>
-    public LoadedCase Load(string path)
+    /// <param name="path">Case file.</param>
+    /// <param name="changes">Values that take the place of the file's own.</param>
+    /// <param name="cut">False to leave out reading and cutting the sketch: its bytes are only hashed.</param>
+    public LoadedCase Load(string path, IReadOnlyList<CaseChange>? changes = null, bool cut = true)
     {
         var clock = Stopwatch.StartNew();
-        LoadedCase loaded = LoadAll(path);
-        return loaded with { Seconds = clock.Elapsed.TotalSeconds };
+        _inputs.Clear();
+        LoadedCase loaded = LoadAll(path, changes ?? [], cut);
+        return loaded with { Seconds = clock.Elapsed.TotalSeconds, Inputs = [.. _inputs.Distinct()] };
     }
 
-    private LoadedCase LoadAll(string path)
+    private LoadedCase LoadAll(string path, IReadOnlyList<CaseChange> changes, bool cut)
     {
         var findings = new List<Finding>();
         if (Catch(findings, () => ReadFile(path, "case file")) is not { } bytes || Catch(findings, () => Decode(bytes, path)) is not { } text)
@@ -36,9 +42,9 @@ internal sealed class CaseLoader(Pipeline pipeline)
         {
             IsMagnetic = name => builtIn.Get(name).IsMagnetic,
         };
-        CaseReading reading = CaseReader.Read(text, around);
+        CaseReading reading = CaseReader.Read(text, around, changes);
         findings.AddRange(reading.Findings);
-        var loaded = new LoadedCase { Path = path, Findings = findings, CaseSha256 = Sha256(bytes) };
+        var loaded = new LoadedCase { Path = path, Findings = findings, CaseSha256 = Known(Path.GetFileName(path), bytes) };
         if (reading.Case is not { } file)
         {
             return loaded;
@@ -46,18 +52,19 @@ internal sealed class CaseLoader(Pipeline pipeline)
 
         var roles = file.Parts.Select(p => Catch(findings, () => RoleOf(p, folder, builtIn))).ToList();
         loaded = loaded with { Case = file, Roles = [.. roles.OfType<PartRole>()] };
-        return WithSketch(loaded, file, Path.Combine(folder, file.Sketch.File), findings);
+        return WithSketch(loaded, Path.Combine(folder, file.Sketch.File), findings, cut);
     }
 
-    private LoadedCase WithSketch(LoadedCase loaded, CaseFile file, string path, List<Finding> findings)
+    private LoadedCase WithSketch(LoadedCase loaded, string path, List<Finding> findings, bool cut)
     {
+        CaseFile file = loaded.Case!;
         if (Catch(findings, () => ReadFile(path, "sketch")) is not { } bytes)
         {
             return loaded;
         }
 
-        loaded = loaded with { SketchSha256 = Sha256(bytes) };
-        if (Catch(findings, () => pipeline.ReadSketch(new MemoryStream(bytes), file.Sketch.File, file.Sketch.Unit)) is not { } sketch)
+        loaded = loaded with { SketchSha256 = Known(file.Sketch.File, bytes) };
+        if (!cut || Catch(findings, () => pipeline.ReadSketch(new MemoryStream(bytes), file.Sketch.File, file.Sketch.Unit)) is not { } sketch)
         {
             return loaded;
         }
@@ -91,8 +98,7 @@ internal sealed class CaseLoader(Pipeline pipeline)
                     : new Material(named.Name, LinearLaw.Vacuum, "Copper", "definition", "permeability taken as 1");
                 break;
             case CurveFileSubstance curve:
-                string path = Path.Combine(folder, curve.File);
-                material = pipeline.ReadMaterial(new MemoryStream(ReadFile(path, "magnetisation curve")), curve.File);
+                material = pipeline.ReadMaterial(new MemoryStream(ReadCurve(folder, curve.File)), curve.File);
                 break;
             case LinearSubstance linear:
                 material = Linear("linear", linear.RelativePermeability, "constant permeability");
@@ -108,8 +114,29 @@ internal sealed class CaseLoader(Pipeline pipeline)
         return new PartRole(part.Layer, material) { AmpereTurns = part.AmpereTurns ?? 0, Fill = part.Fill, Remanence = remanence };
     }
 
+    private byte[] ReadCurve(string folder, string file)
+    {
+        byte[] bytes = ReadFile(Path.Combine(folder, file), "magnetisation curve");
+        Known(file, bytes);
+        return bytes;
+    }
+
+    private string Known(string file, byte[] bytes)
+    {
+        string sha256 = Convert.ToHexStringLower(SHA256.HashData(bytes));
+        _inputs.Add(new InputFile(file, sha256));
+        return sha256;
+    }
+
     private static Material Linear(string name, double permeability, string description) =>
         new(FormattableString.Invariant($"{name}, mu_r {permeability}"), new LinearLaw(permeability), description, "case file", "as stated");
+
+    /// <summary>All single values of a case file that reads without faults.</summary>
+    public static IReadOnlyList<(IReadOnlyList<string> Keys, TomlNode Node)> ValuesOf(string path)
+    {
+        string name = Path.GetFileName(path);
+        return [.. CaseValues.Of(TomlDocument.Parse(Decode(ReadFile(path, "case file"), path), name, new Faults(name)))];
+    }
 
     /// <summary>A file's bytes.</summary>
     /// <exception cref="InputException">It is not there or cannot be read.</exception>
@@ -150,8 +177,6 @@ internal sealed class CaseLoader(Pipeline pipeline)
             ]);
         }
     }
-
-    private static string Sha256(byte[] bytes) => Convert.ToHexStringLower(SHA256.HashData(bytes));
 
     private static T? Catch<T>(List<Finding> findings, Func<T> step)
         where T : class

@@ -31,6 +31,9 @@ internal sealed record LoadedCase
     /// <summary>SHA-256 of the drawing; empty when it could not be read.</summary>
     public string SketchSha256 { get; init; } = string.Empty;
 
+    /// <summary>Case, sketch and curves that were read.</summary>
+    public IReadOnlyList<InputFile> Inputs { get; init; } = [];
+
     /// <summary>Time it took to load, s.</summary>
     public double Seconds { get; init; }
 
@@ -64,3 +67,8 @@ internal sealed record LoadedCase
         return (Case, magnet, aperture);
     }
 }
+
+/// <summary>A file that was read.</summary>
+/// <param name="Name">Path as the case gives it.</param>
+/// <param name="Sha256">SHA-256 of its bytes, lower-case hexadecimal.</param>
+internal sealed record InputFile(string Name, string Sha256);

@@ -23,10 +23,14 @@ internal static class CaseReader
     // Two micrometres: below any pole's form error, above the rounding of drawing programs.
     private const double DefaultJoin = 2e-6;
 
-    public static CaseReading Read(string text, CaseSurroundings around)
+    /// <summary>Reads a case.</summary>
+    /// <param name="text">Text of the file.</param>
+    /// <param name="around">What it may refer to.</param>
+    /// <param name="changes">Values that take the place of the file's own.</param>
+    public static CaseReading Read(string text, CaseSurroundings around, params IReadOnlyList<CaseChange> changes)
     {
         var faults = new Faults(around.File);
-        TomlTable root = TomlDocument.Parse(text, around.File, faults);
+        TomlTable root = CaseValues.Changed(TomlDocument.Parse(text, around.File, faults), changes);
         CaseFile file = Bind(new TableReader(root, string.Empty, faults), around);
         faults.DropConsequencesOfBrokenSyntax();
         return faults.Any ? new CaseReading(null, faults.Sorted) : new CaseReading(file, []);

@@ -49,6 +49,11 @@ internal sealed class CaseRun(Tool tool, string outDescription)
         return tool.ReportFaults(arguments, loaded) ? null : loaded;
     }
 
+    /// <summary>Accuracy on the command line; null when it names none.</summary>
+    public double? Accuracy(ParseResult arguments) => arguments.GetValue(_accuracy);
+
+    public int Threads(ParseResult arguments) => arguments.GetValue(_threads);
+
     /// <summary>How to solve: the command line goes before the case.</summary>
     public SolveOptions OptionsOf(ParseResult arguments, LoadedCase loaded) => new()
     {
@@ -61,16 +66,20 @@ internal sealed class CaseRun(Tool tool, string outDescription)
         new(tool.Terminal, !Quiet(arguments) && !Json(arguments), options.Accuracy, TimeProvider.System);
 
     /// <summary>Solves a sound case.</summary>
-    public SolvedCase Solve(LoadedCase loaded, SolveOptions options, ProgressLine progress, CancellationToken cancellation)
+    public SolvedCase Solve(LoadedCase loaded, SolveOptions options, ProgressLine progress, CancellationToken cancellation) =>
+        Solve(tool.Pipeline, loaded, new SolveSteps(options, progress.Report, cancellation));
+
+    /// <summary>Solves a sound case apart from any command line.</summary>
+    public static SolvedCase Solve(Pipeline pipeline, LoadedCase loaded, SolveSteps steps)
     {
         var clock = Stopwatch.StartNew();
         (CaseFile file, Magnet magnet, Aperture aperture) = loaded.Ready();
-        SolvedMagnet solved = tool.Pipeline.Solve(magnet, aperture, options, progress.Report, cancellation);
-        cancellation.ThrowIfCancellationRequested();
+        SolvedMagnet solved = pipeline.Solve(magnet, aperture, steps.Options, steps.Progress, steps.Cancellation);
+        steps.Cancellation.ThrowIfCancellationRequested();
 
         // A uniform background never falls off.
         double? reach = magnet.AppliedField == default
-            ? StrayField.Reach(tool.Pipeline.FieldOf(solved), magnet.Section.Bounds, StrayField.ImplantLevel)
+            ? StrayField.Reach(pipeline.FieldOf(solved), magnet.Section.Bounds, StrayField.ImplantLevel)
             : null;
         using var process = Process.GetCurrentProcess();
         return new SolvedCase
@@ -89,16 +98,22 @@ internal sealed class CaseRun(Tool tool, string outDescription)
     /// <summary>Says on the error stream what was asked and not met.</summary>
     public void ReportNotMet(SolvedCase result)
     {
-        foreach (Verdict verdict in result.Verdicts.Where(v => !v.Met))
+        foreach (string missed in NotMet(result))
         {
-            tool.Terminal.Error.WriteLine($"Not met: {verdict.Limit.Name}");
-        }
-
-        SolveRecord record = result.Solved.Record;
-        if (!record.AccuracyMet)
-        {
-            tool.Terminal.Error.WriteLine(
-                $"Not met: accuracy {Numbers.Accuracy(record.AccuracyAsked)}; reached {Numbers.Accuracy(record.AccuracyReached)}");
+            tool.Terminal.Error.WriteLine("Not met: " + missed);
         }
     }
+
+    /// <summary>What was asked and not met.</summary>
+    public static IEnumerable<string> NotMet(SolvedCase result)
+    {
+        SolveRecord record = result.Solved.Record;
+        IEnumerable<string> accuracy = record.AccuracyMet
+            ? []
+            : [$"accuracy {Numbers.Accuracy(record.AccuracyAsked)}; reached {Numbers.Accuracy(record.AccuracyReached)}"];
+        return result.Verdicts.Where(v => !v.Met).Select(v => v.Limit.Name).Concat(accuracy);
+    }
 }
+
+/// <summary>How to solve, and how to follow and stop it.</summary>
+internal sealed record SolveSteps(SolveOptions Options, Action<SolveProgress> Progress, CancellationToken Cancellation);

@@ -57,6 +57,8 @@ internal static class CommandLine
             root.Subcommands.Add(AnalysisVerb.Create(tool, step));
         }
 
+        root.Subcommands.Add(SweepVerb.Create(tool));
+        root.Subcommands.Add(GatherVerb.Create(tool));
         root.Subcommands.Add(SketchVerb.Create(tool));
         root.Subcommands.Add(MaterialsVerb.Create(tool));
         root.Subcommands.Add(CompletionVerb.Create(tool));

@@ -133,7 +133,10 @@ internal sealed class HelpText : SynchronousCommandLineAction
         foreach ((string line, string does) in examples)
         {
             writer.WriteLine($"  {line}");
-            writer.WriteLine($"      {does}");
+            foreach (string part in Wrapped.Lines(does, Width, "      "))
+            {
+                writer.WriteLine(part);
+            }
         }
 
         writer.WriteLine();

@@ -38,8 +38,22 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
     }
 
     /// <summary>Makes a command run <paramref name="run"/> on a thread of its own, with every way to end turned into an exit status.</summary>
-    public void SetRun(Command command, Func<ParseResult, CancellationToken, int> run) =>
-        command.SetAction((arguments, cancellation) => Guard(arguments, token => run(arguments, token), cancellation));
+    /// <param name="command">The command.</param>
+    /// <param name="run">What it does.</param>
+    /// <param name="interrupted">What to say when it was interrupted.</param>
+    public void SetRun(Command command, Func<ParseResult, CancellationToken, int> run, string interrupted = "Interrupted; nothing was written.") =>
+        command.SetAction(async (arguments, cancellation) =>
+        {
+            try
+            {
+                return await Guard(arguments, token => run(arguments, token), cancellation).ConfigureAwait(false);
+            }
+            catch (OperationCanceledException)
+            {
+                terminal.Error.WriteLine(interrupted);
+                return ExitStatus.Interrupted;
+            }
+        });
 
     private async Task<int> Guard(ParseResult arguments, Func<CancellationToken, int> run, CancellationToken cancellation)
     {
@@ -69,13 +83,8 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
             SolverFaults.Write(terminal.Error, e);
             return ExitStatus.NotMet;
         }
-        catch (OperationCanceledException)
-        {
-            terminal.Error.WriteLine("Interrupted; nothing was written.");
-            return ExitStatus.Interrupted;
-        }
 #pragma warning disable CA1031 // The one place where an unforeseen exception becomes a message instead of a stack trace.
-        catch (Exception e)
+        catch (Exception e) when (e is not OperationCanceledException)
 #pragma warning restore CA1031
         {
             return ReportOwnFault(e, arguments.GetValue(Verbose));

@@ -3,6 +3,9 @@ namespace PoleField.Cli.Text;
 /// <summary>Colours text for a terminal, or leaves it alone. Colour only repeats what the words say.</summary>
 internal sealed record Ink(bool On)
 {
+    /// <summary>No colour.</summary>
+    public static Ink None { get; } = new(false);
+
     public string Strong(string text) => Wrap(text, "1");
 
     public string Bad(string text) => Wrap(text, "1;31");

@@ -12,7 +12,10 @@ internal sealed class ProgressLine(Terminal terminal, bool on, double asked, Tim
     private long? _last;
     private int _shown;
 
-    public void Report(SolveProgress progress)
+    public void Report(SolveProgress progress) => Show(() => Words(progress));
+
+    /// <summary>Shows other words.</summary>
+    public void Show(Func<string> words)
     {
         lock (_gate)
         {
@@ -22,7 +25,7 @@ internal sealed class ProgressLine(Terminal terminal, bool on, double asked, Tim
             }
 
             _last = time.GetTimestamp();
-            string text = Cell.Of(Words(progress), terminal.Width - 1);
+            string text = Cell.Of(words(), terminal.Width - 1);
             terminal.Error.Write("\r" + text.PadRight(_shown));
             terminal.Error.Flush();
             _shown = text.Length;
