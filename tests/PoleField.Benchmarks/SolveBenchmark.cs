@@ -8,12 +8,12 @@ namespace PoleField.Benchmarks;
 [MemoryDiagnoser]
 public class SolveBenchmark
 {
-    private readonly Magnet _magnet = ModelMagnet.Create();
+    private readonly Magnet _magnet = ModelProblem.Magnet;
 
     [Params(1, 2)]
     public int Threads { get; set; }
 
     [Benchmark]
     public double Gradient() =>
-        MagnetSolver.Solve(_magnet, ModelMagnet.Aperture, new SolveOptions { Threads = Threads }).Report.Beam.Gradient;
+        MagnetSolver.Solve(_magnet, ModelProblem.Aperture, new SolveOptions { Threads = Threads }).Report.Beam.Gradient;
 }

@@ -1,3 +1,6 @@
+using System.Numerics;
+using System.Runtime.InteropServices;
+
 namespace PoleField.Magnetostatics;
 
 /// <summary>
@@ -29,8 +32,8 @@ internal sealed class Condensation
 
     public Condensation Clone() => new(this);
 
-    /// <summary>Reduces an element's packed lower triangle to its boundary part, in place at its beginning.</summary>
-    public void Reduce(int element, Span<double> packed)
+    /// <summary>Reduces packed lower triangles, a lane an element, to their boundary parts, in place at their beginning.</summary>
+    public void Reduce(ReadOnlySpan<int> elements, Span<Vector<double>> packed)
     {
         int ni = _interior;
         int nb = _boundary;
@@ -39,8 +42,7 @@ internal sealed class Condensation
             return;
         }
 
-        Span<double> inverse = _inverse.AsSpan(element * ni * ni, ni * ni);
-        Span<double> link = _link.AsSpan(element * ni * nb, ni * nb);
+        Span<Vector<double>> inverse = stackalloc Vector<double>[ni * ni];
         for (int i = 0; i < ni; i++)
         {
             int row = RowStart(nb + i);
@@ -52,11 +54,13 @@ internal sealed class Condensation
         }
 
         InvertPositive(inverse, ni);
+        Keep(elements, inverse, _inverse);
+        Span<Vector<double>> link = stackalloc Vector<double>[ni * nb];
         for (int i = 0; i < ni; i++)
         {
             for (int b = 0; b < nb; b++)
             {
-                double sum = 0;
+                Vector<double> sum = default;
                 for (int k = 0; k < ni; k++)
                 {
                     sum += inverse[(i * ni) + k] * packed[RowStart(nb + k) + b];
@@ -66,16 +70,17 @@ internal sealed class Condensation
             }
         }
 
+        Keep(elements, link, _link);
         for (int k = 0; k < ni; k++)
         {
-            ReadOnlySpan<double> inner = packed.Slice(RowStart(nb + k), nb);
+            ReadOnlySpan<Vector<double>> inner = packed.Slice(RowStart(nb + k), nb);
             for (int a = 0; a < nb; a++)
             {
-                double factor = link[(k * nb) + a];
-                int row = RowStart(a);
-                for (int b = 0; b <= a; b++)
+                Vector<double> factor = link[(k * nb) + a];
+                Span<Vector<double>> row = packed.Slice(RowStart(a), a + 1);
+                for (int b = 0; b < row.Length; b++)
                 {
-                    packed[row + b] -= factor * inner[b];
+                    row[b] -= factor * inner[b];
                 }
             }
         }
@@ -123,13 +128,26 @@ internal sealed class Condensation
 
     private static int RowStart(int row) => row * (row + 1) / 2;
 
+    private static void Keep(ReadOnlySpan<int> elements, Span<Vector<double>> lanes, double[] kept)
+    {
+        ReadOnlySpan<double> numbers = MemoryMarshal.Cast<Vector<double>, double>(lanes);
+        for (int lane = 0; lane < elements.Length; lane++)
+        {
+            Span<double> own = kept.AsSpan(elements[lane] * lanes.Length, lanes.Length);
+            for (int i = 0; i < own.Length; i++)
+            {
+                own[i] = numbers[(i * Lanes.Count) + lane];
+            }
+        }
+    }
+
     // Gauss-Jordan without pivoting: the block is symmetric positive definite.
-    private static void InvertPositive(Span<double> m, int n)
+    private static void InvertPositive(Span<Vector<double>> m, int n)
     {
         for (int k = 0; k < n; k++)
         {
-            double pivot = 1.0 / m[(k * n) + k];
-            m[(k * n) + k] = 1;
+            Vector<double> pivot = Vector<double>.One / m[(k * n) + k];
+            m[(k * n) + k] = Vector<double>.One;
             for (int j = 0; j < n; j++)
             {
                 m[(k * n) + j] *= pivot;
@@ -142,8 +160,8 @@ internal sealed class Condensation
                     continue;
                 }
 
-                double factor = m[(i * n) + k];
-                m[(i * n) + k] = 0;
+                Vector<double> factor = m[(i * n) + k];
+                m[(i * n) + k] = default;
                 for (int j = 0; j < n; j++)
                 {
                     m[(i * n) + j] -= factor * m[(k * n) + j];

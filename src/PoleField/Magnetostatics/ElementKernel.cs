@@ -1,235 +1,232 @@
-using PoleField.Geometry;
-using PoleField.Materials;
+using System.Numerics;
 
 namespace PoleField.Magnetostatics;
 
 /// <summary>
-/// One element's energy, residual and tangent. Holds scratch memory: one kernel per thread.
+/// Energy, residual and tangent of a few elements at once, each in a lane of vectors. Holds scratch memory: one kernel per
+/// thread.
 /// </summary>
 internal sealed class ElementKernel
 {
     private const double SmallField = 1e-9; // T; below it the tangent is the law's initial one
 
     private readonly FieldProblem _problem;
-    private readonly PackedTable _fine;
-    private readonly (double[] XiXi, double[] XiEta, double[] EtaEta) _constant;
-    private readonly double[] _local;
+    private readonly StiffnessTable _table;
+    private readonly ElementLanes _lanes;
+    private readonly Vector<double>[] _local;
+    private readonly Vector<double>[] _flux;
+    private readonly Vector<double>[] _gY;
+    private readonly Vector<double>[] _gZ;
+    private readonly Vector<double>[] _b;
+    private readonly LaneStates _states;
 
     public ElementKernel(FieldProblem problem)
+        : this(problem, new StiffnessTable(new ShapeTable(
+            problem.Space.Reference, TriangleQuadrature.Collapsed(problem.Space.Order + 1))))
+    {
+    }
+
+    private ElementKernel(FieldProblem problem, StiffnessTable table)
     {
         _problem = problem;
-        int p = problem.Space.Order;
-        _fine = new PackedTable(new ShapeTable(problem.Space.Reference, TriangleQuadrature.Collapsed(p + 1)));
-        _constant = _fine.Integrated();
-        _local = new double[NodeCount];
-        Packed = new double[_fine.Stride];
-        Residual = new double[NodeCount];
+        _table = table;
+        _lanes = new ElementLanes(problem);
+        int nodes = problem.Space.Reference.NodeCount;
+        _local = new Vector<double>[nodes];
+        _flux = new Vector<double>[table.FluxLength];
+        _gY = new Vector<double>[table.Shapes.Count];
+        _gZ = new Vector<double>[table.Shapes.Count];
+        _b = new Vector<double>[table.Shapes.Count];
+        _states = new LaneStates(table.Shapes.Count);
+        Packed = new Vector<double>[table.PackedLength];
+        Residual = new Vector<double>[nodes];
     }
 
-    private ElementKernel(ElementKernel other)
-    {
-        _problem = other._problem;
-        _fine = other._fine;
-        _constant = other._constant;
-        _local = new double[NodeCount];
-        Packed = new double[_fine.Stride];
-        Residual = new double[NodeCount];
-    }
+    /// <summary>Tangents of the last elements, packed lower triangle, row by row.</summary>
+    public Vector<double>[] Packed { get; }
 
-    /// <summary>Tangent of the last element, packed lower triangle, row by row.</summary>
-    public double[] Packed { get; }
+    /// <summary>∂W/∂A of the last elements, by local node.</summary>
+    public Vector<double>[] Residual { get; }
 
-    /// <summary>∂W/∂A of the last element, by local node.</summary>
-    public double[] Residual { get; }
+    /// <summary>∫ w dS − ∫ J A dS of the last elements, J/m.</summary>
+    public Vector<double> Energy { get; private set; }
 
-    /// <summary>∫ w dS − ∫ J A dS of the last element, J/m.</summary>
-    public double Energy { get; private set; }
-
-    /// <summary>∫ H·B dS of the last element, J/m: the scale of Newton's decrement.</summary>
-    public double FieldProduct { get; private set; }
-
-    private int NodeCount => _problem.Space.Reference.NodeCount;
+    /// <summary>∫ H·B dS of the last elements, J/m: the scale of Newton's decrement.</summary>
+    public Vector<double> FieldProduct { get; private set; }
 
     /// <summary>Another kernel with its own scratch memory.</summary>
-    public ElementKernel Twin() => new(this);
+    public ElementKernel Twin() => new(_problem, _table);
 
-    /// <summary>Evaluates an element at a potential; <paramref name="withTangent"/> fills <see cref="Packed"/>.</summary>
-    /// <param name="element">Element.</param>
+    /// <summary>Evaluates elements at a potential; <paramref name="withTangent"/> fills <see cref="Packed"/>.</summary>
+    /// <param name="elements">At most <see cref="Lanes.Count"/> elements; lanes left over repeat the last.</param>
     /// <param name="potential">A by node, T·m.</param>
     /// <param name="background">A of the background by node, subtracted in the second disc.</param>
     /// <param name="withTangent">Fill <see cref="Packed"/>.</param>
-    public void Evaluate(int element, ReadOnlySpan<double> potential, ReadOnlySpan<double> background, bool withTangent)
+    public void Evaluate(
+        ReadOnlySpan<int> elements, ReadOnlySpan<double> potential, ReadOnlySpan<double> background, bool withTangent)
     {
-        FiniteElementSpace space = _problem.Space;
-        ReadOnlySpan<int> nodes = space.NodesOf(element);
-        bool exterior = space.Mesh.Regions[element] == Meshing.Mesh.Exterior;
-        for (int i = 0; i < nodes.Length; i++)
+        _lanes.Load(elements);
+        _lanes.Gather(potential, background, _local);
+        if (_lanes.AreConstant)
         {
-            _local[i] = potential[nodes[i]] - (exterior && !background.IsEmpty ? background[nodes[i]] : 0.0);
-        }
-
-        ref readonly RegionPhysics physics = ref _problem.PhysicsOf(element);
-        if (physics.IsLinear && !space.IsCurved[element] && physics.RemanentGradient == default)
-        {
-            EvaluateConstant(element, physics);
+            EvaluateConstant();
         }
         else
         {
-            EvaluateByPoints(element, physics, withTangent);
+            EvaluateByPoints(withTangent);
         }
 
-        if (physics.CurrentDensity != 0.0)
+        if (_lanes.HaveCurrent)
         {
-            SubtractCurrent(element, physics.CurrentDensity);
+            SubtractCurrent();
         }
     }
 
-    /// <summary>Fills <see cref="Packed"/> with the tangent of a material given by its reluctivity, whatever the solution.</summary>
-    public void EvaluateLinear(int element, double reluctivity)
+    /// <summary>Fills <see cref="Packed"/> with the tangent of materials of one reluctivity each, whatever the solution.</summary>
+    /// <param name="elements">Elements, as for <see cref="Evaluate"/>.</param>
+    /// <param name="reluctivity">Reluctivity, m/H; null for the laws' initial ones.</param>
+    public void EvaluateLinear(ReadOnlySpan<int> elements, double? reluctivity)
     {
-        Array.Clear(Packed);
-        FiniteElementSpace space = _problem.Space;
-        ShapeTable table = _fine.Shapes;
-        if (!space.IsCurved[element])
+        _lanes.Load(elements);
+        Vector<double> nu = reluctivity is { } given ? new Vector<double>(given) : _lanes.InitialReluctivity;
+        if (_lanes.AreStraight)
         {
-            FillConstant(space.JacobianAt(element, default, default), reluctivity);
+            FillConstant(nu);
             return;
         }
 
-        for (int q = 0; q < table.Count; q++)
+        ShapeTable shapes = _table.Shapes;
+        for (int q = 0; q < shapes.Count; q++)
         {
-            Jacobian j = space.JacobianAt(element, table.XiRow(q), table.EtaRow(q));
-            (double xx, double xe, double ee) = PullTensor(j, reluctivity, 0, default);
-            double w = table.Quadrature.Weights[q];
-            _fine.Accumulate(q, w * xx, w * xe, w * ee, Packed);
+            LaneJacobian j = _lanes.JacobianAt(shapes.XiRow(q), shapes.EtaRow(q));
+            (Vector<double> xx, Vector<double> xe, Vector<double> ee) = j.Pull(new Vector<double>(shapes.Quadrature.Weights[q]) * nu);
+            _table.SetFlux(_flux, q, xx, xe, ee);
         }
+
+        _table.Multiply(_flux, Packed);
     }
 
-    private void EvaluateConstant(int element, in RegionPhysics physics)
+    private void EvaluateConstant()
     {
-        FillConstant(_problem.Space.JacobianAt(element, default, default), physics.Law.InitialReluctivity);
-        MultiplyPacked(Packed, _local, Residual);
-        double product = 0;
+        FillConstant(_lanes.InitialReluctivity);
+        Array.Clear(Residual);
+        int k = 0;
+        Vector<double> product = default;
         for (int i = 0; i < Residual.Length; i++)
         {
-            product += Residual[i] * _local[i];
+            Vector<double> x = _local[i], sum = Residual[i];
+            for (int j = 0; j < i; j++, k++)
+            {
+                sum = Vector.MultiplyAddEstimate(Packed[k], _local[j], sum);
+                Residual[j] = Vector.MultiplyAddEstimate(Packed[k], x, Residual[j]);
+            }
+
+            Residual[i] = Vector.MultiplyAddEstimate(Packed[k++], x, sum);
+        }
+
+        for (int i = 0; i < Residual.Length; i++)
+        {
+            product = Vector.MultiplyAddEstimate(Residual[i], _local[i], product);
         }
 
         FieldProduct = product;
-        Energy = 0.5 * product;
+        Energy = new Vector<double>(0.5) * product;
     }
 
-    private void FillConstant(Jacobian j, double reluctivity)
+    private void FillConstant(Vector<double> reluctivity)
     {
-        (double xx, double xe, double ee) = PullTensor(j, reluctivity, 0, default);
+        (Vector<double> xx, Vector<double> xe, Vector<double> ee) = _lanes.StraightJacobian.Pull(reluctivity);
         for (int k = 0; k < Packed.Length; k++)
         {
-            Packed[k] = (xx * _constant.XiXi[k]) + (xe * _constant.XiEta[k]) + (ee * _constant.EtaEta[k]);
+            Packed[k] = (xx * new Vector<double>(_table.XiXi[k]))
+                + (xe * new Vector<double>(_table.XiEta[k])) + (ee * new Vector<double>(_table.EtaEta[k]));
         }
     }
 
-    private void EvaluateByPoints(int element, in RegionPhysics physics, bool withTangent)
+    private void EvaluateByPoints(bool withTangent)
     {
-        Array.Clear(Packed);
+        FindField();
+        _lanes.At(_b, _states);
         Array.Clear(Residual);
-        FieldProduct = 0;
-        Energy = 0;
-        FiniteElementSpace space = _problem.Space;
-        ShapeTable table = _fine.Shapes;
-        Jacobian j = space.IsCurved[element] ? default : space.JacobianAt(element, default, default);
-        for (int q = 0; q < table.Count; q++)
+        Energy = default;
+        FieldProduct = default;
+        for (int q = 0; q < _table.Shapes.Count; q++)
         {
-            ReadOnlySpan<double> xi = table.XiRow(q);
-            ReadOnlySpan<double> eta = table.EtaRow(q);
-            if (space.IsCurved[element])
-            {
-                j = space.JacobianAt(element, xi, eta);
-            }
+            AddPoint(q, withTangent);
+        }
 
-            double byXi = 0, byEta = 0;
-            for (int i = 0; i < _local.Length; i++)
-            {
-                byXi += _local[i] * xi[i];
-                byEta += _local[i] * eta[i];
-            }
-
-            Point g = j.Gradient(byXi, byEta) - physics.RemanentGradient;
-            double b = g.Length;
-            MagneticState state = physics.Law.At(b);
-            double nu = b > SmallField ? state.FieldStrength / b : physics.Law.InitialReluctivity;
-            double weight = table.Quadrature.Weights[q];
-            double area = weight * j.Determinant;
-            Energy += area * state.Energy;
-            FieldProduct += area * state.FieldStrength * b;
-            (double hXi, double hEta) = j.Pull(nu * g);
-            for (int i = 0; i < Residual.Length; i++)
-            {
-                Residual[i] += weight * ((hXi * xi[i]) + (hEta * eta[i]));
-            }
-
-            if (withTangent)
-            {
-                double excess = b > SmallField ? (state.Slope - nu) / (b * b) : 0.0;
-                (double xx, double xe, double ee) = PullTensor(j, nu, excess, g);
-                _fine.Accumulate(q, weight * xx, weight * xe, weight * ee, Packed);
-            }
+        if (withTangent)
+        {
+            _table.Multiply(_flux, Packed);
         }
     }
 
-    private void SubtractCurrent(int element, double density)
+    // ∇A less the remanence turned by a right angle, and its size, at all points.
+    private void FindField()
     {
-        FiniteElementSpace space = _problem.Space;
-        ShapeTable table = _fine.Shapes;
-        double determinant = space.IsCurved[element] ? 0 : space.JacobianAt(element, default, default).Determinant;
-        for (int q = 0; q < table.Count; q++)
+        ShapeTable shapes = _table.Shapes;
+        for (int q = 0; q < shapes.Count; q++)
         {
-            ReadOnlySpan<double> values = table.ValueRow(q);
-            if (space.IsCurved[element])
+            ReadOnlySpan<double> xi = shapes.XiRow(q), eta = shapes.EtaRow(q);
+            ReadOnlySpan<Vector<double>> local = _local.AsSpan(0, xi.Length);
+            Vector<double> byXi = default, byEta = default;
+            for (int i = 0; i < xi.Length; i++)
             {
-                determinant = space.JacobianAt(element, table.XiRow(q), table.EtaRow(q)).Determinant;
+                byXi = Vector.MultiplyAddEstimate(local[i], new Vector<double>(xi[i]), byXi);
+                byEta = Vector.MultiplyAddEstimate(local[i], new Vector<double>(eta[i]), byEta);
             }
 
-            double w = table.Quadrature.Weights[q] * determinant * density;
+            (Vector<double> y, Vector<double> z) = _lanes.JacobianAt(xi, eta).Gradient(byXi, byEta);
+            y -= _lanes.RemanentY;
+            z -= _lanes.RemanentZ;
+            _gY[q] = y;
+            _gZ[q] = z;
+            _b[q] = Vector.SquareRoot((y * y) + (z * z));
+        }
+    }
+
+    private void AddPoint(int q, bool withTangent)
+    {
+        ShapeTable shapes = _table.Shapes;
+        ReadOnlySpan<double> xi = shapes.XiRow(q), eta = shapes.EtaRow(q);
+        LaneJacobian j = _lanes.JacobianAt(xi, eta);
+        Vector<double> b = _b[q], gY = _gY[q], gZ = _gZ[q], h = _states.FieldStrength[q];
+        Vector<long> small = Vector.LessThan(b, new Vector<double>(SmallField));
+        Vector<double> nu = Vector.ConditionalSelect(small, _lanes.InitialReluctivity, h / b);
+        var weight = new Vector<double>(shapes.Quadrature.Weights[q]);
+        Vector<double> area = weight * j.Determinant;
+        Energy += area * _states.Energy[q];
+        FieldProduct += area * h * b;
+        (Vector<double> hXi, Vector<double> hEta) = j.Pull(weight * nu * gY, weight * nu * gZ);
+        Span<Vector<double>> residual = Residual.AsSpan(0, xi.Length);
+        for (int i = 0; i < xi.Length; i++)
+        {
+            residual[i] = Vector.MultiplyAddEstimate(
+                hXi, new Vector<double>(xi[i]), Vector.MultiplyAddEstimate(hEta, new Vector<double>(eta[i]), residual[i]));
+        }
+
+        if (withTangent)
+        {
+            Vector<double> excess = Vector.ConditionalSelect(small, Vector<double>.Zero, (_states.Slope[q] - nu) / (b * b));
+            (Vector<double> xx, Vector<double> xe, Vector<double> ee) = j.Pull(weight * nu, weight * excess, gY, gZ);
+            _table.SetFlux(_flux, q, xx, xe, ee);
+        }
+    }
+
+    private void SubtractCurrent()
+    {
+        ShapeTable shapes = _table.Shapes;
+        for (int q = 0; q < shapes.Count; q++)
+        {
+            ReadOnlySpan<double> values = shapes.ValueRow(q);
+            Vector<double> w = new Vector<double>(shapes.Quadrature.Weights[q]) * _lanes.CurrentDensity
+                * _lanes.JacobianAt(shapes.XiRow(q), shapes.EtaRow(q)).Determinant;
             for (int i = 0; i < values.Length; i++)
             {
-                Residual[i] -= w * values[i];
-                Energy -= w * values[i] * _local[i];
+                Vector<double> share = w * new Vector<double>(values[i]);
+                Residual[i] -= share;
+                Energy -= share * _local[i];
             }
-        }
-    }
-
-    // det·J⁻¹ D J⁻ᵀ for D = ν I + excess g gᵀ.
-    private static (double XX, double XE, double EE) PullTensor(Jacobian j, double nu, double excess, Point g)
-    {
-        double inverse = 1.0 / j.Determinant;
-        double xx = nu * j.ByEta.SquaredLength;
-        double xe = -nu * j.ByEta.Dot(j.ByXi);
-        double ee = nu * j.ByXi.SquaredLength;
-        if (excess != 0.0)
-        {
-            (double gXi, double gEta) = j.Pull(g);
-            xx += excess * gXi * gXi;
-            xe += excess * gXi * gEta;
-            ee += excess * gEta * gEta;
-        }
-
-        return (inverse * xx, inverse * xe, inverse * ee);
-    }
-
-    private static void MultiplyPacked(ReadOnlySpan<double> packed, ReadOnlySpan<double> x, Span<double> y)
-    {
-        y.Clear();
-        int k = 0;
-        for (int i = 0; i < x.Length; i++)
-        {
-            double sum = 0;
-            for (int j = 0; j < i; j++, k++)
-            {
-                sum += packed[k] * x[j];
-                y[j] += packed[k] * x[i];
-            }
-
-            y[i] += sum + (packed[k++] * x[i]);
         }
     }
 }

@@ -12,12 +12,13 @@ internal sealed class FieldEquations
     private const int FixedNode = -1;
 
     private readonly int[] _unknownOfNode;    // skeleton node → unknown, or FixedNode
-    private readonly ElementSweep _sweep;
-    private readonly int[] _linear;
-    private readonly int[] _nonlinear;
+    private readonly int[] _scatter;           // packed boundary entry k of element e goes to entry [e·packed + k], or nowhere
+    private readonly ElementSweep _linear;
+    private readonly ElementSweep _nonlinear;
     private readonly double[] _backgroundLoad; // by node; empty without background
-    private readonly double[] _linearValues;
+    private readonly double[] _linearEntries;
     private readonly Condensation _linearCondensation;
+    private double[]? _entries;
 
     public FieldEquations(FieldProblem problem, int threads = 1)
     {
@@ -25,14 +26,17 @@ internal sealed class FieldEquations
         Threads = threads;
         _unknownOfNode = NumberUnknowns(problem.Space, out int count);
         UnknownCount = count;
-        (_linear, _nonlinear) = SplitByLaw(problem);
+        (List<int> linear, List<int> nonlinear) = SplitByLaw(problem);
+        IsNonlinear = nonlinear.Count > 0;
         (Background, _backgroundLoad) = RimTerms.Of(problem);
-        Pattern = MakePattern(out int[] scatter);
-        _sweep = new ElementSweep(problem, Background, scatter, threads);
+        Pattern = MakePattern(out _scatter);
+        ElementKernel[] kernels = Kernels(problem, threads);
+        _linear = new ElementSweep(problem, Background, linear, kernels);
+        _nonlinear = new ElementSweep(problem, Background, nonlinear, kernels);
         Analysis = CholeskyAnalysis.Analyse(Pattern, UnknownPlaces());
-        _linearValues = new double[Pattern.EntryCount];
+        _linearEntries = new double[Pattern.EntryCount];
         _linearCondensation = new Condensation(problem.Space);
-        _sweep.AssembleTangent(_linear, null, null, _linearValues, _linearCondensation);
+        _linear.AssembleTangent(null, null, _linearCondensation, _scatter, _linearEntries);
     }
 
     public FieldProblem Problem { get; }
@@ -50,10 +54,13 @@ internal sealed class FieldEquations
     public CholeskyAnalysis Analysis { get; }
 
     /// <summary>True when some element's matrix depends on the solution.</summary>
-    public bool IsNonlinear => _nonlinear.Length > 0;
+    public bool IsNonlinear { get; }
 
     /// <summary>Potential of the uniform background on the rim between the discs, by node; empty without background.</summary>
     public double[] Background { get; }
+
+    /// <summary>Whether a node of the skeleton is an unknown; the others are fixed.</summary>
+    public bool IsUnknown(int node) => _unknownOfNode[node] != FixedNode;
 
     /// <summary>Potential with the given values on fixed nodes and zero elsewhere.</summary>
     public double[] FixedPotential()
@@ -80,8 +87,8 @@ internal sealed class FieldEquations
     public FieldState Evaluate(double[] potential)
     {
         var residual = new double[potential.Length];
-        (double energy, double product) = _sweep.AddResidual(_linear, potential, residual);
-        (double energy2, double product2) = _sweep.AddResidual(_nonlinear, potential, residual);
+        (double energy, double product) = _linear.AddResidual(potential, residual);
+        (double energy2, double product2) = _nonlinear.AddResidual(potential, residual);
         energy += energy2;
         for (int node = 0; node < _backgroundLoad.Length; node++)
         {
@@ -107,28 +114,54 @@ internal sealed class FieldEquations
     public TangentSystem LinearTangent(double relativePermeability) =>
         Factor(null, PhysicalConstants.Nu0 / relativePermeability, null);
 
-    private TangentSystem Factor(double[]? potential, double? reluctivity, TangentSystem? spent)
+    /// <summary>
+    /// The tangent's entries in <see cref="Pattern"/>, and its condensation: at a potential, or with one reluctivity in every
+    /// saturating material. The entries are good until the next call; the memory of <paramref name="spent"/> is used again.
+    /// </summary>
+    public (double[] Entries, Condensation Condensation) Assemble(
+        double[]? potential, double? reluctivity = null, Condensation? spent = null)
     {
-        var values = (double[])_linearValues.Clone();
-        Condensation condensation = _linearCondensation;
-        if (IsNonlinear)
+        if (!IsNonlinear)
         {
-            condensation = _linearCondensation.Clone();
-            _sweep.AssembleTangent(_nonlinear, potential, reluctivity, values, condensation);
+            return (_linearEntries, _linearCondensation);
         }
 
+        _entries ??= new double[_linearEntries.Length];
+        _linearEntries.CopyTo(_entries.AsSpan());
+
+        // What linear elements have there does not change.
+        Condensation condensation = spent ?? _linearCondensation.Clone();
+        _nonlinear.AssembleTangent(potential, reluctivity, condensation, _scatter, _entries);
+        return (_entries, condensation);
+    }
+
+    private TangentSystem Factor(double[]? potential, double? reluctivity, TangentSystem? spent)
+    {
+        (double[] entries, Condensation condensation) = Assemble(potential, reluctivity, spent?.Condensation);
         CholeskyFactor factor;
         if (spent is null)
         {
-            factor = Analysis.Factor(values, Threads);
+            factor = Analysis.Factor(entries, Threads);
         }
         else
         {
             factor = spent.CholeskyFactor;
-            factor.Refactor(values, Threads);
+            factor.Refactor(entries, Threads);
         }
 
         return new TangentSystem(Problem.Space, _unknownOfNode, UnknownCount, condensation, factor);
+    }
+
+    private static ElementKernel[] Kernels(FieldProblem problem, int threads)
+    {
+        var kernels = new ElementKernel[Math.Max(1, threads)];
+        kernels[0] = new ElementKernel(problem);
+        for (int k = 1; k < kernels.Length; k++)
+        {
+            kernels[k] = kernels[0].Twin();
+        }
+
+        return kernels;
     }
 
     private static int[] NumberUnknowns(FiniteElementSpace space, out int count)
@@ -186,7 +219,7 @@ internal sealed class FieldEquations
         }
     }
 
-    private static (int[] Linear, int[] Nonlinear) SplitByLaw(FieldProblem problem)
+    private static (List<int> Linear, List<int> Nonlinear) SplitByLaw(FieldProblem problem)
     {
         var linear = new List<int>();
         var nonlinear = new List<int>();
@@ -195,7 +228,7 @@ internal sealed class FieldEquations
             (problem.PhysicsOf(e).IsLinear ? linear : nonlinear).Add(e);
         }
 
-        return ([.. linear], [.. nonlinear]);
+        return (linear, nonlinear);
     }
 
     private SymmetricPattern MakePattern(out int[] scatter)

@@ -69,33 +69,55 @@ internal sealed class HigherOrderStep
         double[][] adjoints = _tangent.Solve(functionals);
         double[][] low = [.. adjoints.Select(_lift.Down)];
         double[][] lowLifted = [.. low.Select(_lift.Up)];
-        FiniteElementSpace space = Problem.Space;
-        var indicators = new double[functionals.Count][];
-        for (int f = 0; f < indicators.Length; f++)
-        {
-            indicators[f] = new double[space.ElementCount];
-        }
-
-        var kernel = new ElementKernel(Problem);
-        var lowKernel = new ElementKernel(_solution.Problem);
-        for (int e = 0; e < space.ElementCount; e++)
-        {
-            ReadOnlySpan<int> nodes = space.NodesOf(e);
-            ReadOnlySpan<int> lowNodes = _solution.Problem.Space.NodesOf(e);
-            kernel.Evaluate(e, _lifted, _equations.Background, withTangent: true);
-            lowKernel.Evaluate(e, _solution.Potential, _lowBackground, withTangent: false);
-            for (int f = 0; f < indicators.Length; f++)
-            {
-                double consistency = Along(kernel.Residual, nodes, lowLifted[f]) - Along(lowKernel.Residual, lowNodes, low[f]);
-                indicators[f][e] = Math.Abs(Bilinear(kernel.Packed, nodes, adjoints[f], lowLifted[f])) + Math.Abs(consistency);
-            }
-        }
-
+        double[][] indicators = [.. functionals.Select(_ => new double[Problem.Space.ElementCount])];
+        IndicateAll(indicators, adjoints, low, lowLifted);
         return indicators;
     }
 
-    // (φ − Iφ)ᵀ K d of one element.
-    private double Bilinear(double[] packed, ReadOnlySpan<int> nodes, double[] adjoint, double[] interpolant)
+    // An element's share is found by itself: threads change nothing.
+    private void IndicateAll(double[][] indicators, double[][] adjoints, double[][] low, double[][] lowLifted)
+    {
+        FiniteElementSpace space = Problem.Space, lowSpace = _solution.Problem.Space;
+        var kernels = new ElementKernel(Problem);
+        var lowKernels = new ElementKernel(_solution.Problem);
+        int batches = (space.ElementCount + Lanes.Count - 1) / Lanes.Count;
+        Parallel.For(
+            0,
+            batches,
+            new ParallelOptions { MaxDegreeOfParallelism = _equations.Threads },
+            () => (High: kernels.Twin(), Low: lowKernels.Twin(), Elements: new int[Lanes.Count]),
+            (batch, _, scratch) =>
+            {
+                int first = batch * Lanes.Count;
+                Span<int> elements = scratch.Elements.AsSpan(0, Math.Min(Lanes.Count, space.ElementCount - first));
+                for (int lane = 0; lane < elements.Length; lane++)
+                {
+                    elements[lane] = first + lane;
+                }
+
+                scratch.High.Evaluate(elements, _lifted, _equations.Background, withTangent: true);
+                scratch.Low.Evaluate(elements, _solution.Potential, _lowBackground, withTangent: false);
+                for (int lane = 0; lane < elements.Length; lane++)
+                {
+                    int e = first + lane;
+                    ReadOnlySpan<int> nodes = space.NodesOf(e);
+                    ReadOnlySpan<double> packed = Lanes.Numbers(scratch.High.Packed)[lane..];
+                    ReadOnlySpan<double> residual = Lanes.Numbers(scratch.High.Residual)[lane..];
+                    ReadOnlySpan<double> lowResidual = Lanes.Numbers(scratch.Low.Residual)[lane..];
+                    for (int f = 0; f < indicators.Length; f++)
+                    {
+                        double consistency = Along(residual, nodes, lowLifted[f]) - Along(lowResidual, lowSpace.NodesOf(e), low[f]);
+                        indicators[f][e] = Math.Abs(Bilinear(packed, nodes, adjoints[f], lowLifted[f])) + Math.Abs(consistency);
+                    }
+                }
+
+                return scratch;
+            },
+            _ => { });
+    }
+
+    // (φ − Iφ)ᵀ K d of one element, whose numbers are a lane.
+    private double Bilinear(ReadOnlySpan<double> packed, ReadOnlySpan<int> nodes, double[] adjoint, double[] interpolant)
     {
         double sum = 0;
         int k = 0;
@@ -103,24 +125,25 @@ internal sealed class HigherOrderStep
         {
             double beyond = adjoint[nodes[i]] - interpolant[nodes[i]];
             double correction = _correction[nodes[i]];
-            for (int j = 0; j < i; j++, k++)
+            for (int j = 0; j < i; j++, k += Lanes.Count)
             {
                 sum += packed[k] * ((beyond * _correction[nodes[j]])
                     + ((adjoint[nodes[j]] - interpolant[nodes[j]]) * correction));
             }
 
-            sum += packed[k++] * beyond * correction;
+            sum += packed[k] * beyond * correction;
+            k += Lanes.Count;
         }
 
         return sum;
     }
 
-    private static double Along(double[] residual, ReadOnlySpan<int> nodes, double[] function)
+    private static double Along(ReadOnlySpan<double> residual, ReadOnlySpan<int> nodes, double[] function)
     {
         double sum = 0;
         for (int i = 0; i < nodes.Length; i++)
         {
-            sum += residual[i] * function[nodes[i]];
+            sum += residual[i * Lanes.Count] * function[nodes[i]];
         }
 
         return sum;

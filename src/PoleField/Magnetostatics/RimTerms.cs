@@ -116,6 +116,7 @@ internal static class RimTerms
         FiniteElementSpace space = problem.Space;
         var load = new double[space.NodeCount];
         var kernel = new ElementKernel(problem);
+        var packed = new double[kernel.Packed.Length];
         for (int e = 0; e < space.ElementCount; e++)
         {
             ReadOnlySpan<int> nodes = space.NodesOf(e);
@@ -124,16 +125,17 @@ internal static class RimTerms
                 continue;
             }
 
-            kernel.EvaluateLinear(e, PhysicalConstants.Nu0);
+            kernel.EvaluateLinear([e], PhysicalConstants.Nu0);
+            Lanes.CopyLane(kernel.Packed, 0, packed);
             int k = 0;
             for (int i = 0; i < nodes.Length; i++)
             {
                 for (int j = 0; j <= i; j++, k++)
                 {
-                    load[nodes[i]] += kernel.Packed[k] * problem.BackgroundPotential(space.Places[nodes[j]]);
+                    load[nodes[i]] += packed[k] * problem.BackgroundPotential(space.Places[nodes[j]]);
                     if (j < i)
                     {
-                        load[nodes[j]] += kernel.Packed[k] * problem.BackgroundPotential(space.Places[nodes[i]]);
+                        load[nodes[j]] += packed[k] * problem.BackgroundPotential(space.Places[nodes[i]]);
                     }
                 }
             }

@@ -8,7 +8,6 @@ internal sealed class TangentSystem
     private readonly FiniteElementSpace _space;
     private readonly int[] _unknownOfNode;
     private readonly int _unknowns;
-    private readonly Condensation _condensation;
 
     public TangentSystem(
         FiniteElementSpace space, int[] unknownOfNode, int unknowns, Condensation condensation, CholeskyFactor factor)
@@ -16,12 +15,15 @@ internal sealed class TangentSystem
         _space = space;
         _unknownOfNode = unknownOfNode;
         _unknowns = unknowns;
-        _condensation = condensation;
+        Condensation = condensation;
         CholeskyFactor = factor;
     }
 
     /// <summary>The factor; its memory may be used again when this system is no longer needed.</summary>
     internal CholeskyFactor CholeskyFactor { get; }
+
+    /// <summary>The condensation, whose memory too.</summary>
+    internal Condensation Condensation { get; }
 
     /// <summary>Solution by node (zero on fixed nodes) for a right side by node.</summary>
     public double[] Solve(double[] rightSide) => Solve([rightSide])[0];
@@ -35,7 +37,7 @@ internal sealed class TangentSystem
             double[] skeleton = rightSides[k].AsSpan(0, _space.SkeletonCount).ToArray();
             for (int e = 0; e < _space.ElementCount; e++)
             {
-                _condensation.ReduceRightSide(e, _space.NodesOf(e), rightSides[k], skeleton);
+                Condensation.ReduceRightSide(e, _space.NodesOf(e), rightSides[k], skeleton);
             }
 
             for (int node = 0; node < skeleton.Length; node++)
@@ -70,7 +72,7 @@ internal sealed class TangentSystem
 
         for (int e = 0; e < _space.ElementCount; e++)
         {
-            _condensation.Recover(e, _space.NodesOf(e), rightSide, solution);
+            Condensation.Recover(e, _space.NodesOf(e), rightSide, solution);
         }
 
         return solution;

@@ -121,6 +121,15 @@ public sealed class BhCurve : MagneticLaw
         return _pieces[low].At(b);
     }
 
+    // The loop of the base class, but nothing in it is called through a table.
+    internal override void At(ReadOnlySpan<double> b, Span<double> h, Span<double> slope, Span<double> energy)
+    {
+        for (int i = 0; i < b.Length; i++)
+        {
+            (h[i], slope[i], energy[i]) = At(b[i]);
+        }
+    }
+
     /// <inheritdoc/>
     public override double FluxDensityAt(double h)
     {

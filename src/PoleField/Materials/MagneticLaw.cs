@@ -27,6 +27,15 @@ public abstract class MagneticLaw
     /// <summary>Values at flux density <paramref name="b"/> ≥ 0, T.</summary>
     public abstract MagneticState At(double b);
 
+    /// <summary>Values at many flux densities at once: H, A/m, dH/dB, m/H, and the energy density, J/m³.</summary>
+    internal virtual void At(ReadOnlySpan<double> b, Span<double> h, Span<double> slope, Span<double> energy)
+    {
+        for (int i = 0; i < b.Length; i++)
+        {
+            (h[i], slope[i], energy[i]) = At(b[i]);
+        }
+    }
+
     /// <summary>The inverse: B, T, at field strength <paramref name="h"/> ≥ 0, A/m.</summary>
     public virtual double FluxDensityAt(double h)
     {

@@ -81,12 +81,12 @@ public sealed class SaturationTail
     // Polarisation gained since the start; written so that nothing cancels near the join.
     private double Gain(double u) => MissingPolarisation * u * (u + 2) / ((1 + u) * (1 + u));
 
-    // B − Bn is an increasing concave function of u = s − 1, so Newton's iterates from u = 0 rise monotonically to the
-    // root; the loop ends when rounding stops the rise.
+    // B − Bn is an increasing concave function of u = s − 1, so Newton's iterates from below rise monotonically to the root;
+    // the loop ends when rounding stops the rise. No more than ΔJ is gained, hence the start.
     private double Parameter(double beyond)
     {
-        double u = 0;
-        double next = 0;
+        double next = Math.Max(0, (beyond - MissingPolarisation) / (2 * Mu0 * FieldScale));
+        double u;
         do
         {
             u = next;

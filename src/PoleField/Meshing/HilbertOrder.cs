@@ -5,7 +5,7 @@ namespace PoleField.Meshing;
 /// <summary>Order of places along Hilbert's curve: neighbours in the order are neighbours in the plane, so walks stay short.</summary>
 internal static class HilbertOrder
 {
-    /// <summary>Indices of the places in order; ties by index.</summary>
+    /// <summary>Indices of the places in order.</summary>
     public static int[] Of(ReadOnlySpan<Point> places)
     {
         Box box = Box.Around(places);
@@ -22,8 +22,22 @@ internal static class HilbertOrder
             order[i] = i;
         }
 
-        Array.Sort(order, (a, b) => keys[a] != keys[b] ? keys[a].CompareTo(keys[b]) : a.CompareTo(b));
+        Array.Sort(keys, order);
         return order;
+    }
+
+    /// <summary>Triangles in the order of their middles.</summary>
+    public static int[] OfTriangles(Triangulation sheet)
+    {
+        var middles = new Point[sheet.TriangleCount];
+        for (int t = 0; t < middles.Length; t++)
+        {
+            int h = 3 * t;
+            middles[t] = (1.0 / 3)
+                * (sheet.Place(sheet.Origin(h)) + sheet.Place(sheet.Origin(h + 1)) + sheet.Place(sheet.Origin(h + 2)));
+        }
+
+        return Of(middles);
     }
 
     // Distance along the curve; the quadrant's turn is applied on the way down (Butz 1971).

@@ -54,7 +54,8 @@ internal sealed partial class Refinement
             r._doubtfulPieces.Add(s);
         }
 
-        foreach (int t in r.InOrder())
+        // First in, first out then keeps neighbours together in memory and in time.
+        foreach (int t in HilbertOrder.OfTriangles(r._triangulation))
         {
             r._triangles.Add(t);
         }
@@ -93,19 +94,6 @@ internal sealed partial class Refinement
                 SplitTriangle(triangle);
             }
         }
-    }
-
-    // Triangles along Hilbert's curve: first in, first out then keeps neighbours together in memory and in time.
-    private int[] InOrder()
-    {
-        Point[] places = new Point[_triangulation.TriangleCount];
-        for (int t = 0; t < places.Length; t++)
-        {
-            places[t] = (1.0 / 3) * (_triangulation.Place(_triangulation.Origin(3 * t))
-                + _triangulation.Place(_triangulation.Origin((3 * t) + 1)) + _triangulation.Place(_triangulation.Origin((3 * t) + 2)));
-        }
-
-        return HilbertOrder.Of(places);
     }
 
     private void SplitTriangle(int t)
