@@ -10,6 +10,9 @@ switch (args)
     case ["--whole", string unknowns]:
         WholeRuns.Print(Console.Out, double.Parse(unknowns, CultureInfo.InvariantCulture));
         return 0;
+    case ["--drawings"]:
+        DrawingRuns.Print(Console.Out);
+        return 0;
     case ["--export", string folder]:
         SystemExport.Write(folder);
         return 0;

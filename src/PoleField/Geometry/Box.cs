@@ -43,7 +43,9 @@ public readonly record struct Box(Point Min, Point Max)
         new Point(Math.Max(Max.Y, p.Y), Math.Max(Max.Z, p.Z)));
 
     /// <summary>Smallest box around this one and another.</summary>
-    public Box Including(Box other) => other.IsEmpty ? this : Including(other.Min).Including(other.Max);
+    public Box Including(Box other) => new(
+        new Point(Math.Min(Min.Y, other.Min.Y), Math.Min(Min.Z, other.Min.Z)),
+        new Point(Math.Max(Max.Y, other.Max.Y), Math.Max(Max.Z, other.Max.Z)));
 
     /// <summary>The box grown on all sides.</summary>
     public Box Inflated(double margin) => new(Min - new Point(margin, margin), Max + new Point(margin, margin));

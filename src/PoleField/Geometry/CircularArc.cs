@@ -20,7 +20,8 @@ public sealed record CircularArc : Curve
     {
     }
 
-    private CircularArc(Point centre, double radius, double startAngle, double sweep, Point? start, Point? end)
+    /// <summary>Arc with ends that lie on it to rounding; null ends are computed.</summary>
+    internal CircularArc(Point centre, double radius, double startAngle, double sweep, Point? start, Point? end)
     {
         if (!centre.IsFinite || !(radius > 0.0) || !double.IsFinite(radius) || !double.IsFinite(startAngle)
             || !(Math.Abs(sweep) > 0.0) || !(Math.Abs(sweep) <= Math.Tau * (1 + 1e-14)))

@@ -27,7 +27,7 @@ public sealed record Line : Curve
     public override double Length => Start.DistanceTo(End);
 
     /// <inheritdoc/>
-    public override Box Bounds => Box.Around(Start, End);
+    public override Box Bounds => new Box(Start, Start).Including(End);
 
     /// <inheritdoc/>
     public override double AreaTerm(Point origin) => 0.5 * (Start - origin).Cross(End - origin);

@@ -123,24 +123,23 @@ internal sealed class Polygonisation
     private SortedDictionary<int, double> FindConflicts()
     {
         SortedDictionary<int, double> splits = [];
-        BoxTree tree = new([.. _spans.Select(s => s.Hull)]);
         for (int i = 0; i < _spans.Count; i++)
         {
             if (_spans[i].Turn > (1 + 1e-6) * _turn)
             {
                 splits[i] = _spans[i].Middle;
             }
+        }
 
-            int mine = i;
+        foreach ((int i, int j) in new BoxTree([.. _spans.Select(s => s.Hull)]).Pairs(0))
+        {
             if (!_spans[i].IsStraight)
             {
-                tree.ForEachOverlap(_spans[i].Hull, j =>
-                {
-                    if (j != mine && (_spans[j].IsStraight || j > mine))
-                    {
-                        Compare(mine, j, splits);
-                    }
-                });
+                Compare(i, j, splits);
+            }
+            else if (!_spans[j].IsStraight)
+            {
+                Compare(j, i, splits);
             }
         }
 

@@ -32,7 +32,7 @@ internal static class DxfShapes
                 "LWPOLYLINE" => DxfPolyline.Light(record, frame),
                 _ => DxfSplines.Make(record, limits),
             };
-            return shape with { Height = frame.IsMirrored ? -shape.Height : shape.Height };
+            return frame.IsMirrored && shape.Height != 0.0 ? shape with { Height = -shape.Height } : shape;
         }
         catch (ArgumentException e)
         {
@@ -44,8 +44,9 @@ internal static class DxfShapes
     }
 
     /// <summary>A shape of an entity with its layer, marks and place.</summary>
-    public static DxfShape With(DxfRecord record, IReadOnlyList<Curve> curves) => new(record.Kind, record.Place, curves)
+    public static DxfShape With(DxfRecord record, IReadOnlyList<Curve> curves, double height = 0) => new(record.Kind, record.Place, curves)
     {
+        Height = height,
         LineType = record.LineType,
         IsInvisible = record.IsInvisible,
         IsOnPaper = record.IsOnPaper,
@@ -75,7 +76,7 @@ internal static class DxfShapes
             return With(record, []) with { Problem = Climbs(record, low, high) };
         }
 
-        return start == end ? Dropped(record) : With(record, [new Line(start, end)]) with { Height = low };
+        return start == end ? Dropped(record) : With(record, [new Line(start, end)], low);
     }
 
     private static DxfShape Circle(DxfRecord record, DxfFrame frame)
@@ -84,7 +85,7 @@ internal static class DxfShapes
         double radius = record.Required(40);
         return radius == 0.0
             ? Dropped(record)
-            : With(record, [frame.Place(new CircularArc(centre, radius, 0, Math.Tau))]) with { Height = record.Real(30, 0) };
+            : With(record, [frame.Place(new CircularArc(centre, radius, 0, Math.Tau))], record.Real(30, 0));
     }
 
     private static DxfShape Arc(DxfRecord record, DxfFrame frame)
@@ -100,13 +101,10 @@ internal static class DxfShapes
         }
 
         double sweep = FullTurn(turn * (Math.PI / 180)) ? Math.Tau : Positive(turn, 360) * (Math.PI / 180);
-        var arc = new CircularArc(centre, radius, from * (Math.PI / 180), sweep);
-        if (!arc.IsFullCircle)
-        {
-            arc = arc.WithEnds(OnCircle(centre, radius, from), OnCircle(centre, radius, to));
-        }
-
-        return With(record, [frame.Place(arc)]) with { Height = record.Real(30, 0) };
+        Point start = OnCircle(centre, radius, from);
+        Point end = sweep == Math.Tau ? start : OnCircle(centre, radius, to);
+        var arc = new CircularArc(centre, radius, from * (Math.PI / 180), sweep, start, end);
+        return With(record, [frame.Place(arc)], record.Real(30, 0));
     }
 
     private static DxfShape Ellipse(DxfRecord record, DxfFrame frame)
@@ -134,7 +132,7 @@ internal static class DxfShapes
             : new EllipticArc(centre, major, ratio * major.Length, sense * from, sweep);
 
         // Centres of ellipses are given in drawing coordinates already, heights too.
-        return With(record, [curve]) with { Height = sense * record.Real(30, 0) };
+        return With(record, [curve], sense * record.Real(30, 0));
     }
 
     private static DxfShape Dropped(DxfRecord record) => With(record, []) with { Dropped = 1 };

@@ -33,9 +33,11 @@ internal sealed partial class DxfText
     }
 
     /// <summary>The text of some bytes.</summary>
-    public string Decode(ReadOnlySpan<byte> bytes)
+    /// <param name="bytes">The bytes.</param>
+    /// <param name="mayRepeat">True for names, which come again and again and are kept.</param>
+    public string Decode(ReadOnlySpan<byte> bytes, bool mayRepeat = true)
     {
-        if (bytes.Length <= LongestKept && Ascii.IsValid(bytes))
+        if (mayRepeat && bytes.Length <= LongestKept && Ascii.IsValid(bytes))
         {
             Span<char> text = stackalloc char[bytes.Length];
             Encoding.ASCII.GetChars(bytes, text);

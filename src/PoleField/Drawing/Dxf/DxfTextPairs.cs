@@ -10,13 +10,15 @@ internal sealed class DxfTextPairs(DxfBytes bytes, DxfReport report, DxfLimits l
     private const byte LineFeed = (byte)'\n';
     private const int LowestCode = -5;
     private const int HighestCode = 1071;
+    private const int HandleCode = 5;
 
     private int _lines;
     private int _valueLength;
     private int _valueEnd;
+    private string? _text; // the value, once somebody asked for it
 
     /// <inheritdoc/>
-    public override string Text => Texts.Decode(Value.Trim(" \t"u8));
+    public override string Text => _text ??= Texts.Decode(Trimmed(Value), mayRepeat: Code != HandleCode);
 
     /// <inheritdoc/>
     public override string Where => FormattableString.Invariant($" after line {_lines}");
@@ -26,13 +28,13 @@ internal sealed class DxfTextPairs(DxfBytes bytes, DxfReport report, DxfLimits l
 
     /// <inheritdoc/>
     public override bool TryReal(out double value) =>
-        double.TryParse(Value.Trim(" \t"u8), NumberStyles.AllowLeadingSign | NumberStyles.AllowDecimalPoint | NumberStyles.AllowExponent, CultureInfo.InvariantCulture, out value)
+        double.TryParse(Trimmed(Value), NumberStyles.AllowLeadingSign | NumberStyles.AllowDecimalPoint | NumberStyles.AllowExponent, CultureInfo.InvariantCulture, out value)
         && double.IsFinite(value);
 
     /// <inheritdoc/>
     public override bool TryInteger(out long value)
     {
-        ReadOnlySpan<byte> text = Value.Trim(" \t"u8);
+        ReadOnlySpan<byte> text = Trimmed(Value);
         return Utf8Parser.TryParse(text, out value, out int used) && used == text.Length;
     }
 
@@ -43,6 +45,7 @@ internal sealed class DxfTextPairs(DxfBytes bytes, DxfReport report, DxfLimits l
         {
             bytes.Skip(_valueEnd);
             _valueEnd = 0;
+            _text = null;
             if (!bytes.Need(1))
             {
                 return false;
@@ -66,7 +69,7 @@ internal sealed class DxfTextPairs(DxfBytes bytes, DxfReport report, DxfLimits l
 
     private void ReadCode(ReadOnlySpan<byte> line)
     {
-        ReadOnlySpan<byte> text = line.Trim(" \t"u8);
+        ReadOnlySpan<byte> text = Trimmed(line);
         bool number = Utf8Parser.TryParse(text, out int code, out int used) && used == text.Length;
         if (!number || code < LowestCode || code > HighestCode)
         {
@@ -78,6 +81,22 @@ internal sealed class DxfTextPairs(DxfBytes bytes, DxfReport report, DxfLimits l
         }
 
         Code = code;
+    }
+
+    private static ReadOnlySpan<byte> Trimmed(ReadOnlySpan<byte> text)
+    {
+        int from = 0, to = text.Length;
+        while (from < to && text[from] is (byte)' ' or (byte)'\t')
+        {
+            from++;
+        }
+
+        while (from < to && text[to - 1] is (byte)' ' or (byte)'\t')
+        {
+            to--;
+        }
+
+        return text[from..to];
     }
 
     // Length of the line ahead and where the next one begins. Ends of line: LF, CR LF, CR, CR CR LF.
@@ -131,11 +150,7 @@ internal sealed class DxfTextPairs(DxfBytes bytes, DxfReport report, DxfLimits l
         }
 
         bytes.Need(at + 3);
-        return bytes.Ahead[(at + 1)..] switch
-        {
-            [LineFeed, ..] => at + 2,
-            [CarriageReturn, LineFeed, ..] => at + 3,
-            _ => at + 1,
-        };
+        ReadOnlySpan<byte> after = bytes.Ahead[(at + 1)..];
+        return after.StartsWith([LineFeed]) ? at + 2 : after.StartsWith([CarriageReturn, LineFeed]) ? at + 3 : at + 1;
     }
 }

@@ -56,22 +56,15 @@ public static class CrossSectionCheck
     private static void CheckMeetings(CrossSection s, List<string> faults)
     {
         double tolerance = Rounding * s.Bounds.Diagonal;
-        BoxIndex index = new([.. s.Edges.Select(e => e.Curve.Bounds)]);
-        List<int> near = [];
-        for (int i = 0; i < s.Edges.Count; i++)
+        foreach ((int i, int j) in new BoxTree([.. s.Edges.Select(e => e.Curve.Bounds)]).Pairs(0))
         {
-            near.Clear();
-            index.FindOverlaps(s.Edges[i].Curve.Bounds, near);
-            foreach (int j in near.Where(j => j > i))
+            foreach ((double t, _) in CurveIntersection.Find(s.Edges[i].Curve, s.Edges[j].Curve, 0.01 * tolerance))
             {
-                foreach ((double t, _) in CurveIntersection.Find(s.Edges[i].Curve, s.Edges[j].Curve, 0.01 * tolerance))
+                Point p = s.Edges[i].Curve.At(t);
+                bool common = Common(s.Edges[i], s.Edges[j]).Any(v => s.Vertices[v].DistanceTo(p) <= 100 * tolerance);
+                if (!common)
                 {
-                    Point p = s.Edges[i].Curve.At(t);
-                    bool common = Common(s.Edges[i], s.Edges[j]).Any(v => s.Vertices[v].DistanceTo(p) <= 100 * tolerance);
-                    if (!common)
-                    {
-                        faults.Add(FormattableString.Invariant($"edges {i} and {j} meet at ({p.Y:g9}, {p.Z:g9}) m, which is no common end"));
-                    }
+                    faults.Add(FormattableString.Invariant($"edges {i} and {j} meet at ({p.Y:g9}, {p.Z:g9}) m, which is no common end"));
                 }
             }
         }

@@ -47,7 +47,7 @@ internal static class CurveEnds
         {
             Line => new Line(start, end),
             CircularArc a => new CircularArc(
-                new Point(Scaled(a.Centre.Y), Scaled(a.Centre.Z)), Scaled(a.Radius), a.StartAngle, a.Sweep).WithEnds(start, end),
+                new Point(Scaled(a.Centre.Y), Scaled(a.Centre.Z)), Scaled(a.Radius), a.StartAngle, a.Sweep, start, end),
             _ => Pin(curve.Transformed(Affine.Scaling(divides ? 1 / perMetre : metres)), start, end),
         };
     }
@@ -56,8 +56,8 @@ internal static class CurveEnds
     public static Curve Mirrored(Curve curve) => curve switch
     {
         Line l => new Line(Mirrored(l.Start), Mirrored(l.End)),
-        CircularArc a => new CircularArc(Mirrored(a.Centre), a.Radius, Math.PI - a.StartAngle, -a.Sweep)
-            .WithEnds(Mirrored(a.Start), Mirrored(a.End)),
+        CircularArc a => new CircularArc(
+            Mirrored(a.Centre), a.Radius, Math.PI - a.StartAngle, -a.Sweep, Mirrored(a.Start), Mirrored(a.End)),
         _ => Pin(curve.Transformed(Affine.MirrorInZAxis), Mirrored(curve.Start), Mirrored(curve.End)),
     };
 

@@ -56,7 +56,7 @@ internal sealed class EndJoining
 
     private void JoinEqualEnds()
     {
-        PointGrid grid = new(_reach.Exact);
+        PointGrid grid = new(_reach.Exact, _moved.Length);
         List<int> near = [];
         for (int end = 0; end < _moved.Length; end++)
         {
@@ -94,7 +94,7 @@ internal sealed class EndJoining
 
         List<int> loose = [.. Enumerable.Range(0, sizes.Length).Where(e => sizes[_sets.Find(e)] == 1)];
         const double clear = 3; // the second nearest end must be this much farther than the nearest
-        PointGrid grid = new(clear * _reach.Join);
+        PointGrid grid = new(clear * _reach.Join, loose.Count);
         loose.ForEach(e => grid.Add(End(e), e));
         Dictionary<int, int> nearest = [];
         HashSet<int> told = [];
@@ -155,7 +155,7 @@ internal sealed class EndJoining
     // Corners of different layers within reach; of one layer only within the fine reach, since short edges may be meant.
     private void JoinTouchingParts()
     {
-        PointGrid grid = new(_reach.Join);
+        PointGrid grid = new(_reach.Join, _curves.Count);
         List<(double Distance, int First, int Second)> pairs = [];
         List<int> near = [];
         for (int end = 0; end < _moved.Length; end++)

@@ -7,6 +7,8 @@ internal sealed class FaceNesting
 {
     private readonly PlanarMap _map;
     private readonly List<PlanarMap.Cycle> _cycles;
+    private readonly Box[] _bounds;     // of each edge
+    private readonly double _left;      // where everything ends towards −y
     private readonly int[] _cycleOfHalf;
     private readonly int[] _component;  // of each edge
     private readonly int[] _outer;      // outer cycle of each component (indexed by its first edge), −1 elsewhere
@@ -15,6 +17,8 @@ internal sealed class FaceNesting
     private FaceNesting(PlanarMap map, List<PlanarMap.Cycle> cycles)
     {
         (_map, _cycles) = (map, cycles);
+        _bounds = [.. map.Edges.Select(e => e.Curve.Bounds)];
+        _left = _bounds.Select(b => b.Min.Y).DefaultIfEmpty().Min();
         _cycleOfHalf = new int[2 * map.Edges.Count];
         for (int c = 0; c < cycles.Count; c++)
         {
@@ -47,7 +51,7 @@ internal sealed class FaceNesting
         Array.Fill(edgeAt, -1);
         for (int e = 0; e < map.Edges.Count; e++)
         {
-            foreach (int v in new[] { map.Edges[e].Start, map.Edges[e].End })
+            foreach (int v in (ReadOnlySpan<int>)[map.Edges[e].Start, map.Edges[e].End])
             {
                 if (edgeAt[v] < 0)
                 {
@@ -87,13 +91,17 @@ internal sealed class FaceNesting
 
     private void PlaceOuterCycles()
     {
-        BoxIndex index = new([.. _map.Edges.Select(e => e.Curve.Bounds)]);
-        int[] tallest = TallestEdges();
+        BoxTree index = new(_bounds);
+        int[] order = [.. Enumerable.Range(0, _component.Length)];
+        Array.Sort([.. _component], order);
         Dictionary<int, int> parentCycle = []; // component to the cycle that looks at it
-        List<int> near = [];
-        foreach (int component in Enumerable.Range(0, _outer.Length).Where(c => _outer[c] >= 0))
+        for (int from = 0, to; from < order.Length; from = to)
         {
-            parentCycle[component] = FacingCycle(component, tallest[component], index, near);
+            for (to = from + 1; to < order.Length && _component[order[to]] == _component[order[from]]; to++)
+            {
+            }
+
+            parentCycle[_component[order[from]]] = FacingCycle(order.AsSpan(from, to - from), index);
         }
 
         foreach (int component in parentCycle.Keys.Order())
@@ -126,61 +134,56 @@ internal sealed class FaceNesting
         }
     }
 
-    private int[] TallestEdges()
-    {
-        int[] tallest = new int[_map.Edges.Count];
-        Array.Fill(tallest, -1);
-        for (int e = 0; e < _map.Edges.Count; e++)
-        {
-            int c = _component[e];
-            if (tallest[c] < 0 || _map.Edges[e].Curve.Bounds.Height > _map.Edges[tallest[c]].Curve.Bounds.Height)
-            {
-                tallest[c] = e;
-            }
-        }
-
-        return tallest;
-    }
-
     // Looks towards −y from where the component lies farthest that way on a general level; −1 when nothing is there.
-    private int FacingCycle(int component, int tallest, BoxIndex index, List<int> near)
+    private int FacingCycle(ReadOnlySpan<int> edges, BoxTree index)
     {
         const double general = 0.41421356; // a share no drawing uses, so that the ray meets no corner
-        Point from = _map.Edges[tallest].Curve.At(general);
-        near.Clear();
-        index.FindOverlaps(new Box(new Point(double.NegativeInfinity, from.Z), from), near);
-        near.Sort();
-        double far = 0;
-        foreach (int e in near)
+        int tallest = edges[0];
+        foreach (int e in edges)
         {
-            far = Math.Max(far, from.Y - _map.Edges[e].Curve.Bounds.Min.Y);
+            double height = _bounds[e].Height, most = _bounds[tallest].Height;
+            tallest = height > most || (height == most && e < tallest) ? e : tallest;
         }
 
+        Point from = _map.Edges[tallest].Curve.At(general);
+        double far = from.Y - _left;
         if (!(far > 0))
         {
             return -1;
         }
 
         Line ray = new(from, from - new Point(2 * far, 0));
-        List<(double Y, int Cycle)> hits = [];
         double own = from.Y;
-        foreach (int e in near)
+        foreach (int e in edges)
         {
-            Curve curve = _map.Edges[e].Curve;
-            foreach ((double t, _) in CurveIntersection.Find(curve, ray, 1e-9 * far))
+            if (_bounds[e].Min.Z <= from.Z && from.Z <= _bounds[e].Max.Z && _bounds[e].Min.Y < own)
             {
-                double y = curve.At(t).Y;
-                if (_component[e] == component)
-                {
-                    own = Math.Min(own, y);
-                }
-                else
-                {
-                    hits.Add((y, _cycleOfHalf[(2 * e) + (curve.Derivative(t).Z < 0 ? 0 : 1)]));
-                }
+                Hits(e, ray).ForEach(h => own = Math.Min(own, h.Y));
             }
         }
 
-        return hits.Where(h => h.Y < own).DefaultIfEmpty((0, -1)).MaxBy(h => h.Item1).Item2;
+        (double Y, int Cycle) nearest = (double.NegativeInfinity, -1);
+        foreach (int e in index.TowardsLeft(new Point(own, from.Z)))
+        {
+            if (_bounds[e].Max.Y < nearest.Y)
+            {
+                break;
+            }
+
+            if (_component[e] != _component[tallest])
+            {
+                Hits(e, ray).ForEach(h => nearest = h.Y < own && h.Y > nearest.Y ? h : nearest);
+            }
+        }
+
+        return nearest.Cycle;
+    }
+
+    // Where a ray towards −y meets an edge, with the cycle that looks back at it from there.
+    private List<(double Y, int Cycle)> Hits(int edge, Line ray)
+    {
+        Curve curve = _map.Edges[edge].Curve;
+        return CurveIntersection.Find(curve, ray, 1e-9 * ray.Length)
+            .ConvertAll(hit => (curve.At(hit.OnFirst).Y, _cycleOfHalf[(2 * edge) + (curve.Derivative(hit.OnFirst).Z < 0 ? 0 : 1)]));
     }
 }

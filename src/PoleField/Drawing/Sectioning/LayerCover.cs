@@ -10,7 +10,7 @@ internal sealed class LayerCover
     private readonly PlanarMap _map;
     private readonly UnionFind _faces;  // faces of the map that no edge of the layer separates
     private readonly List<int> _edges = []; // the layer's edges that bound something
-    private readonly Dictionary<int, bool> _inside = []; // by set of faces
+    private readonly bool?[] _inside;   // by set of faces; null where the spread has not come
 
     /// <summary>Finds what one layer covers.</summary>
     /// <param name="map">All edges.</param>
@@ -36,6 +36,7 @@ internal sealed class LayerCover
         List<int> open = [];
         mine.ForEach(e => (SetLeft(e) == SetRight(e) ? open : _edges).Add(e));
         OpenEdges = open;
+        _inside = new bool?[map.Areas.Count];
         Spread(Figures());
         (RegionOfFace, Regions, Outlines) = Number();
     }
@@ -77,121 +78,106 @@ internal sealed class LayerCover
 
     private int SetRight(int e) => _faces.Find(_map.Right(e));
 
-    // Connected figures of the layer's edges, with whether alternation makes sense in them.
-    private List<(List<int> Edges, bool Alternates)> Figures()
+    // For each edge that bounds something its connected figure, and for each figure whether alternation makes sense in it.
+    private (int[] FigureOf, bool[] Alternates) Figures()
     {
-        Dictionary<int, int> firstAt = []; // point to position in _edges
-        Dictionary<int, int> ends = [];
+        int[] firstAt = new int[_map.Points.Count]; // point to one more than the position in _edges
+        int[] ends = new int[_map.Points.Count];
         UnionFind sets = new(_edges.Count);
         for (int i = 0; i < _edges.Count; i++)
         {
-            foreach (int v in new[] { _map.Edges[_edges[i]].Start, _map.Edges[_edges[i]].End })
+            foreach (int v in (ReadOnlySpan<int>)[_map.Edges[_edges[i]].Start, _map.Edges[_edges[i]].End])
             {
-                ends[v] = ends.GetValueOrDefault(v) + 1;
-                if (!firstAt.TryAdd(v, i))
+                ends[v]++;
+                if (firstAt[v] == 0)
                 {
-                    sets.Union(firstAt[v], i);
+                    firstAt[v] = i + 1;
                 }
+
+                sets.Union(firstAt[v] - 1, i);
             }
         }
 
-        Dictionary<int, (List<int> Edges, bool Alternates)> figures = [];
-        for (int i = 0; i < _edges.Count; i++)
+        int[] figureOf = new int[_edges.Count];
+        bool[] alternates = new bool[_edges.Count];
+        Array.Fill(alternates, true);
+        for (int i = 0; i < figureOf.Length; i++)
         {
-            int set = sets.Find(i);
-            (List<int> edges, bool alternates) = figures.GetValueOrDefault(set, ([], true));
             WovenEdge e = _map.Edges[_edges[i]];
-            edges.Add(_edges[i]);
-            figures[set] = (edges, alternates && int.IsEvenInteger(ends[e.Start]) && int.IsEvenInteger(ends[e.End]));
+            figureOf[i] = sets.Find(i);
+            alternates[figureOf[i]] &= int.IsEvenInteger(ends[e.Start]) && int.IsEvenInteger(ends[e.End]);
         }
 
-        return [.. figures.OrderBy(f => f.Key).Select(f => f.Value)];
+        return (figureOf, alternates);
     }
 
     // From the unbounded face inwards: a figure is met first from the face it lies in.
-    private void Spread(List<(List<int> Edges, bool Alternates)> figures)
+    private void Spread((int[] FigureOf, bool[] Alternates) figures)
     {
-        Dictionary<int, List<int>> figuresAt = [];
-        for (int i = 0; i < figures.Count; i++)
-        {
-            foreach (int set in figures[i].Edges.SelectMany(e => new[] { SetLeft(e), SetRight(e) }).Distinct())
-            {
-                (figuresAt.TryGetValue(set, out List<int>? at) ? at : figuresAt[set] = []).Add(i);
-            }
-        }
-
-        bool[] done = new bool[figures.Count];
+        (int[] first, int[] at) = EdgesOfSets();
+        bool?[] around = new bool?[_edges.Count]; // by figure: whether it lies in material
         Queue<int> sets = new([_faces.Find(0)]);
         _inside[_faces.Find(0)] = false;
         while (sets.TryDequeue(out int set))
         {
-            foreach (int i in figuresAt.GetValueOrDefault(set) ?? [])
+            bool inside = _inside[set]!.Value;
+            for (int k = first[set]; k < first[set + 1]; k++)
             {
-                if (!done[i])
+                int i = at[k], figure = figures.FigureOf[i];
+                around[figure] ??= inside;
+                int other = SetLeft(_edges[i]) == set ? SetRight(_edges[i]) : SetLeft(_edges[i]);
+                if (_inside[other] is null)
                 {
-                    done[i] = true;
-                    Enter(figures[i].Edges, figures[i].Alternates, set, sets);
-                }
-            }
-        }
-    }
-
-    private void Enter(List<int> edges, bool alternates, int from, Queue<int> sets)
-    {
-        if (!alternates)
-        {
-            foreach (int set in edges.SelectMany(e => new[] { SetLeft(e), SetRight(e) }))
-            {
-                if (_inside.TryAdd(set, !_inside[from]))
-                {
-                    sets.Enqueue(set);
-                }
-            }
-
-            return;
-        }
-
-        Dictionary<int, List<int>> beyond = [];
-        foreach (int e in edges)
-        {
-            (beyond.TryGetValue(SetLeft(e), out List<int>? right) ? right : beyond[SetLeft(e)] = []).Add(SetRight(e));
-            (beyond.TryGetValue(SetRight(e), out List<int>? left) ? left : beyond[SetRight(e)] = []).Add(SetLeft(e));
-        }
-
-        Queue<int> waiting = new([from]);
-        while (waiting.TryDequeue(out int set))
-        {
-            foreach (int other in beyond[set])
-            {
-                if (_inside.TryAdd(other, !_inside[set]))
-                {
-                    waiting.Enqueue(other);
+                    _inside[other] = !(figures.Alternates[figure] ? inside : around[figure]!.Value);
                     sets.Enqueue(other);
                 }
             }
         }
     }
 
-    private (int[] RegionOfFace, int Regions, int Outlines) Number()
+    // Positions in _edges by the sets beside them: those of set s at [first[s]] to [first[s + 1] − 1].
+    private (int[] First, int[] At) EdgesOfSets()
     {
-        Dictionary<int, int> region = [];
+        int[] first = new int[_map.Areas.Count + 1];
         foreach (int e in _edges)
         {
-            foreach (int set in new[] { SetLeft(e), SetRight(e) })
+            first[SetLeft(e) + 1]++;
+            first[SetRight(e) + 1]++;
+        }
+
+        for (int s = 1; s < first.Length; s++)
+        {
+            first[s] += first[s - 1];
+        }
+
+        int[] at = new int[2 * _edges.Count];
+        int[] filled = [.. first];
+        for (int i = 0; i < _edges.Count; i++)
+        {
+            at[filled[SetLeft(_edges[i])]++] = i;
+            at[filled[SetRight(_edges[i])]++] = i;
+        }
+
+        return (first, at);
+    }
+
+    private (int[] RegionOfFace, int Regions, int Outlines) Number()
+    {
+        int[] regionOfSet = new int[_map.Areas.Count];
+        Array.Fill(regionOfSet, -1);
+        int regions = 0;
+        foreach (int e in _edges)
+        {
+            foreach (int set in (ReadOnlySpan<int>)[SetLeft(e), SetRight(e)])
             {
-                if (_inside.GetValueOrDefault(set))
+                if (_inside[set] == true && regionOfSet[set] < 0)
                 {
-                    region.TryAdd(set, region.Count);
+                    regionOfSet[set] = regions++;
                 }
             }
         }
 
-        int[] regionOfFace = new int[_map.Areas.Count];
-        for (int f = 0; f < regionOfFace.Length; f++)
-        {
-            regionOfFace[f] = region.GetValueOrDefault(_faces.Find(f), -1);
-        }
-
-        return (regionOfFace, region.Count, _inside.Count - 1);
+        int[] regionOfFace = [.. Enumerable.Range(0, regionOfSet.Length).Select(f => regionOfSet[_faces.Find(f)])];
+        return (regionOfFace, regions, _inside.Count(i => i is not null) - 1);
     }
 }

@@ -45,7 +45,8 @@ internal sealed class Net
         for (int i = 0; i < Pieces.Count; i++)
         {
             Piece p = Pieces[i];
-            Pieces[i] = p with { Curve = CurveEnds.Move(p.Curve, Points[p.Start], Points[p.End]) };
+            Curve fitted = CurveEnds.Move(p.Curve, Points[p.Start], Points[p.End]);
+            Pieces[i] = ReferenceEquals(fitted, p.Curve) ? p : p with { Curve = fitted };
         }
     }
 }

@@ -5,21 +5,24 @@ namespace PoleField.Drawing;
 /// <summary>Points in square cells, for finding all within a reach in constant time.</summary>
 internal sealed class PointGrid
 {
-    private readonly Dictionary<(long, long), int> _first = []; // cell to its latest entry
-    private readonly List<(Point At, int Key, int Next)> _entries = [];
+    private readonly Dictionary<long, int> _first; // cell to its latest entry; cells may share a key, distances tell
+    private readonly List<(Point At, int Key, int Next)> _entries;
     private readonly double _reach;
     private readonly double _cell;
 
     /// <param name="reach">Largest distance that will be asked for, &gt; 0.</param>
-    public PointGrid(double reach)
+    /// <param name="capacity">Number of points that are expected.</param>
+    public PointGrid(double reach, int capacity)
     {
+        _first = new Dictionary<long, int>(capacity);
+        _entries = new List<(Point, int, int)>(capacity);
         _reach = reach;
         _cell = 8 * reach; // most circles of the reach then lie in one cell
     }
 
     public void Add(Point p, int key)
     {
-        (long, long) cell = (Cell(p.Y), Cell(p.Z));
+        long cell = Key(Cell(p.Y), Cell(p.Z));
         _entries.Add((p, key, _first.GetValueOrDefault(cell, -1)));
         _first[cell] = _entries.Count - 1;
     }
@@ -31,7 +34,7 @@ internal sealed class PointGrid
         {
             for (long z = Cell(p.Z - _reach); z <= Cell(p.Z + _reach); z++)
             {
-                for (int i = _first.GetValueOrDefault((y, z), -1); i >= 0; i = _entries[i].Next)
+                for (int i = _first.GetValueOrDefault(Key(y, z), -1); i >= 0; i = _entries[i].Next)
                 {
                     if (_entries[i].At.DistanceTo(p) <= _reach)
                     {
@@ -41,6 +44,9 @@ internal sealed class PointGrid
             }
         }
     }
+
+    // Spreads cells over all keys (the odd multiplier is 2⁶⁴ over the golden ratio).
+    private static long Key(long y, long z) => unchecked((y * (long)0x9E3779B97F4A7C15) ^ z);
 
     private long Cell(double x) => (long)Math.Floor(x / _cell);
 }
@@ -52,7 +58,11 @@ internal sealed class UnionFind
 
     public UnionFind(int count)
     {
-        _parent = [.. Enumerable.Range(0, count)];
+        _parent = new int[count];
+        for (int i = 0; i < count; i++)
+        {
+            _parent[i] = i;
+        }
     }
 
     /// <summary>Smallest member of the set.</summary>

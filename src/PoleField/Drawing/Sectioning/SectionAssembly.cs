@@ -10,13 +10,16 @@ internal sealed class SectionAssembly
     private readonly UnionFind _joined;  // faces that belong to one region
     private readonly Dictionary<int, int> _region = []; // set of faces to region of the section
     private readonly List<Region> _regions = [];
-    private readonly List<Point> _vertices = [];
+    private readonly List<Point> _vertices = [];    // in the order the edges use them
+    private readonly int[] _vertexOf;               // of each point of the map and then of each point's image; −1 while unused
     private readonly List<SectionEdge> _edges = [];
 
     /// <summary>Numbers the regions.</summary>
     public SectionAssembly(PlanarMap map, FaceOwners owners)
     {
         (_map, _owners) = (map, owners);
+        _vertexOf = new int[2 * map.Points.Count];
+        Array.Fill(_vertexOf, -1);
         _joined = new UnionFind(map.Areas.Count);
         for (int e = 0; e < map.Edges.Count; e++)
         {
@@ -37,11 +40,11 @@ internal sealed class SectionAssembly
             if (left != right)
             {
                 WovenEdge edge = _map.Edges[e];
-                _edges.Add(new SectionEdge(edge.Start, edge.End, edge.Curve, left, right));
+                Add(edge.Start, edge.End, edge.Curve, left, right);
             }
         }
 
-        return Finish(parts, hasRim);
+        return new CrossSection(_vertices, _edges, _regions, parts, hasRim);
     }
 
     /// <summary>The half as drawn and its mirror image in y = 0.</summary>
@@ -86,12 +89,11 @@ internal sealed class SectionAssembly
             }
 
             WovenEdge edge = _map.Edges[e];
-            _edges.Add(new SectionEdge(edge.Start, edge.End, edge.Curve, left, right));
-            _edges.Add(new SectionEdge(
-                Image(edge.Start), Image(edge.End), CurveEnds.Mirrored(edge.Curve), ImageRegion(right), ImageRegion(left)));
+            Add(edge.Start, edge.End, edge.Curve, left, right);
+            Add(Image(edge.Start), Image(edge.End), CurveEnds.Mirrored(edge.Curve), ImageRegion(right), ImageRegion(left));
         }
 
-        return Finish(parts, hasRim);
+        return new CrossSection(_vertices, _edges, _regions, parts, hasRim);
 
         int Image(int v) => _map.Points[v].Y == 0 ? v : points + v;
         int ImageRegion(int r) => r < 0 ? r : image[r];
@@ -112,7 +114,7 @@ internal sealed class SectionAssembly
         int[] firstEdge = Enumerable.Repeat(int.MaxValue, faces).ToArray();
         for (int e = 0; e < _map.Edges.Count; e++)
         {
-            foreach (int set in new[] { _joined.Find(_map.Left(e)), _joined.Find(_map.Right(e)) })
+            foreach (int set in (ReadOnlySpan<int>)[_joined.Find(_map.Left(e)), _joined.Find(_map.Right(e))])
             {
                 bounds[set] = bounds[set].Including(_map.Edges[e].Curve.Bounds);
                 firstEdge[set] = Math.Min(firstEdge[set], e);
@@ -141,21 +143,19 @@ internal sealed class SectionAssembly
         }
     }
 
-    // Vertices in the order the edges use them; others are gone.
-    private CrossSection Finish(IReadOnlyList<string> parts, bool hasRim)
+    private void Add(int start, int end, Curve curve, int left, int right)
     {
-        Dictionary<int, int> vertex = [];
-        List<SectionEdge> edges = [.. _edges.Select(e => e with { Start = Vertex(e.Start, e.Curve.Start), End = Vertex(e.End, e.Curve.End) })];
-        return new CrossSection(_vertices, edges, _regions, parts, hasRim);
+        _edges.Add(new SectionEdge(Vertex(start, curve.Start), Vertex(end, curve.End), curve, left, right));
 
         int Vertex(int point, Point place)
         {
-            if (vertex.TryAdd(point, _vertices.Count))
+            if (_vertexOf[point] < 0)
             {
+                _vertexOf[point] = _vertices.Count;
                 _vertices.Add(place);
             }
 
-            return vertex[point];
+            return _vertexOf[point];
         }
     }
 }

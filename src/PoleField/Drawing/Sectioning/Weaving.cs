@@ -9,6 +9,7 @@ internal sealed class Weaving
     private readonly Reach _reach;
     private readonly SectionLog _log;
     private readonly SortedDictionary<int, List<(double T, int Point)>> _cuts = [];
+    private IReadOnlyList<(int First, int Second)> _near = []; // pieces whose boxes come within the join length
 
     private Weaving(Net net, Reach reach, SectionLog log)
     {
@@ -19,37 +20,63 @@ internal sealed class Weaving
     public static List<WovenEdge> Weave(Net net, Reach reach, SectionLog log)
     {
         Weaving weaving = new(net, reach, log);
+        weaving.FindNear();
         weaving.CutAtPoints();
         weaving.CutAtCrossings();
-        return weaving.LayTogether();
+        return Overlay.LayTogether(net, reach, log);
     }
+
+    private void FindNear() => _near = new BoxTree([.. _net.Pieces.Select(p => p.Curve.Bounds)]).Pairs(_reach.Join);
 
     private void CutAtPoints()
     {
-        BoxIndex index = new([.. _net.Pieces.Select(p => p.Curve.Bounds)]);
-        List<int>[] incident = IncidentPieces();
-        List<int> near = [];
-        for (int v = 0; v < _net.Points.Count; v++)
+        List<(int Point, int Piece)> near = PointsNearPieces();
+        Dictionary<int, List<int>> incident = near.Select(n => n.Point).Distinct().ToDictionary(v => v, _ => new List<int>());
+        for (int i = 0; near.Count > 0 && i < _net.Pieces.Count; i++)
         {
-            Point p = _net.Points[v];
-            near.Clear();
-            index.FindOverlaps(new Box(p, p).Inflated(_reach.Join), near);
-            near.Sort();
-            bool moved = false;
-            foreach (int i in near)
-            {
-                if (_net.Pieces[i].Start != v && _net.Pieces[i].End != v)
-                {
-                    moved |= CutAt(i, v, incident[v], moved);
-                }
-            }
+            incident.GetValueOrDefault(_net.Pieces[i].Start)?.Add(i);
+            incident.GetValueOrDefault(_net.Pieces[i].End)?.Add(i);
         }
 
-        ApplyCuts();
+        HashSet<int> moved = [];
+        foreach ((int v, int i) in near)
+        {
+            CutAt(i, v, incident[v], moved);
+        }
+
+        if (ApplyCuts())
+        {
+            FindNear();
+        }
     }
 
-    // Cuts a piece at a point near it. A point of straight curves moves onto the piece, once; tells whether it did.
-    private bool CutAt(int i, int v, List<int> incident, bool moved)
+    // Ends of pieces within the join length of the box of another piece, each pair once, in increasing order.
+    private List<(int Point, int Piece)> PointsNearPieces()
+    {
+        List<(int, int)> near = [];
+        foreach ((int i, int j) in _near)
+        {
+            (Piece a, Piece b) = (_net.Pieces[i], _net.Pieces[j]);
+            AddIfNear(a.Start, j);
+            AddIfNear(a.End, j);
+            AddIfNear(b.Start, i);
+            AddIfNear(b.End, i);
+        }
+
+        return [.. near.Distinct().Order()];
+
+        void AddIfNear(int v, int i)
+        {
+            Piece piece = _net.Pieces[i];
+            if (piece.Start != v && piece.End != v && piece.Curve.Bounds.Inflated(_reach.Join).Contains(_net.Points[v]))
+            {
+                near.Add((v, i));
+            }
+        }
+    }
+
+    // Cuts a piece at a point near it. A point of straight curves moves onto the piece, once.
+    private void CutAt(int i, int v, List<int> incident, HashSet<int> moved)
     {
         Piece piece = _net.Pieces[i];
         Point p = _net.Points[v];
@@ -60,41 +87,32 @@ internal sealed class Weaving
         double toEnds = Math.Min(foot.DistanceTo(piece.Curve.Start), foot.DistanceTo(piece.Curve.End));
         if (distance > (loose ? _reach.Join : _reach.Fine) || toEnds <= _reach.Fine)
         {
-            return false;
+            return;
         }
 
         Cut(i, t, v);
         if (distance <= _reach.Exact)
         {
-            return false;
+            return;
         }
 
         _log.AddHealed(p, distance, _net.Pieces[incident[0]].Source);
-        bool movable = !moved && incident.TrueForAll(k => _net.Pieces[k].Curve is Line) && !(_net.IsHalf && p.Y == 0);
-        if (movable)
+        bool movable = incident.TrueForAll(k => _net.Pieces[k].Curve is Line) && !(_net.IsHalf && p.Y == 0);
+        if (movable && moved.Add(v))
         {
             _net.Points[v] = foot;
         }
-
-        return movable;
     }
 
     private void CutAtCrossings()
     {
-        BoxIndex index = new([.. _net.Pieces.Select(p => p.Curve.Bounds)]);
-        PointGrid crossings = new(_reach.Fine);
-        List<int> near = [], known = [];
-        for (int i = 0; i < _net.Pieces.Count; i++)
+        PointGrid crossings = new(_reach.Fine, 0);
+        List<int> known = [];
+        foreach ((int i, int j) in _near)
         {
-            near.Clear();
-            index.FindOverlaps(_net.Pieces[i].Curve.Bounds.Inflated(_reach.Exact), near);
-            near.Sort();
-            foreach (int j in near)
+            if (MayCross(_net.Pieces[i], _net.Pieces[j]))
             {
-                if (j > i && MayCross(_net.Pieces[i], _net.Pieces[j]))
-                {
-                    CutAtCrossing(i, j, crossings, known);
-                }
+                CutAtCrossing(i, j, crossings, known);
             }
         }
 
@@ -135,7 +153,7 @@ internal sealed class Weaving
     private bool MayCross(Piece a, Piece b)
     {
         bool share = a.Start == b.Start || a.Start == b.End || a.End == b.Start || a.End == b.End;
-        return !share || !((a.Curve is Line && b.Curve is Line) || AreAlike(a, b));
+        return !share || !((a.Curve is Line && b.Curve is Line) || Overlay.AreAlike(a, b, _reach));
     }
 
     private bool IsAtEnd(Piece piece, Point p) =>
@@ -154,8 +172,14 @@ internal sealed class Weaving
         }
     }
 
-    private void ApplyCuts()
+    // True when there were any.
+    private bool ApplyCuts()
     {
+        if (_cuts.Count == 0)
+        {
+            return false;
+        }
+
         List<Piece> pieces = new(_net.Pieces.Count + _cuts.Count);
         for (int i = 0; i < _net.Pieces.Count; i++)
         {
@@ -183,102 +207,6 @@ internal sealed class Weaving
         _cuts.Clear();
         _net.Pieces = pieces;
         _net.Refit();
-    }
-
-    private List<WovenEdge> LayTogether()
-    {
-        // Pieces sorted by their ends; a run of equal ends may hold pieces that lie on each other. Edges keep the order of drawing.
-        Piece[] pieces = [.. _net.Pieces];
-        long[] ends = [.. pieces.Select(p => ((long)Math.Min(p.Start, p.End) * _net.Points.Count) + Math.Max(p.Start, p.End))];
-        int[] order = [.. Enumerable.Range(0, pieces.Length)];
-        Array.Sort(order, (i, j) => ends[i] != ends[j] ? ends[i].CompareTo(ends[j]) : i.CompareTo(j));
-        SortedDictionary<int, List<Piece>> several = []; // by the first piece of the run
-        bool[] alone = new bool[pieces.Length];
-        for (int from = 0, to; from < order.Length; from = to)
-        {
-            for (to = from + 1; to < order.Length && ends[order[to]] == ends[order[from]]; to++)
-            {
-            }
-
-            alone[order[from]] = to == from + 1;
-            if (!alone[order[from]])
-            {
-                several[order[from]] = [.. order[from..to].Select(i => pieces[i])];
-            }
-        }
-
-        List<WovenEdge> edges = new(pieces.Length);
-        for (int i = 0; i < pieces.Length; i++)
-        {
-            if (alone[i])
-            {
-                edges.Add(Edge(pieces[i], [pieces[i].Layer]));
-            }
-            else if (several.TryGetValue(i, out List<Piece>? run))
-            {
-                LayTogether(run, edges);
-            }
-        }
-
-        return edges;
-    }
-
-    private void LayTogether(List<Piece> rest, List<WovenEdge> edges)
-    {
-        while (rest.Count > 0)
-        {
-            // A bent piece keeps its shape against a straight one; of equals the first drawn of the first layer.
-            Piece keep = rest.FirstOrDefault(p => p.Curve is not Line) ?? rest[0];
-            ILookup<bool, Piece> alike = rest.ToLookup(p => ReferenceEquals(p, keep) || AreAlike(keep, p));
-            NoteRepeats([.. alike[true]]);
-            edges.Add(Edge(keep, [.. alike[true].Select(p => p.Layer).Distinct().Order()]));
-            rest = [.. alike[false]];
-        }
-    }
-
-    private static WovenEdge Edge(Piece p, IReadOnlyList<int> layers) => new(p.Curve, p.Start, p.End, layers, p.Source);
-
-    private void NoteRepeats(List<Piece> alike)
-    {
-        foreach (IGrouping<int, Piece> drawn in alike.GroupBy(p => p.Layer))
-        {
-            Piece? first = null;
-            foreach (Piece p in drawn)
-            {
-                if (first is not null)
-                {
-                    Point at = p.Curve.At(0.5);
-                    _log.Add(SectionMessages.Repeat(_log, at, p.Curve.Length, first.Whole && p.Whole), at, p.Source);
-                }
-
-                first ??= p;
-            }
-        }
-    }
-
-    // Same ends, and nowhere farther apart than the reach: sampled at the quarters, where arcs between two points differ most.
-    private bool AreAlike(Piece a, Piece b)
-    {
-        if (Math.Min(a.Start, a.End) != Math.Min(b.Start, b.End) || Math.Max(a.Start, a.End) != Math.Max(b.Start, b.End))
-        {
-            return false;
-        }
-
-        double reach = a.Layer == b.Layer ? _reach.Fine : _reach.Join;
-        return (a.Curve is Line && b.Curve is Line)
-            || (a.Curve.DistanceTo(b.Curve.At(0.25)) <= reach && a.Curve.DistanceTo(b.Curve.At(0.5)) <= reach
-                && a.Curve.DistanceTo(b.Curve.At(0.75)) <= reach);
-    }
-
-    private List<int>[] IncidentPieces()
-    {
-        List<int>[] incident = [.. _net.Points.Select(_ => new List<int>(2))];
-        for (int i = 0; i < _net.Pieces.Count; i++)
-        {
-            incident[_net.Pieces[i].Start].Add(i);
-            incident[_net.Pieces[i].End].Add(i);
-        }
-
-        return incident;
+        return true;
     }
 }
