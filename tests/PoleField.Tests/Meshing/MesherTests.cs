@@ -3,6 +3,7 @@
 using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Meshing;
+using PoleField.Tests.House;
 using Xunit;
 
 namespace PoleField.Tests.Meshing;
@@ -306,20 +307,33 @@ public sealed class MesherTests
             () => Mesher.Mesh(ProblemP.Section(), SizeField.Uniform(5e-4), cancellation: source.Token));
     }
 
+    // POLEFIELD_RANDOM_SECTIONS asks for more of them.
     [Fact]
-    public void HundredRandomSectionsKeepEveryPromise()
+    public void RandomSectionsKeepEveryPromiseAndEnd()
     {
-        for (int seed = 0; seed < 100; seed++)
+        int count = RandomRuns.Count("POLEFIELD_RANDOM_SECTIONS", 300);
+        string[] broken = [.. Enumerable.Range(0, count).Select(FaultOf).Where(fault => fault.Length > 0)];
+
+        Assert.True(broken.Length == 0, FormattableString.Invariant($"{broken.Length} of {count}: {string.Join("\n", broken.Take(20))}"));
+    }
+
+    private static string FaultOf(int seed)
+    {
+        using CancellationTokenSource late = new(TimeSpan.FromMinutes(1));
+        try
         {
             CrossSection section = RandomSection.Make(seed);
             SizeField size = SizeField.FromSources(0.5, 0.35, [(default, 0.05), (new Point(1, 0.5), 0.02)]);
-
-            Mesh mesh = Mesher.Mesh(section, size);
-
+            Mesh mesh = Mesher.Mesh(section, size, cancellation: late.Token);
             AssertSound(mesh, $"seed {seed}");
             double smallest = SmallestAngleOff(mesh, RandomSection.SharpRegions(section));
-            Assert.True(smallest >= 25, FormattableString.Invariant($"seed {seed}: smallest angle {smallest}"));
+            Assert.True(smallest >= 25, FormattableString.Invariant($"smallest angle {smallest}"));
             AssertEdgesFollow(mesh, size);
+            return "";
+        }
+        catch (Exception e) when (e is Xunit.Sdk.XunitException or MeshingException or InvalidOperationException or ArgumentException or OperationCanceledException)
+        {
+            return FormattableString.Invariant($"seed {seed}: {e.Message.ReplaceLineEndings(" ")}");
         }
     }
 
