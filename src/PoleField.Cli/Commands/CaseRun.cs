@@ -59,7 +59,15 @@ internal sealed class CaseRun(Tool tool, string outDescription)
     {
         Accuracy = arguments.GetValue(_accuracy) ?? loaded.Case!.Accuracy,
         Threads = arguments.GetValue(_threads),
+        MostUnknowns = MostUnknowns(solvesAtATime: 1),
     };
+
+    /// <summary>The unknowns the memory of this machine, or of the container around the process, has room for.</summary>
+    public static int MostUnknowns(int solvesAtATime)
+    {
+        double room = GC.GetGCMemoryInfo().TotalAvailableMemoryBytes / (double)(SolveOptions.BytesPerUnknown * solvesAtATime);
+        return (int)Math.Min(new SolveOptions().MostUnknowns, room);
+    }
 
     /// <summary>The progress line of a run, silent with <c>--quiet</c> and <c>--json</c>.</summary>
     public ProgressLine Progress(ParseResult arguments, SolveOptions options) =>

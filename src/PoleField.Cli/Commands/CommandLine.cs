@@ -35,9 +35,18 @@ internal static class CommandLine
             EnableDefaultExceptionHandler = false,
             ProcessTerminationTimeout = TerminationTimeout,
         };
-        int status = await arguments.InvokeAsync(invocation, cancellation).ConfigureAwait(false);
-        const int terminated = 143;
-        return status == terminated ? ExitStatus.Interrupted : status;
+        try
+        {
+            int status = await arguments.InvokeAsync(invocation, cancellation).ConfigureAwait(false);
+            const int terminated = 143;
+            return status == terminated ? ExitStatus.Interrupted : status;
+        }
+        catch (IOException e)
+        {
+            // Files have their own messages; what is left is an output stream that takes no more.
+            terminal.Error.WriteLine($"polefield: the output cannot be written: {e.Message}");
+            return ExitStatus.WrongInput;
+        }
     }
 
     /// <summary>The whole command tree.</summary>
@@ -62,6 +71,7 @@ internal static class CommandLine
         root.Subcommands.Add(SketchVerb.Create(tool));
         root.Subcommands.Add(MaterialsVerb.Create(tool));
         root.Subcommands.Add(CompletionVerb.Create(tool));
+        root.Subcommands.Add(ManualVerb.Create(tool));
         HelpOption help = root.Options.OfType<HelpOption>().Single();
         help.Description = "Show help.";
         help.Action = new HelpText();

@@ -31,10 +31,20 @@ internal static class CompletionVerb
         complete -c polefield -a '(polefield "[suggest:"(string length -- (commandline -cp))"]" (commandline -cp) 2>/dev/null)'
         """;
 
+    private const string PowerShell = """
+        # polefield completion; add to $PROFILE: polefield completion pwsh | Out-String | Invoke-Expression
+        Register-ArgumentCompleter -Native -CommandName polefield -ScriptBlock {
+            param($word, $tree, $position)
+            polefield "[suggest:$position]" "$tree" 2>$null | Where-Object { $_ -like "$word*" } | ForEach-Object {
+                [System.Management.Automation.CompletionResult]::new($_, $_, 'ParameterValue', $_)
+            }
+        }
+        """;
+
     public static VerbCommand Create(Tool tool)
     {
-        var shell = new Argument<string>("SHELL") { Description = "bash, zsh or fish." };
-        shell.AcceptOnlyFromAmong("bash", "zsh", "fish");
+        var shell = new Argument<string>("SHELL") { Description = "bash, zsh, fish or pwsh." };
+        shell.AcceptOnlyFromAmong("bash", "zsh", "fish", "pwsh");
         var verb = new VerbCommand("completion", "Prints the script that makes a shell complete verbs and options.")
         {
             Examples = [("eval \"$(polefield completion bash)\"", "completion in this shell, from now on")],
@@ -46,6 +56,7 @@ internal static class CompletionVerb
             {
                 "zsh" => Zsh,
                 "fish" => Fish,
+                "pwsh" => PowerShell,
                 _ => Bash,
             });
             return ExitStatus.Done;

@@ -10,7 +10,8 @@ internal sealed class HelpText : SynchronousCommandLineAction
     private const int Width = 80;
     private const int LeftColumn = 24;
 
-    private static readonly (string Status, string Meaning)[] ExitMeanings =
+    /// <summary>What each exit status means, in words.</summary>
+    public static IReadOnlyList<(string Status, string Meaning)> ExitMeanings { get; } =
     [
         ("0", "done"),
         ("1", "a fault in PoleField itself"),

@@ -84,7 +84,7 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
             return ExitStatus.NotMet;
         }
 #pragma warning disable CA1031 // The one place where an unforeseen exception becomes a message instead of a stack trace.
-        catch (Exception e) when (e is not OperationCanceledException)
+        catch (Exception e) when (e is not (OperationCanceledException or IOException))
 #pragma warning restore CA1031
         {
             return ReportOwnFault(e, arguments.GetValue(Verbose));

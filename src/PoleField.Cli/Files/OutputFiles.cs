@@ -28,14 +28,29 @@ internal sealed class OutputFiles : IDisposable
         return faults.Length == 0 ? files : throw new InputException(faults);
     }
 
-    /// <summary>Writes a file's content under a temporary name.</summary>
+    /// <summary>Writes a file's content under a temporary name, down to the disk.</summary>
+    /// <exception cref="InputException">It cannot be written: a full disk, a folder that went away.</exception>
     public void Write(string target, Action<Stream> content)
+    {
+        try
+        {
+            WritePart(target, content);
+        }
+        catch (Exception e) when (e is IOException or UnauthorizedAccessException)
+        {
+            string why = _written.Count == 0 ? e.Message : e.Message.Replace(_written[^1].Temporary, target, StringComparison.Ordinal);
+            throw new InputException([Cannot(target, why.TrimEnd('.'))]);
+        }
+    }
+
+    private void WritePart(string target, Action<Stream> content)
     {
         Directory.CreateDirectory(FolderOf(target));
         string temporary = Path.Combine(FolderOf(target), $".{Path.GetFileName(target)}.{Path.GetRandomFileName()}.part");
         _written.Add((target, temporary));
         using FileStream stream = new(temporary, FileMode.CreateNew, FileAccess.Write);
         content(stream);
+        stream.Flush(flushToDisk: true);
     }
 
     /// <summary>Gives all files their names; on failure takes back those that replaced nothing.</summary>
@@ -43,10 +58,12 @@ internal sealed class OutputFiles : IDisposable
     {
         cancellation.ThrowIfCancellationRequested();
         var placed = new List<string>();
+        string current = string.Empty;
         try
         {
             foreach ((string target, string temporary) in _written)
             {
+                current = target;
                 bool existed = File.Exists(target);
                 File.Move(temporary, target, _force || _replaceable.Contains(Path.GetFullPath(target)));
                 if (!existed)
@@ -58,7 +75,7 @@ internal sealed class OutputFiles : IDisposable
         catch (Exception e) when (e is IOException or UnauthorizedAccessException)
         {
             placed.ForEach(File.Delete);
-            throw new InputException([Cannot(_written[^1].Target, e.Message)]);
+            throw new InputException([Cannot(current, e.Message.TrimEnd('.'))]);
         }
 
         _written.Clear();
@@ -69,7 +86,14 @@ internal sealed class OutputFiles : IDisposable
     {
         foreach ((_, string temporary) in _written)
         {
-            File.Delete(temporary);
+            try
+            {
+                File.Delete(temporary);
+            }
+            catch (Exception e) when (e is IOException or UnauthorizedAccessException)
+            {
+                // The folder is gone or locked, and the run has a better reason to end with than this.
+            }
         }
 
         _written.Clear();
@@ -112,11 +136,18 @@ internal sealed class OutputFiles : IDisposable
         }
 
         string probe = Path.Combine(folder, $".{Path.GetRandomFileName()}.part");
-        using FileStream stream = new(probe, FileMode.CreateNew, FileAccess.Write, FileShare.None, 1, FileOptions.DeleteOnClose);
+        try
+        {
+            using FileStream stream = new(probe, FileMode.CreateNew, FileAccess.Write, FileShare.None, 1, FileOptions.DeleteOnClose);
+        }
+        catch (Exception e) when (e is IOException or UnauthorizedAccessException)
+        {
+            throw new IOException($"no file can be made in {folder} ({e.Message.Replace(probe, folder, StringComparison.Ordinal).TrimEnd('.')})");
+        }
     }
 
     private static string FolderOf(string target) => Path.GetDirectoryName(Path.GetFullPath(target))!;
 
     private static Finding Cannot(string target, string why) =>
-        new(Severity.Fault, "cannot-write", $"{target} cannot be written: {why}.", "Write elsewhere with -o, or change the folder's permissions.");
+        new(Severity.Fault, "cannot-write", $"{target} cannot be written: {why}.", "Write elsewhere with -o, make room, or change the folder's permissions.");
 }

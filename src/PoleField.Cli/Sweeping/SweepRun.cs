@@ -95,12 +95,12 @@ internal sealed class SweepRun(Pipeline pipeline, string casePath, SweepPlan pla
         }
 
         var clock = Stopwatch.StartNew();
-        SweepPointFile finished = SolvePoint(point, options.Accuracy, cancellation);
+        SweepPointFile finished = SolvePoint(point, options, cancellation);
         folder.WritePoint(finished with { Seconds = Math.Round(clock.Elapsed.TotalSeconds, 3) });
         return finished.ExitStatus;
     }
 
-    private SweepPointFile SolvePoint(int point, double? accuracy, CancellationToken cancellation)
+    private SweepPointFile SolvePoint(int point, SweepOptions options, CancellationToken cancellation)
     {
         try
         {
@@ -111,8 +111,13 @@ internal sealed class SweepRun(Pipeline pipeline, string casePath, SweepPlan pla
                 return Failed(point, ExitStatus.WrongInput, loaded.Findings.Where(f => f.Severity == Severity.Fault), loaded.DrawingUnit);
             }
 
-            var options = new SolveOptions { Accuracy = accuracy ?? loaded.Case!.Accuracy, Threads = 1 };
-            SolvedCase solved = CaseRun.Solve(pipeline, loaded, new SolveSteps(options, _ => { }, cancellation));
+            var solve = new SolveOptions
+            {
+                Accuracy = options.Accuracy ?? loaded.Case!.Accuracy,
+                Threads = 1,
+                MostUnknowns = CaseRun.MostUnknowns(options.AtATime),
+            };
+            SolvedCase solved = CaseRun.Solve(pipeline, loaded, new SolveSteps(solve, _ => { }, cancellation));
             return new SweepPointFile(
                 SweepPointFile.Name,
                 plan.Sha256,

@@ -99,6 +99,16 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     private MeshingException NoBand() =>
         new("No band of air elements fits between the aperture and its surroundings.", place.Aperture.Centre);
 
+    private InputException TooLarge(int unknowns) => new(
+    [
+        new Finding(
+            Severity.Fault,
+            "too-large",
+            FormattableString.Invariant(
+                $"The mesh has {unknowns} unknowns and needs about {unknowns * (double)SolveOptions.BytesPerUnknown / 1e9:0.0#} GB; there is room for {_options.MostUnknowns} unknowns."),
+            "Ask for less accuracy, simplify outlines with tiny steps or radii, or use a machine with more memory."),
+    ]);
+
     private Mesh NewMesh(SizeField size, int step)
     {
         Report("mesh", step, 0, 0, double.NaN);
@@ -113,6 +123,11 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     {
         _solving.Start();
         FiniteElementSpace space = FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), _options.Order);
+        if (step == 1 && space.NodeCount > _options.MostUnknowns)
+        {
+            throw TooLarge(space.NodeCount);
+        }
+
         FieldProblem problem = FieldProblem.Create(magnet, space);
         var equations = new FieldEquations(problem, _options.Threads);
         double[]? start = previous is not null && equations.IsNonlinear ? Start(previous, equations, scale) : null;

@@ -7,7 +7,9 @@ namespace PoleField.Beam;
 public static class MagnetSolver
 {
     /// <summary>Solves a magnet for the beam in an aperture.</summary>
-    /// <exception cref="InputException">The aperture touches something that is not air, or lies outside the model.</exception>
+    /// <exception cref="InputException">
+    /// The aperture touches something that is not air, or lies outside the model; or the mesh has more unknowns than allowed.
+    /// </exception>
     /// <exception cref="MeshingException">The section cannot be meshed.</exception>
     /// <exception cref="FieldNotConvergedException">The field did not converge.</exception>
     public static SolvedMagnet Solve(

@@ -84,6 +84,7 @@ public sealed class CommandLineTests
     [InlineData("bash", "complete ")]
     [InlineData("zsh", "compdef ")]
     [InlineData("fish", "complete -c polefield")]
+    [InlineData("pwsh", "Register-ArgumentCompleter -Native -CommandName polefield")]
     public async Task EachShellGetsItsCompletion(string shell, string command)
     {
         Run run = await Run.Of(Steps.Sound, "completion", shell);
