@@ -45,46 +45,42 @@ internal sealed class CaseLoader(Pipeline pipeline)
         CaseReading reading = CaseReader.Read(text, around, changes);
         findings.AddRange(reading.Findings);
         var loaded = new LoadedCase { Path = path, Findings = findings, CaseSha256 = Known(Path.GetFileName(path), bytes) };
-        if (reading.Case is not { } file)
+        // A case with faults still says which curves and drawing to look at: their faults come out in the same run.
+        IEnumerable<PartSection> parts = reading.Question.Parts.Where(p => reading.Case is not null || Exists(p.Substance, around));
+        var roles = parts.Select(p => Catch(findings, () => RoleOf(p, folder, builtIn))).ToList();
+        if (reading.Case is { } file)
         {
-            return loaded;
+            loaded = loaded with { Case = file, Roles = [.. roles.OfType<PartRole>()] };
         }
 
-        var roles = file.Parts.Select(p => Catch(findings, () => RoleOf(p, folder, builtIn))).ToList();
-        loaded = loaded with { Case = file, Roles = [.. roles.OfType<PartRole>()] };
-        return WithSketch(loaded, Path.Combine(folder, file.Sketch.File), findings, cut);
+        string sketch = reading.Question.Sketch.File;
+        return reading.Case is not null || around.FileExists(sketch)
+            ? WithSketch(loaded, reading.Question, Path.Combine(folder, sketch), findings, cut)
+            : loaded;
     }
 
-    private LoadedCase WithSketch(LoadedCase loaded, string path, List<Finding> findings, bool cut)
+    private static bool Exists(Substance substance, CaseSurroundings around) =>
+        substance is CurveFileSubstance curve && around.FileExists(curve.File);
+
+    private LoadedCase WithSketch(LoadedCase loaded, SketchQuestion question, string path, List<Finding> findings, bool cut)
     {
-        CaseFile file = loaded.Case!;
+        SketchSection asked = question.Sketch;
         if (Catch(findings, () => ReadFile(path, "sketch")) is not { } bytes)
         {
             return loaded;
         }
 
-        loaded = loaded with { SketchSha256 = Known(file.Sketch.File, bytes) };
-        if (!cut || Catch(findings, () => pipeline.ReadSketch(new MemoryStream(bytes), file.Sketch.File, file.Sketch.Unit)) is not { } sketch)
+        loaded = loaded with { SketchSha256 = Known(asked.File, bytes) };
+        if (!cut || Catch(findings, () => pipeline.ReadSketch(new MemoryStream(bytes), asked.File, asked.Unit)) is not { } sketch)
         {
             return loaded;
         }
 
         findings.AddRange(sketch.Findings);
-        SectionReading? reading = Catch(findings, () => pipeline.Cut(sketch, RequestOf(file)));
+        SectionReading? reading = question.Request is { } request ? Catch(findings, () => pipeline.Cut(sketch, request)) : null;
         findings.AddRange(reading?.Findings ?? []);
         return loaded with { Sketch = sketch, Reading = reading };
     }
-
-    private static SectionRequest RequestOf(CaseFile file) => new()
-    {
-        PartLayers = [.. file.Parts.Select(p => p.Layer)],
-        MaterialKeys = [.. file.Parts.Select(p => p.AmpereTurns is { } a ? FormattableString.Invariant($"coil {p.Layer} {a:R}") : p.Substance.Key)],
-        CurrentLayers = [.. file.Parts.Where(p => p.AmpereTurns is not null).Select(p => p.Layer)],
-        BeamLayer = (file.Beam as BeamOnLayer)?.Layer,
-        RimLayer = file.Surroundings.RimLayer,
-        MirrorLeftRight = file.MirrorLeftRight,
-        Join = file.Sketch.Join,
-    };
 
     private PartRole RoleOf(PartSection part, string folder, MaterialShelf builtIn)
     {

@@ -19,7 +19,7 @@ internal sealed record LoadedCase
     /// <summary>Null when the drawing could not be read.</summary>
     public Sketch? Sketch { get; init; }
 
-    /// <summary>Null when there is no sketch.</summary>
+    /// <summary>Null when there is no sketch, or faults of the case leave open what its layers are.</summary>
     public SectionReading? Reading { get; init; }
 
     /// <summary>Roles of the parts in the order of the case; empty when the case has faults.</summary>

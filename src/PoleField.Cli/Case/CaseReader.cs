@@ -12,13 +12,16 @@ internal sealed record CaseSurroundings(string File, IReadOnlyCollection<string>
     public Func<string, bool> IsMagnetic { get; init; } = name => name != "air";
 }
 
-/// <summary>A case file read: the case, or everything that is wrong with it.</summary>
-internal sealed record CaseReading(CaseFile? Case, IReadOnlyList<Finding> Findings);
+/// <summary>A case file read: the case, or everything that is wrong with it; and in any case what it asks of its drawing.</summary>
+internal sealed record CaseReading(CaseFile? Case, SketchQuestion Question, IReadOnlyList<Finding> Findings);
 
 /// <summary>Reads a case file whole and reports all its faults at once, in the order of the file.</summary>
 internal static class CaseReader
 {
     private const int Format = 1;
+
+    // Tables that say what the layers of the drawing are.
+    private static readonly string[] AskingTables = ["sketch", "parts", "surroundings", "symmetry"];
 
     // Two micrometres: below any pole's form error, above the rounding of drawing programs.
     private const double DefaultJoin = 2e-6;
@@ -31,16 +34,19 @@ internal static class CaseReader
     {
         var faults = new Faults(around.File);
         TomlTable root = CaseValues.Changed(TomlDocument.Parse(text, around.File, faults), changes);
-        CaseFile file = Bind(new TableReader(root, string.Empty, faults), around);
+        (CaseFile file, bool isClear) = Bind(new TableReader(root, string.Empty, faults), around);
+        SketchQuestion question = SketchQuestion.Of(file, isClear && !faults.HasBrokenSyntax);
         faults.DropConsequencesOfBrokenSyntax();
-        return faults.Any ? new CaseReading(null, faults.Sorted) : new CaseReading(file, []);
+        return new CaseReading(faults.Count > 0 ? null : file, question, faults.Sorted);
     }
 
-    private static CaseFile Bind(TableReader root, CaseSurroundings around)
+    // Also tells whether what the case asks of its drawing was read without a fault.
+    private static (CaseFile File, bool IsClear) Bind(TableReader root, CaseSurroundings around)
     {
+        bool isClear = true;
         CheckFormat(root);
         string title = root.Text("title") ?? Path.GetFileNameWithoutExtension(around.File);
-        SketchSection sketch = ReadSketch(root, around);
+        SketchSection sketch = Asking(() => ReadSketch(root, around));
         IReadOnlyList<PartSection> parts = PartReader.ReadAll(root, around);
         var layers = parts.Select(p => p.Layer).ToList();
         var file = new CaseFile
@@ -48,8 +54,8 @@ internal static class CaseReader
             Title = title,
             Sketch = sketch,
             Parts = parts,
-            Surroundings = ReadSurroundings(root, layers),
-            MirrorLeftRight = ReadMirror(root),
+            Surroundings = Asking(() => ReadSurroundings(root, layers)),
+            MirrorLeftRight = Asking(() => ReadMirror(root)),
             Beam = ReadBeam(root, layers),
             Length = ReadSingle(root, "magnet", t => t.RequiredQuantity("length", Dimension.Length, Allowed.Positive)),
             Accuracy = ReadSingle(root, "accuracy", t => t.RequiredQuantity("relative", Dimension.Ratio, AccuracyRange)) ?? 1e-4,
@@ -62,7 +68,16 @@ internal static class CaseReader
             Flight = FlightReader.Read(root),
         };
         root.Close();
-        return file;
+        isClear &= !root.Unknown.Any(key => NearestName.Of(key, AskingTables) is not null);
+        return (file, isClear);
+
+        T Asking<T>(Func<T> read)
+        {
+            int before = root.Faults.Count;
+            T value = read();
+            isClear &= root.Faults.Count == before;
+            return value;
+        }
     }
 
     /// <summary>Accuracies the solver can be asked for.</summary>

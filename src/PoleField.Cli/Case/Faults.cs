@@ -5,7 +5,10 @@ internal sealed class Faults(string file)
 {
     private readonly List<Finding> _found = [];
 
-    public bool Any => _found.Count > 0;
+    public int Count => _found.Count;
+
+    /// <summary>True where lines of the file could not be read.</summary>
+    public bool HasBrokenSyntax => _found.Exists(f => f.What == "toml-syntax");
 
     /// <summary>All that was found, in the order of the file.</summary>
     public IReadOnlyList<Finding> Sorted => [.. _found.OrderBy(f => f.Line).ThenBy(f => f.Column)];
@@ -20,7 +23,7 @@ internal sealed class Faults(string file)
     /// </summary>
     public void DropConsequencesOfBrokenSyntax()
     {
-        if (_found.Exists(f => f.What == "toml-syntax"))
+        if (HasBrokenSyntax)
         {
             _found.RemoveAll(f => f.What is "missing-key" or "unknown-layer");
         }

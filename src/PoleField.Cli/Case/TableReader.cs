@@ -249,10 +249,15 @@ internal sealed class TableReader(TomlTable table, string path, Faults faults)
     public void WrongType(TomlNode node, string where, string wanted, string example) => faults.Add(
         node.At, "wrong-type", $"{where} is {node.Kind}; {wanted} is needed.", $"Write {example}.");
 
+    /// <summary>Keys nobody asked for so far.</summary>
+    public IEnumerable<string> Unknown => UnknownEntries.Select(e => e.Key);
+
+    private IEnumerable<TomlEntry> UnknownEntries => table.Entries.Where(e => !_known.Contains(e.Key));
+
     /// <summary>Reports every key nobody asked for.</summary>
     public void Close()
     {
-        foreach (TomlEntry entry in table.Entries.Where(e => !_known.Contains(e.Key)))
+        foreach (TomlEntry entry in UnknownEntries)
         {
             string what = entry.Value is TomlTable && path.Length == 0 ? $"Unknown table [{entry.Key}]" : $"Unknown key \"{entry.Key}\"";
             faults.Add(

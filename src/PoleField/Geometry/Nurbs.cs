@@ -105,6 +105,9 @@ public sealed record Nurbs : Curve
         }
     }
 
+    /// <summary>Box around the control points, which holds the curve.</summary>
+    internal Box Hull => _data.Controls.Aggregate(Box.Empty, (box, c) => box.Including(c.Place));
+
     /// <summary>Ranges between different knots, as parameters from 0 to 1: between neighbours the curve is one polynomial or rational piece.</summary>
     internal double[] Breaks() => [.. _spans.Select(s => Parameter(s.From)), 1.0];
 

@@ -21,6 +21,9 @@ internal readonly record struct NurbsControl(Point Place, double Weight)
 /// <summary>Knots and control points before they are known to form one smooth curve.</summary>
 internal sealed record NurbsKnots(int Degree, double[] Knots, NurbsControl[] Controls)
 {
+    // Beyond, products of weights and places lose all digits; drawings have weights from 0.1 to 10.
+    private const double LargestWeight = 1e12;
+
     /// <summary>Start of the curve's parameter range: knot [degree].</summary>
     public double From => Knots[Degree];
 
@@ -47,9 +50,14 @@ internal sealed record NurbsKnots(int Degree, double[] Knots, NurbsControl[] Con
                 $"it has {Knots.Length} knots; {Controls.Length} control points of degree {Degree} need {Controls.Length + Degree + 1}");
         }
 
-        if (!Array.TrueForAll(Controls, c => c.Place.IsFinite && c.Weight > 0.0 && double.IsFinite(c.Weight)))
+        if (!Array.TrueForAll(Controls, c => c.Place.IsFinite))
         {
-            return "a control point is not finite or a weight is not positive";
+            return "a control point is not finite";
+        }
+
+        if (Controls.FirstOrDefault(c => !(c.Weight >= 1 / LargestWeight) || !(c.Weight <= LargestWeight), new(default, 1)) is { Weight: not 1.0 and double weight })
+        {
+            return FormattableString.Invariant($"a weight is {weight}; {1 / LargestWeight} to {LargestWeight} is allowed");
         }
 
         for (int i = 0; i < Knots.Length; i++)
@@ -60,7 +68,7 @@ internal sealed record NurbsKnots(int Degree, double[] Knots, NurbsControl[] Con
             }
         }
 
-        return From < To ? null : "its first and last knots leave no range between them";
+        return From < To && double.IsFinite(To - From) ? null : "its first and last knots leave no range between them";
     }
 
     /// <summary>Interior knots at which the curve may have a kink: those as often repeated as the degree.</summary>

@@ -5,6 +5,9 @@ namespace PoleField.Geometry;
 /// </summary>
 internal sealed class NurbsSpan
 {
+    // Of one piece; a maximum takes about fifty, and rounding must not make it more.
+    private const int MostHalvings = 2000;
+
     // Homogeneous control points (w·y, w·z, w), places counted from the curve's start so that far drawings lose no digits.
     private readonly (double Y, double Z, double W)[] _control;
 
@@ -95,16 +98,23 @@ internal sealed class NurbsSpan
             size = Math.Max(size, Math.Abs(heights[i].H / w));
         }
 
-        return Reach(heights, known, 1e-15 * size, 60);
+        int budget = MostHalvings;
+        return Reach(heights, known, 1e-15 * size, ref budget);
     }
 
-    private static double Reach((double H, double W)[] heights, double known, double resolution, int halvings)
+    private static double Reach((double H, double W)[] heights, double known, double resolution, ref int budget)
     {
         known = Math.Max(known, Math.Max(heights[0].H / heights[0].W, heights[^1].H / heights[^1].W));
-        bool hidden = heights.All(h => h.H / h.W <= known + resolution);
-        if (hidden || halvings == 0)
+        double most = heights.Max(h => h.H / h.W);
+        if (!(most > known + resolution))
         {
             return known;
+        }
+
+        // The control points reach at least as far as the piece.
+        if (--budget < 0)
+        {
+            return most;
         }
 
         int p = heights.Length - 1;
@@ -119,8 +129,8 @@ internal sealed class NurbsSpan
             }
         }
 
-        known = Reach(left, known, resolution, halvings - 1);
-        return Reach(right, known, resolution, halvings - 1);
+        known = Reach(left, known, resolution, ref budget);
+        return Reach(right, known, resolution, ref budget);
     }
 
     private static (double Y, double Z, double W) Blend(

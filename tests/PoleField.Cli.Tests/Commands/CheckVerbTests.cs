@@ -75,7 +75,7 @@ public sealed class CheckVerbTests
     }
 
     [Fact]
-    public async Task FaultsOfTheCaseAreInTheJsonToo()
+    public async Task FaultsOfTheCaseAreInTheJsonTooWithTheDrawingsParts()
     {
         using var folder = new CaseFolder(Cases.Small.Replace("width", "widht", StringComparison.Ordinal));
 
@@ -84,7 +84,37 @@ public sealed class CheckVerbTests
 
         Assert.Equal(2, run.Status);
         Assert.Equal(["missing-key", "unknown-key"], json.GetProperty("faults").EnumerateArray().Select(f => Text(f, "what")));
-        Assert.Empty(json.GetProperty("parts").EnumerateArray());
+        Assert.Equal(["RIDGE", "COIL"], json.GetProperty("parts").EnumerateArray().Select(p => Text(p, "layer")));
+    }
+
+    [Theory]
+    [InlineData("check")]
+    [InlineData("solve")]
+    public async Task FaultsOfCaseAndDrawingComeTogether(string verb)
+    {
+        using var folder = new CaseFolder(Cases.Small.Replace("\"pure-iron\"", "\"pure-irn\"", StringComparison.Ordinal));
+
+        Run run = await Run.Of(With(Gap), verb, folder.CasePath);
+
+        Assert.Equal(2, run.Status);
+        Assert.Contains("\"pure-irn\"", run.All, StringComparison.Ordinal);
+        Assert.Contains("poles.dxf:120: fault:", run.All, StringComparison.Ordinal);
+    }
+
+    // What follows from a fault of the case alone is not told as a fault of the drawing.
+    [Theory]
+    [InlineData("[symmetry]\nmirror = \"left\"")]
+    [InlineData("[symetry]\nmirror = \"left-right\"")]
+    [InlineData("[symmetry")]
+    public async Task FaultsThatHideWhatTheLayersAreLeaveTheRegionsOut(string wrong)
+    {
+        using var folder = new CaseFolder(Cases.Small + wrong + "\n");
+
+        Run run = await Run.Of(With(Gap), "check", folder.CasePath);
+
+        Assert.Equal(2, run.Status);
+        Assert.DoesNotContain("poles.dxf:120", run.All, StringComparison.Ordinal);
+        Assert.Contains("sketch poles.dxf, in mm", run.Out, StringComparison.Ordinal);
     }
 
     [Fact]

@@ -231,7 +231,8 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
 
     private void CheckPlace(Curve curve, DxfShape shape, string layer)
     {
-        foreach (Point p in (ReadOnlySpan<Point>)[curve.Start, curve.End])
+        Box box = curve is Nurbs spline ? spline.Hull : curve.Bounds;
+        foreach (Point p in (ReadOnlySpan<Point>)[box.Min, box.Max])
         {
             if (!(Math.Abs(p.Y) <= _farthest) || !(Math.Abs(p.Z) <= _farthest))
             {

@@ -20,7 +20,7 @@ internal static class LeaningOutlines
 
         HashSet<int> taken = TakenFaces(map, layers, covers);
         List<(int Layer, List<int> Halves)> waiting = [.. layers.Where(l => l.Role == LayerRole.Part)
-            .SelectMany(l => Chains(map, covers[l.Index].OpenEdges).Select(c => (l.Index, c)))];
+            .SelectMany(l => Chains(map, covers[l.Index].OpenEdges).Where(c => Leans(map, c)).Select(c => (l.Index, c)))];
 
         // Closing one outline may leave only one meaning for the next.
         while (waiting.FindIndex(w => FreeSide(map, w.Halves, taken) >= 0) is int next and >= 0)
@@ -57,6 +57,10 @@ internal static class LeaningOutlines
 
         return taken;
     }
+
+    // With the edge it leans on a chain parts two faces all along; one that ends in the open does not. And some of it is its own.
+    private static bool Leans(PlanarMap map, List<int> halves) =>
+        halves.TrueForAll(h => map.FaceOf(h) != map.FaceOf(h ^ 1)) && halves.Exists(h => map.Edges[h >> 1].Layers.Count == 1);
 
     // Half-edge with the one free face beside the whole chain on its left; −1 when there is none or a choice.
     private static int FreeSide(PlanarMap map, List<int> halves, HashSet<int> taken)

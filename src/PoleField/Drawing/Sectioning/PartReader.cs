@@ -19,7 +19,7 @@ internal sealed class PartReader(UsedLayers layers, SectionRequest request, Sect
         PlanarMap map = new(net.Points, Weaving.Weave(net, reach, log));
         List<LayerCover> covers = Covers(map, reach);
         FaceOwners owners = new(map, used, covers, reach, log);
-        CheckCoils(map, owners);
+        CoilCheck.Report(map, owners, layers, request, log);
         shapes = Shapes(map, covers, owners);
         SectionRemarks.OnSize(shapes, log);
         if (log.HasFaults)
@@ -50,25 +50,6 @@ internal sealed class PartReader(UsedLayers layers, SectionRequest request, Sect
         }
 
         return covers;
-    }
-
-    // A coil on the symmetry line would lie in the place of its own image.
-    private void CheckCoils(PlanarMap map, FaceOwners owners)
-    {
-        HashSet<string> carrying = new(request.CurrentLayers, StringComparer.OrdinalIgnoreCase);
-        HashSet<int> told = [];
-        for (int e = 0; request.MirrorLeftRight && e < map.Edges.Count; e++)
-        {
-            foreach (int face in new[] { map.Left(e), map.Right(e) }.Where(f => owners.Owner[f] >= 0))
-            {
-                UsedLayer layer = layers.Section[owners.LayerOf(owners.Owner[face])];
-                if (HalfClosing.IsOnAxis(map.Edges[e].Curve) && carrying.Contains(layer.Name) && told.Add(layer.Index))
-                {
-                    Point at = map.Edges[e].Curve.At(0.5);
-                    log.Add(SectionMessages.CoilOnSymmetry(log, layer.Name, at), at, map.Edges[e].Source);
-                }
-            }
-        }
     }
 
     private List<PartShape> Shapes(PlanarMap map, List<LayerCover> covers, FaceOwners owners)

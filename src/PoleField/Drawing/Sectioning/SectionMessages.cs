@@ -101,6 +101,13 @@ internal static class SectionMessages
         "Draw the coil clear of y = 0.")
     { Layer = layer };
 
+    public static Finding CoilCut(SectionLog log, string layer, int pieces, Point at) => new(
+        Severity.Fault,
+        "coil-cut",
+        FormattableString.Invariant($"An outline of the coil on layer {layer} is cut into {pieces} pieces by other parts, first at {log.Place(at)}; ampere-turns are stated for an outline, and how they are shared among pieces is not."),
+        "Draw each piece as an outline of its own and state the ampere-turns of one, or move the part that cuts.")
+    { Layer = layer };
+
     public static Finding MissingLayer(string layer, string what, string? skipped, string? nearest, string found) => new(
         Severity.Fault,
         "missing-layer",

@@ -1,15 +1,25 @@
 // Truth: whatever happens to a drawing's bytes, reading ends, with a sketch or with an InputException that names faults;
 // an undamaged coordinate is never lost silently.
+using System.Diagnostics;
 using System.Text;
 using PoleField.Drawing;
+using PoleField.Tests.House;
 using Xunit;
 
 namespace PoleField.Tests.Drawing.Dxf;
 
 public sealed class FuzzTests
 {
-    private const int Mutations = 5_000;
     private const int Seed = 20250611;
+    private const double MostSeconds = 5;
+    private const long MostBytes = 64 << 20; // of one small drawing
+
+    // One drawing in so many is also cut into regions.
+    private const int SectionedShare = 10;
+
+    private static readonly int Mutations = FuzzCount.Or(5_000);
+
+    private static readonly SectionRequest Request = new() { PartLayers = ["IRON", "COIL"], MaterialKeys = ["steel", "coil"], CurrentLayers = ["COIL"], BeamLayer = "BEAM" };
 
     private static readonly HandDrawn Drawing = HandDrawn.With(
         "0 LINE; 5 1; 8 IRON; 10 0; 20 0; 11 1.5; 21 0.25",
@@ -37,9 +47,16 @@ public sealed class FuzzTests
         for (int trial = 0; trial < Mutations; trial++)
         {
             byte[] mutated = Mutate(original, random);
+            long allocated = GC.GetAllocatedBytesForCurrentThread();
+            var clock = Stopwatch.StartNew();
             try
             {
-                HandDrawn.Read(mutated, limits);
+                Sketch sketch = HandDrawn.Read(mutated, limits);
+                if (trial % SectionedShare == 0)
+                {
+                    SectionReading reading = PoleField.Drawing.Sectioning.Read(sketch, Request with { MirrorLeftRight = random.Next(4) == 0 });
+                    Assert.Equal(reading.IsSound, reading.Findings.All(f => f.Severity != Severity.Fault));
+                }
             }
             catch (InputException e)
             {
@@ -49,12 +66,30 @@ public sealed class FuzzTests
             }
             catch (Exception e) when (e is not Xunit.Sdk.XunitException)
             {
-                Assert.Fail($"Trial {trial} of seed {Seed}: {e}");
+                Assert.Fail($"Trial {trial} of seed {Seed}: {e}\n{Encoding.Latin1.GetString(mutated)}");
             }
+
+            allocated = GC.GetAllocatedBytesForCurrentThread() - allocated;
+            Assert.True(
+                clock.Elapsed.TotalSeconds < MostSeconds && allocated < MostBytes,
+                $"Trial {trial} of seed {Seed} took {clock.Elapsed.TotalSeconds:f1} s and {allocated >> 20} MB.\n{Encoding.Latin1.GetString(mutated)}");
         }
 
         Assert.InRange(refused, Mutations / 4, Mutations - 1);
     }
+
+    // Found by mutation: products of such weights overflow, and the search for the box of the curve never ended.
+    [Theory]
+    [InlineData("41 1; 41 1e308; 41 1")]
+    [InlineData("41 1; 41 1e-308; 41 1")]
+    public void A_spline_whose_weights_have_no_digits_is_refused(string weights) =>
+        Assert.Contains("a weight is 1E", HandDrawn.With($"0 SPLINE; 8 A; 71 2; 40 0; 40 0; 40 0; 40 1; 40 1; 40 1; 10 1; 20 0; 10 1; 20 1; 10 0; 20 1; {weights}").Fault().Text, StringComparison.Ordinal);
+
+    [Theory]
+    [InlineData("0 SPLINE; 8 A; 71 2; 40 0; 40 0; 40 0; 40 1; 40 1; 40 1; 10 1; 20 0; 10 1e300; 20 1; 10 0; 20 1")]
+    [InlineData("0 LWPOLYLINE; 8 A; 10 0; 20 0; 42 1e150; 10 1; 20 0")]
+    public void A_curve_that_reaches_out_of_the_world_between_its_ends_is_refused(string entity) =>
+        Assert.Equal("limit", HandDrawn.With(entity).Fault().What);
 
     [Fact]
     public void A_drawing_that_lost_a_coordinate_pair_is_never_read()

@@ -123,6 +123,38 @@ public sealed class RegionTests
         Assert.Equal((10 * 3) - (0.5 * Math.PI * 9), Areas(s, "POLE").Single(), Digits);
     }
 
+    // A tip on a frame, one flank missing: its foot lies on the frame's edge, which must not close it.
+    [Theory]
+    [InlineData(0)]
+    [InlineData(1)]
+    [InlineData(2)]
+    public void OutlineThatEndsInTheOpenLeansOnNothing(int missing)
+    {
+        SketchCurve[] sides = [Line("TIP", 6, 2, 6, 8), Line("TIP", 6, 8, 10, 8), Line("TIP", 10, 8, 10, 2)];
+        Sketch sketch = Sketch(
+            Rectangle("FRAME", 0, 0, 16, 16), Rectangle("FRAME", 2, 2, 14, 14), [Line("TIP", 6, 2, 10, 2)], sides.Where((_, i) => i != missing));
+
+        SectionReading reading = PoleField.Drawing.Sectioning.Read(sketch, Parts("FRAME", "TIP"));
+
+        Assert.Equal(["open-outline"], Faults(reading));
+        Assert.DoesNotContain(reading.Findings, f => f.What == "closed-by-neighbour");
+        Assert.Equal(["FRAME"], reading.Parts.Select(p => p.Layer));
+    }
+
+    [Fact]
+    public void CoilCutInTwoIsAFaultAndAHoleInItIsNot()
+    {
+        Sketch cut = Sketch(Rectangle("COIL", 0, 0, 20, 6), Rectangle("PIN", 8, 0, 12, 6));
+        Sketch holed = Sketch(Rectangle("COIL", 0, 0, 20, 6), Rectangle("PIN", 8, 1, 12, 5));
+        SectionRequest request = Parts("COIL", "PIN") with { CurrentLayers = ["COIL"] };
+
+        Finding fault = Assert.Single(PoleField.Drawing.Sectioning.Read(cut, request).Findings, f => f.Severity == Severity.Fault);
+        Assert.Equal(("coil-cut", "COIL"), (fault.What, fault.Layer));
+        Assert.Contains("cut into 2 pieces by other parts, first at (12, 3) mm", fault.Text, StringComparison.Ordinal);
+        Sound(holed, request);
+        Sound(cut, request with { CurrentLayers = [] });
+    }
+
     [Fact]
     public void OverlapMissingLayerAndOpenOutlineAreAllToldAtOnce()
     {
