@@ -53,6 +53,11 @@ public readonly record struct Box(Point Min, Point Max)
     /// <summary>True when the point lies inside or on the edge.</summary>
     public bool Contains(Point p) => p.Y >= Min.Y && p.Y <= Max.Y && p.Z >= Min.Z && p.Z <= Max.Z;
 
+    /// <summary>Distance from a point to the box, 0 inside it.</summary>
+    public double DistanceTo(Point p) => new Point(
+        Math.Max(0, Math.Max(Min.Y - p.Y, p.Y - Max.Y)),
+        Math.Max(0, Math.Max(Min.Z - p.Z, p.Z - Max.Z))).Length;
+
     /// <summary>True when the two boxes share a point.</summary>
     public bool Overlaps(Box other) =>
         Min.Y <= other.Max.Y && other.Min.Y <= Max.Y && Min.Z <= other.Max.Z && other.Min.Z <= Max.Z;

@@ -28,7 +28,7 @@ public sealed record Nurbs : Curve
     /// <exception cref="ArgumentException">The numbers do not fit together, or the curve has a kink inside or no length.</exception>
     public Nurbs(
         int degree, IReadOnlyList<double> knots, IReadOnlyList<Point> controls, IReadOnlyList<double>? weights = null)
-        : this(Checked(degree, knots, controls, weights), cut: true)
+        : this(NurbsKnots.Of(degree, knots, controls, weights), cut: true)
     {
     }
 
@@ -119,7 +119,7 @@ public sealed record Nurbs : Curve
     public static IReadOnlyList<Curve> SmoothPieces(
         int degree, IReadOnlyList<double> knots, IReadOnlyList<Point> controls, IReadOnlyList<double>? weights = null)
     {
-        NurbsKnots data = Checked(degree, knots, controls, weights);
+        NurbsKnots data = NurbsKnots.Of(degree, knots, controls, weights);
         double[] cuts = [data.From, .. data.Kinks(), data.To];
         var pieces = new List<Curve>();
         for (int i = 1; i < cuts.Length; i++)
@@ -232,7 +232,7 @@ public sealed record Nurbs : Curve
         // Two samples per possible extremum and one more; pieces whose control points are all farther away are left out.
         foreach (NurbsSpan span in _spans)
         {
-            if (Distance(span.Hull, p) <= least)
+            if (span.Hull.DistanceTo(p) <= least)
             {
                 best = NearestPoint.Improve(this, p, best, (Parameter(span.From), Parameter(span.To)), (4 * Degree) + 1);
                 least = Math.Min(least, p.DistanceTo(At(best)));
@@ -250,24 +250,6 @@ public sealed record Nurbs : Curve
 
     /// <inheritdoc/>
     public override int GetHashCode() => HashCode.Combine(Degree, Start, End, _data.Knots.Length);
-
-    private static NurbsKnots Checked(
-        int degree, IReadOnlyList<double> knots, IReadOnlyList<Point> controls, IReadOnlyList<double>? weights)
-    {
-        if (weights is not null && weights.Count != controls.Count)
-        {
-            throw new ArgumentException(FormattableString.Invariant(
-                $"A spline cannot be made: it has {weights.Count} weights for {controls.Count} control points."));
-        }
-
-        var data = new NurbsKnots(
-            degree, [.. knots], [.. controls.Select((c, i) => new NurbsControl(c, weights?[i] ?? 1.0))]);
-        return data.Fault() is { } fault ? throw new ArgumentException($"A spline cannot be made: {fault}.") : data;
-    }
-
-    private static double Distance(Box box, Point p) => new Point(
-        Math.Max(0, Math.Max(box.Min.Y - p.Y, p.Y - box.Max.Y)),
-        Math.Max(0, Math.Max(box.Min.Z - p.Z, p.Z - box.Max.Z))).Length;
 
     private double Reach(Point direction, double known)
     {

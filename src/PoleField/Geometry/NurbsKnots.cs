@@ -24,6 +24,20 @@ internal sealed record NurbsKnots(int Degree, double[] Knots, NurbsControl[] Con
     // Beyond, products of weights and places lose all digits; drawings have weights from 0.1 to 10.
     private const double LargestWeight = 1e12;
 
+    /// <summary>Knots, control points and weights (all 1 when null) that fit together.</summary>
+    /// <exception cref="ArgumentException">They do not.</exception>
+    public static NurbsKnots Of(int degree, IReadOnlyList<double> knots, IReadOnlyList<Point> controls, IReadOnlyList<double>? weights)
+    {
+        if (weights is not null && weights.Count != controls.Count)
+        {
+            throw new ArgumentException(FormattableString.Invariant(
+                $"A spline cannot be made: it has {weights.Count} weights for {controls.Count} control points."));
+        }
+
+        NurbsKnots data = new(degree, [.. knots], [.. controls.Select((c, i) => new NurbsControl(c, weights?[i] ?? 1.0))]);
+        return data.Fault() is { } fault ? throw new ArgumentException($"A spline cannot be made: {fault}.") : data;
+    }
+
     /// <summary>Start of the curve's parameter range: knot [degree].</summary>
     public double From => Knots[Degree];
 
