@@ -17,7 +17,7 @@ public sealed class FuzzTests
     // One drawing in so many is also cut into regions.
     private const int SectionedShare = 10;
 
-    private static readonly int Mutations = FuzzCount.Or(5_000);
+    private static readonly int Mutations = RandomRuns.Count("POLEFIELD_RANDOM_DRAWINGS", 5_000);
 
     private static readonly SectionRequest Request = new() { PartLayers = ["IRON", "COIL"], MaterialKeys = ["steel", "coil"], CurrentLayers = ["COIL"], BeamLayer = "BEAM" };
 

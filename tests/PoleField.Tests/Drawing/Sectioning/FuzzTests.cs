@@ -41,7 +41,7 @@ public sealed class FuzzTests
                 Assert.Equal(figures.Exists(f => f.Holds(y, z)) ? 1 : 0, covers);
             }
         }
-    }, iter: FuzzCount.Or(200));
+    }, iter: RandomRuns.Count("POLEFIELD_RANDOM_DRAWINGS", 200));
 
     [Fact]
     public void WhateverIsDrawnEndsInASoundSectionOrInFaults() =>
@@ -56,5 +56,5 @@ public sealed class FuzzTests
 
             Assert.Equal(Faults(reading).Length == 0, reading.IsSound);
             Assert.Empty(reading.IsSound ? CrossSectionCheck.Faults(reading.Section!) : []);
-        }, iter: FuzzCount.Or(1000));
+        }, iter: RandomRuns.Count("POLEFIELD_RANDOM_DRAWINGS", 1000));
 }
