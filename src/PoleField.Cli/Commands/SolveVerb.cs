@@ -102,6 +102,11 @@ internal sealed class SolveVerb
             SolveTables.Write(_tool.Terminal.Out, result, _tool.OutInk(arguments));
         }
 
+        if (arguments.GetValue(_tool.Verbose))
+        {
+            RoundTables.Write(_tool.Terminal.Error, result.Solved.Record);
+        }
+
         if (target is not null && !quiet)
         {
             _tool.Terminal.Error.WriteLine($"Result: {target}");

@@ -15,7 +15,7 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
 
     public Option<bool> NoColor { get; } = new("--no-color") { Description = "No colour (also with NO_COLOR set or TERM=dumb).", Recursive = true };
 
-    public Option<bool> Verbose { get; } = new("--verbose") { Description = "More about a fault in PoleField itself.", Recursive = true };
+    public Option<bool> Verbose { get; } = new("--verbose") { Description = "More about the run, mesh by mesh, and about a fault in PoleField itself.", Recursive = true };
 
     public Terminal Terminal => terminal;
 

@@ -35,7 +35,8 @@ public sealed record BeamSection(
     [property: JsonPropertyName("gradient_error_T_per_m"), Description("Error bar of G (discretisation).")] double? GradientError,
     [property: JsonPropertyName("dbz_dz_T_per_m"), Description("dBz/dz; differs from G off the mid-plane.")] double? DBzDz,
     [property: JsonPropertyName("dby_dz_T_per_m"), Description("dBy/dz = dBz/dy.")] double? DByDz,
-    [property: JsonPropertyName("transverse_gradient_T_per_m"), Description("d|B|/dy, signed.")] double? TransverseGradient);
+    [property: JsonPropertyName("transverse_gradient_T_per_m"), Description("d|B|/dy, signed.")] double? TransverseGradient,
+    [property: JsonPropertyName("method"), Description("harmonic-band: one exactly harmonic function; local-fits: fitted place by place beside a part, with longer error bars.")] string Method);
 
 /// <summary>Statistics over the aperture, area-weighted.</summary>
 public sealed record ApertureSection(
@@ -96,7 +97,9 @@ public sealed record PartSection(
     [property: JsonPropertyName("field_p99_T"), Description("Flux density that 99 % of the area stays below.")] double? FieldP99 = null,
     [property: JsonPropertyName("saturated_share"), Description("Share of the area polarised above 90 % of saturation.")] double? SaturatedShare = null,
     [property: JsonPropertyName("mmf_drop_A"), Description("Ampere-turns dropped along the main flux path.")] double? MmfDrop = null,
-    [property: JsonPropertyName("force_N_per_m"), Description("Magnetic force per metre of length: [y, z].")] IReadOnlyList<double>? Force = null);
+    [property: JsonPropertyName("force_N_per_m"), Description("Magnetic force per metre of length: [y, z].")] IReadOnlyList<double>? Force = null,
+    [property: JsonPropertyName("force_other_way_N_per_m"), Description("The same by another law: stress around conductors, stress along a closed path around iron; the difference is the force's error.")] IReadOnlyList<double>? ForceOtherWay = null,
+    [property: JsonPropertyName("force_on_free_faces_only"), Description("True when the part is joined to other iron and the force is the pull on its faces in air alone.")] bool? ForceOnFreeFacesOnly = null);
 
 /// <summary>Balance of the magnetic circuit.</summary>
 public sealed record CircuitSection(
@@ -105,7 +108,8 @@ public sealed record CircuitSection(
     [property: JsonPropertyName("iron_ampere_turns"), Description("The rest.")] double? IronAmpereTurns,
     [property: JsonPropertyName("efficiency"), Description("Gap share of the ampere-turns; null without currents.")] double? Efficiency,
     [property: JsonPropertyName("energy_J_per_m"), Description("Stored energy per metre of length.")] double? Energy,
-    [property: JsonPropertyName("inductance_uH_per_m_turn2"), Description("Inductance per metre and turn squared; null without currents.")] double? Inductance);
+    [property: JsonPropertyName("inductance_uH_per_m_turn2"), Description("Inductance per metre and turn squared; null without currents.")] double? Inductance,
+    [property: JsonPropertyName("gap_pull_N_per_m"), Description("Pull per metre of length across the horizontal line through the beam, positive when the poles attract each other.")] double? GapPull);
 
 /// <summary>The last mesh.</summary>
 public sealed record MeshSection(
@@ -118,10 +122,18 @@ public sealed record MeshSection(
 public sealed record RunSection(
     [property: JsonPropertyName("newton_steps"), Description("Newton steps of all solves.")] int NewtonSteps,
     [property: JsonPropertyName("adaptive_steps"), Description("Meshes refined.")] int AdaptiveSteps,
+    [property: JsonPropertyName("meshes"), Description("Mesh by mesh, how the accuracy was reached.")] IReadOnlyList<RoundSection> Meshes,
     [property: JsonPropertyName("seconds"), Description("Wall-clock seconds.")] SecondsSection Seconds,
     [property: JsonPropertyName("peak_memory_MB"), Description("Largest memory held, 10^6 bytes.")] double? PeakMemory,
     [property: JsonPropertyName("accuracy_reached"), Description("Largest relative error bar of field and gradient.")] double? AccuracyReached,
     [property: JsonPropertyName("accuracy_asked"), Description("Relative accuracy asked for.")] double? AccuracyAsked);
+
+/// <summary>One mesh of the run.</summary>
+public sealed record RoundSection(
+    [property: JsonPropertyName("triangles"), Description("Triangles.")] int Triangles,
+    [property: JsonPropertyName("unknowns"), Description("Unknowns.")] int Unknowns,
+    [property: JsonPropertyName("newton_steps"), Description("Newton steps on it.")] int NewtonSteps,
+    [property: JsonPropertyName("accuracy"), Description("Largest relative error bar of field and gradient over the aperture.")] double? Accuracy);
 
 /// <summary>Wall-clock seconds.</summary>
 public sealed record SecondsSection(

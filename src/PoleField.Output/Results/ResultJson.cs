@@ -94,7 +94,8 @@ public static class ResultJson
             Finite(report.GradientError),
             Finite(b.DBzDz),
             Finite(b.DByDz),
-            Finite(b.TransverseGradient));
+            Finite(b.TransverseGradient),
+            report.Method == BeamFieldMethod.LocalFits ? "local-fits" : "harmonic-band");
     }
 
     private static ApertureSection Aperture(BeamReport report)
@@ -126,7 +127,9 @@ public static class ResultJson
         Finite(p.FieldP99),
         Finite(p.SaturatedShare),
         Finite(p.MmfDrop),
-        p.ForcePerMetre is Point force ? Pair(force) : null);
+        p.ForcePerMetre is Point force ? Pair(force) : null,
+        p.ForceOtherWay is Point other ? Pair(other) : null,
+        p.ForceOnFreeFacesOnly ? true : null);
 
     private static CircuitSection Circuit(CircuitReport c) => new(
         Finite(c.AmpereTurns),
@@ -134,7 +137,8 @@ public static class ResultJson
         Finite(c.IronAmpereTurns),
         Finite(c.Efficiency),
         Finite(c.EnergyPerMetre),
-        Finite(c.InductancePerMetre * 1e6));
+        Finite(c.InductancePerMetre * 1e6),
+        Finite(c.GapPullPerMetre));
 
     private static RunSection Run(SolveResult result)
     {
@@ -142,6 +146,7 @@ public static class ResultJson
         return new RunSection(
             result.Record.NewtonSteps,
             result.Record.AdaptiveSteps,
+            [.. result.Record.Rounds.Select(r => new RoundSection(r.Triangles, r.Unknowns, r.NewtonSteps, Finite(r.Accuracy)))],
             new SecondsSection(Finite(s.Read), Finite(s.Mesh), Finite(s.Solve), Finite(s.Evaluate), Finite(s.Total)),
             Finite(result.PeakMemoryMB),
             Finite(result.Record.AccuracyReached),

@@ -22,34 +22,34 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     private const double LeastGain = 0.5;
     private const int PatientMeshes = 3;
 
+    // So often the elements around the aperture are halved to make room for a band before it is done without.
+    private const int MostHalvings = 4;
+    private const double LocalFitReduction = 0.7;
+
     private readonly SolveOptions _options = settings.Options;
     private readonly CancellationToken _cancellation = settings.Cancellation;
     private readonly Stopwatch _meshing = new();
     private readonly Stopwatch _solving = new();
     private readonly Stopwatch _evaluating = new();
-    private readonly List<double> _accuracies = [];
+    private readonly List<MeshRound> _rounds = [];
     private double _openDiscSize = new MeshOptions().OpenDiscSize;
-    private int _newtonSteps;
     private double _accuracy = double.NaN;
 
     /// <summary>Meshes, solves, estimates and refines until the asked accuracy is reached.</summary>
     public SolvedMagnet ToAccuracy()
     {
         SizeField size = MeshSizing.For(
-            magnet.Section, place.Aperture.Outline, MagneticParts(magnet), Fineness(_options.Accuracy));
+            magnet.Section, place.Aperture.Outline, magnet.MagneticParts, Fineness(_options.Accuracy));
         FieldSolution? previous = null;
+        int halvings = 0;
         for (int step = 1; ; step++)
         {
             (FieldSolution solution, FieldEquations equations) = SolveOn(NewMesh(size, step), step, previous);
             previous = solution;
-            if (BandCutOff.Nodal(solution.Problem, place.Shape) is not { } chi)
+            double[]? chi = Band(solution.Problem);
+            if (chi is null && !place.Touches && halvings++ < MostHalvings)
             {
-                size = size.With([.. place.Shape.EdgePoints(PointsPerSide()).Select(p => (p, 0.5 * size.At(p)))]);
-                if (step > _options.MostAdaptiveSteps)
-                {
-                    throw NoBand();
-                }
-
+                size = WithFinerAperture(size, 0.5);
                 continue;
             }
 
@@ -60,12 +60,7 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
                 return Finish(estimate, equations, step);
             }
 
-            _evaluating.Start();
-            double[][] indicators = estimate.Higher.Indicators(BeamGoals.Derivatives(estimate.Better, estimate.Corrected, place.Shape));
-            double tolerance = _options.Accuracy / BeamEstimate.ErrorBarFactor;
-            size = Refinement.Next(size, solution.Problem.Space, indicators, tolerance);
-            _openDiscSize *= Refinement.OfOpenDisc(solution.Problem.Space, indicators, tolerance);
-            _evaluating.Stop();
+            size = NextSize(size, estimate);
         }
     }
 
@@ -73,21 +68,35 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
     public SolvedMagnet OnMeshOf(FieldSolution other, double scale)
     {
         (FieldSolution solution, FieldEquations equations) = SolveOn(other.Mesh, 1, other, scale);
-        double[] chi = BandCutOff.Nodal(solution.Problem, place.Shape) ?? throw NoBand();
-        return Finish(Estimate(solution, equations, chi, 1), equations, 1);
+        return Finish(Estimate(solution, equations, Band(solution.Problem), 1), equations, 1);
     }
 
-    private bool IsStuck()
+    private double[]? Band(FieldProblem problem) => place.Touches ? null : BandCutOff.Nodal(problem, place.Shape);
+
+    private SizeField NextSize(SizeField size, BeamEstimate estimate)
     {
-        _accuracies.Add(_accuracy);
-        return _accuracies.Count > PatientMeshes && !(_accuracies.TakeLast(PatientMeshes).Min() < LeastGain * _accuracies[^(PatientMeshes + 1)]);
+        _evaluating.Start();
+        var refinement = new Refinement(estimate, _options.Accuracy);
+        SizeField next = refinement.Next(size);
+        _openDiscSize *= refinement.OfOpenDisc();
+
+        // The adjoint sees the elements' error, not what a fitted polynomial of limited degree leaves out.
+        next = estimate.Field.Method == BeamFieldMethod.LocalFits ? WithFinerAperture(next, LocalFitReduction) : next;
+        _evaluating.Stop();
+        return next;
     }
+
+    private SizeField WithFinerAperture(SizeField size, double factor)
+    {
+        IEnumerable<Point> places = place.Shape.EdgePoints(PointsPerSide()).Concat(place.Samples.Inside);
+        return size.With([.. places.Select(p => (p, factor * size.At(p)))]);
+    }
+
+    private bool IsStuck() => _rounds.Count > PatientMeshes
+        && !(_rounds.TakeLast(PatientMeshes).Min(r => r.Accuracy) < LeastGain * _rounds[^(PatientMeshes + 1)].Accuracy);
 
     private static double Fineness(double accuracy) =>
         Math.Clamp(Math.Pow(accuracy / RuleAccuracy, 1 / RuleOrder), Finest, Coarsest);
-
-    private static int[] MagneticParts(Magnet magnet) =>
-        [.. Enumerable.Range(0, magnet.Roles.Count).Where(part => magnet.Roles[part].Material.IsMagnetic)];
 
     // Close enough that no large element is left between two of them.
     private int PointsPerSide()
@@ -95,9 +104,6 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
         Box box = place.Aperture.Outline.Bounds;
         return (int)Math.Clamp(Math.Ceiling(2 * Math.Max(box.Width, box.Height) / place.Clearance), 8, 200);
     }
-
-    private MeshingException NoBand() =>
-        new("No band of air elements fits between the aperture and its surroundings.", place.Aperture.Centre);
 
     private InputException TooLarge(int unknowns) => new(
     [
@@ -137,7 +143,6 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
             start,
             (k, newton) => Report("solve", step, equations.PotentialCount, k, newton.Decrement),
             _cancellation);
-        _newtonSteps += history.Count;
         _solving.Stop();
         return (new FieldSolution(problem, potential, history), equations);
     }
@@ -156,12 +161,13 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
         return start;
     }
 
-    private BeamEstimate Estimate(FieldSolution solution, FieldEquations equations, double[] chi, int step)
+    private BeamEstimate Estimate(FieldSolution solution, FieldEquations equations, double[]? chi, int step)
     {
         _evaluating.Start();
         Report("estimate", step, equations.PotentialCount, 0, double.NaN);
         BeamEstimate estimate = BeamEstimate.Of(solution, chi, place, _options.Threads, _cancellation);
         _accuracy = estimate.Accuracy;
+        _rounds.Add(new MeshRound(solution.Mesh.TriangleCount, equations.PotentialCount, _accuracy, solution.History));
         _evaluating.Stop();
         return estimate;
     }
@@ -177,11 +183,12 @@ internal sealed class AdaptiveRun(Magnet magnet, BeamPlace place, RunSettings se
             equations.PotentialCount,
             solution.Order,
             MeshQuality.Of(solution.Mesh).SmallestAngleDegrees,
-            _newtonSteps,
+            _rounds.Sum(r => r.NewtonSteps),
             steps - 1,
             _accuracy,
             _options.Accuracy)
         {
+            Rounds = _rounds,
             MeshSeconds = _meshing.Elapsed.TotalSeconds,
             SolveSeconds = _solving.Elapsed.TotalSeconds,
             EvaluateSeconds = _evaluating.Elapsed.TotalSeconds,

@@ -1,6 +1,5 @@
 using PoleField.Geometry;
 using PoleField.Magnetostatics;
-using PoleField.Materials;
 using PoleField.Meshing;
 
 namespace PoleField.Beam;
@@ -61,10 +60,7 @@ internal static class BandCutOff
         var obstacle = new bool[space.NodeCount];
         for (int e = 0; e < space.ElementCount; e++)
         {
-            ref readonly RegionPhysics physics = ref problem.PhysicsOf(e);
-            bool air = physics.Law is LinearLaw { RelativePermeability: 1.0 } && physics.CurrentDensity == 0.0
-                && physics.RemanentGradient == default && space.Mesh.Regions[e] != Mesh.Exterior;
-            if (!air)
+            if (!problem.IsAir(e))
             {
                 foreach (int node in space.NodesOf(e))
                 {

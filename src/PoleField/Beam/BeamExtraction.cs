@@ -10,7 +10,7 @@ namespace PoleField.Beam;
 /// F⁽ⁿ⁾(ζ₀) = ∫ [Dₙ ∇A·∇χ − A (∂yχ + i ∂zχ) Eₙ] dS with d = ζ − ζ₀, Dₙ = −(n−1)!/(2π dⁿ), Eₙ = n!/(2π dⁿ⁺¹),
 /// an identity for every continuous χ that is 1 around ζ₀ and 0 where A is not harmonic.
 /// </summary>
-internal sealed class BeamExtraction
+internal sealed class BeamExtraction : IBeamExtraction
 {
     private const int ExtraPoints = 4; // quadrature points per direction beyond the order
 
@@ -54,7 +54,10 @@ internal sealed class BeamExtraction
         return new BeamExtraction(space, table, [.. band], chi);
     }
 
-    /// <summary>The beam's field of a potential given by node.</summary>
+    /// <inheritdoc/>
+    public FiniteElementSpace Space => _space;
+
+    /// <inheritdoc/>
     public BeamField FieldOf(Aperture aperture, double[] potential)
     {
         var charge = new double[_y.Length];
@@ -85,13 +88,10 @@ internal sealed class BeamExtraction
             }
         }
 
-        return new BeamField(aperture, _y, _z, charge, dipoleY, dipoleZ);
+        return new BeamField(aperture, new BandSources(_y, _z, charge, dipoleY, dipoleZ).At, BeamFieldMethod.HarmonicBand);
     }
 
-    /// <summary>Derivative by the nodes' potentials of Re(first·F′ + second·F″) at a place.</summary>
-    public double[] Functional(Point at, Complex first, Complex second) => Functional([new BeamTerm(at, first, second)]);
-
-    /// <summary>Derivative by the nodes' potentials of a sum of Re(first·F′ + second·F″) over places.</summary>
+    /// <inheritdoc/>
     public double[] Functional(IReadOnlyList<BeamTerm> terms)
     {
         var derivative = new double[_space.NodeCount];
@@ -128,37 +128,6 @@ internal sealed class BeamExtraction
         return derivative;
     }
 
-    /// <summary>
-    /// Largest error of the quadrature at the given places, relative: the identity applied to A = 1 (must give 0) and to
-    /// A = y (must give F′ = 1, F″ = 0), lengths in units of <paramref name="scale"/>.
-    /// </summary>
-    public double SelfCheck(Aperture aperture, IEnumerable<Point> places, double scale)
-    {
-        var ones = new double[_space.NodeCount];
-        var linear = new double[_space.NodeCount];
-        Point origin = aperture.Centre;
-        for (int node = 0; node < ones.Length; node++)
-        {
-            ones[node] = 1.0;
-            linear[node] = _space.Places[node].Y - origin.Y;
-        }
-
-        BeamField one = FieldOf(aperture, ones);
-        BeamField y = FieldOf(aperture, linear);
-        double worst = 0;
-        foreach (Point p in places)
-        {
-            BeamValues v = one.At(p);
-            worst = Math.Max(worst, scale * Math.Max(Math.Abs(v.By), Math.Abs(v.Bz)));
-            worst = Math.Max(worst, scale * scale * Math.Max(Math.Abs(v.DByDz), Math.Abs(v.DBzDz)));
-            v = y.At(p);
-            worst = Math.Max(worst, Math.Max(Math.Abs(v.By), Math.Abs(v.Bz + 1)));
-            worst = Math.Max(worst, scale * Math.Max(Math.Abs(v.DByDz), Math.Abs(v.DBzDz)));
-        }
-
-        return worst;
-    }
-
     private void FillPoints(double[] chi)
     {
         for (int k = 0; k < _elements.Length; k++)
@@ -186,6 +155,3 @@ internal sealed class BeamExtraction
         }
     }
 }
-
-/// <summary>Re(First·F′ + Second·F″) at a place.</summary>
-internal readonly record struct BeamTerm(Point At, Complex First, Complex Second);

@@ -6,10 +6,16 @@ namespace PoleField.Beam;
 /// <summary>The quantities that drive refinement, each linearised and scaled to its own size: field and gradient at the centre, gradient at the aperture's rim.</summary>
 internal static class BeamGoals
 {
+    /// <summary>Index of the goal of the field at the centre.</summary>
+    public const int CentreField = 0;
+
+    /// <summary>Index of the goal of the gradient at the centre; those at the rim follow.</summary>
+    public const int CentreGradient = 1;
+
     private const int RimPoints = 4;
 
     /// <summary>Derivatives of the relative goals by the nodes' potentials.</summary>
-    public static IReadOnlyList<double[]> Derivatives(BeamExtraction extraction, BeamField field, ApertureShape shape)
+    public static IReadOnlyList<double[]> Derivatives(IBeamExtraction extraction, BeamField field, ApertureShape shape)
     {
         BeamValues centre = field.At(field.Aperture.Centre);
         double reach = shape.Corners.Max(p => p.DistanceTo(field.Aperture.Centre));
@@ -30,11 +36,11 @@ internal static class BeamGoals
     }
 
     /// <summary>Derivative of |B| at a place, times a factor.</summary>
-    public static double[] FieldDerivative(BeamExtraction extraction, BeamValues v, double factor) =>
+    public static double[] FieldDerivative(IBeamExtraction extraction, BeamValues v, double factor) =>
         extraction.Functional([FieldTerm(v, factor)]);
 
     /// <summary>Derivative of d|B|/dz at a place, times a factor.</summary>
-    public static double[] GradientDerivative(BeamExtraction extraction, BeamValues v, double factor) =>
+    public static double[] GradientDerivative(IBeamExtraction extraction, BeamValues v, double factor) =>
         extraction.Functional([GradientTerm(v, factor)]);
 
     /// <summary>|B| at a place to first order, times a factor.</summary>

@@ -1,4 +1,5 @@
 using PoleField.Geometry;
+using PoleField.Magnetostatics;
 
 namespace PoleField.Beam;
 
@@ -66,6 +67,12 @@ public sealed record PartReport
     public Point? ForcePerMetre { get; init; }
 
     /// <summary>
+    /// The same force by another law, N/m: Maxwell's stress around conductors, its integral along a closed path one layer of
+    /// elements away for iron and magnets. Null where the part is joined to others or no path fits.
+    /// </summary>
+    public Point? ForceOtherWay { get; init; }
+
+    /// <summary>
     /// True when the part is joined to other iron or magnets and <see cref="ForcePerMetre"/> is the pull on its faces in air
     /// alone; what the joint carries besides is not in it.
     /// </summary>
@@ -96,6 +103,9 @@ public sealed record BeamReport
 {
     /// <summary>Values at the beam's centre.</summary>
     public required BeamValues Beam { get; init; }
+
+    /// <summary>How the beam's field was obtained.</summary>
+    public BeamFieldMethod Method { get; init; }
 
     /// <summary>Error bar of |B| at the centre, T.</summary>
     public required double FieldError { get; init; }
@@ -137,12 +147,23 @@ public sealed record BeamReport
     public required IReadOnlyList<Finding> Findings { get; init; }
 }
 
+/// <summary>One mesh of an adaptive run.</summary>
+/// <param name="Triangles">Its triangles.</param>
+/// <param name="Unknowns">Its unknowns.</param>
+/// <param name="Accuracy">Largest relative error bar of field and gradient over the aperture.</param>
+/// <param name="History">Newton's steps on it.</param>
+public sealed record MeshRound(int Triangles, int Unknowns, double Accuracy, IReadOnlyList<NewtonStep> History)
+{
+    /// <summary>Newton steps that made a tangent; those that kept one cost little.</summary>
+    public int NewtonSteps => History.Count(s => !s.TangentKept);
+}
+
 /// <summary>How the answer was reached.</summary>
 /// <param name="Triangles">Triangles of the last mesh.</param>
 /// <param name="Unknowns">Unknowns of the last solve.</param>
 /// <param name="Order">Order of the elements.</param>
 /// <param name="SmallestAngleDegrees">Smallest angle of the last mesh, degrees.</param>
-/// <param name="NewtonSteps">Newton steps of all solves.</param>
+/// <param name="NewtonSteps">Newton steps of all solves, those with a kept tangent not counted.</param>
 /// <param name="AdaptiveSteps">Meshes refined.</param>
 /// <param name="AccuracyReached">Largest relative error bar of field and gradient over the aperture.</param>
 /// <param name="AccuracyAsked">The accuracy asked for.</param>
@@ -156,6 +177,9 @@ public sealed record SolveRecord(
     double AccuracyReached,
     double AccuracyAsked)
 {
+    /// <summary>Mesh by mesh, how the accuracy was reached.</summary>
+    public IReadOnlyList<MeshRound> Rounds { get; init; } = [];
+
     /// <summary>Seconds spent meshing.</summary>
     public double MeshSeconds { get; init; }
 

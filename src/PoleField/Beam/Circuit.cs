@@ -90,7 +90,7 @@ internal static class Circuit
         return null;
     }
 
-    /// <summary>True where a magnetic part fills the place.</summary>
+    /// <summary>True where a part that guides flux fills the place.</summary>
     public static bool IsIron(FieldSolution solution, Point p)
     {
         if (solution.At(p) is not { } sample)
@@ -99,7 +99,7 @@ internal static class Circuit
         }
 
         int part = solution.Magnet.Section.Regions[sample.Region].Part;
-        return part >= 0 && solution.Magnet.Roles[part].Material.IsMagnetic;
+        return part >= 0 && solution.Magnet.Roles[part].Material.GuidesFlux;
     }
 
     /// <summary>With a uniform background, or a net current in open surroundings, the energy of all space is infinite.</summary>

@@ -14,25 +14,26 @@ internal static class ForceReports
 
     /// <summary>
     /// Force on a part: ∫ J × B for conductors; for iron and magnets Maxwell's stress in the air around them, where they
-    /// touch other iron on their free faces alone.
+    /// touch other iron on their free faces alone. The other way is the stress around conductors, and the stress along a closed
+    /// path one layer of elements away around iron and magnets.
     /// </summary>
-    public static (Point? PerMetre, bool FreeFacesOnly) Of(FieldSolution solution, int part)
+    public static PartForce Of(FieldSolution solution, int part)
     {
         PartRole role = solution.Magnet.Roles[part];
         bool[] body = [.. solution.Magnet.Section.Regions.Select(r => r.Part == part)];
         bool magnetic = role.Material.IsMagnetic || role.Remanence != default;
         if (!body.Contains(true) || (!magnetic && role.AmpereTurns == 0.0))
         {
-            return (null, false);
-        }
-
-        if (!magnetic)
-        {
-            return (ForceOnCurrent.Of(solution, body), false);
+            return default;
         }
 
         ForceShell shell = ForceShell.Around(solution, body);
-        return (shell.OverShell(), shell.HasJoints);
+        if (!magnetic)
+        {
+            return new PartForce(ForceOnCurrent.Of(solution, body), shell.HasJoints ? null : shell.OverShell(), false);
+        }
+
+        return new PartForce(shell.OverShell(), shell.HasJoints ? null : shell.Outward().AlongPath(), shell.HasJoints);
     }
 
     /// <summary>
@@ -103,3 +104,9 @@ internal static class ForceReports
         return null;
     }
 }
+
+/// <summary>Force on a part.</summary>
+/// <param name="PerMetre">Per metre of length (y, z), N/m; null for air.</param>
+/// <param name="OtherWay">The same by another law; null where there is none.</param>
+/// <param name="OnFreeFacesOnly">True when the part is joined to others.</param>
+internal readonly record struct PartForce(Point? PerMetre, Point? OtherWay, bool OnFreeFacesOnly);

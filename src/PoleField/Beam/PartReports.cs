@@ -20,11 +20,12 @@ internal static class PartReports
         var reports = new List<PartReport>();
         for (int part = 0; part < section.Parts.Count; part++)
         {
-            (Point? force, bool freeFacesOnly) = ForceReports.Of(solution, part);
+            PartForce force = ForceReports.Of(solution, part);
             reports.Add(Report(solution.Magnet, part, visits[part]) with
             {
-                ForcePerMetre = force,
-                ForceOnFreeFacesOnly = freeFacesOnly,
+                ForcePerMetre = force.PerMetre,
+                ForceOtherWay = force.OtherWay,
+                ForceOnFreeFacesOnly = force.OnFreeFacesOnly,
                 MmfDrop = solution.Magnet.Roles[part].Material.IsMagnetic
                     ? turnsPerProduct * visits[part].Sum(v => v.Area * v.FieldProduct)
                     : null,

@@ -26,7 +26,7 @@ internal sealed record FixedMeshSolve
     {
         Aperture aperture = options.Aperture;
         var shape = new ApertureShape(aperture);
-        int[] magnetic = [.. Enumerable.Range(0, magnet.Roles.Count).Where(p => magnet.Roles[p].Material.IsMagnetic)];
+        int[] magnetic = magnet.MagneticParts;
         SizeField size = options.Size ?? MeshSizing.For(magnet.Section, aperture.Outline, magnetic, options.Fineness);
         for (int attempt = 0; ; attempt++)
         {

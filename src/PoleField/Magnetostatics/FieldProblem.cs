@@ -42,6 +42,14 @@ internal sealed class FieldProblem
         return ref Regions[region == Mesh.Exterior ? Regions.Length - 1 : region];
     }
 
+    /// <summary>True where A is harmonic: elements of the first disc without material, current or remanence.</summary>
+    public bool IsAir(int element)
+    {
+        ref readonly RegionPhysics physics = ref PhysicsOf(element);
+        return Space.Mesh.Regions[element] != Mesh.Exterior && physics.Law is LinearLaw { RelativePermeability: 1.0 }
+            && physics.CurrentDensity == 0.0 && physics.RemanentGradient == default;
+    }
+
     /// <summary>Joins a magnet and a space over a mesh of its section.</summary>
     public static FieldProblem Create(Magnet magnet, FiniteElementSpace space)
     {

@@ -31,6 +31,9 @@ public sealed class FieldSolution
     /// <summary>Newton's history.</summary>
     public IReadOnlyList<NewtonStep> History { get; }
 
+    /// <summary>Newton steps that made a tangent; those that kept one cost little.</summary>
+    public int NewtonSteps => History.Count(s => !s.TangentKept);
+
     internal FieldProblem Problem { get; }
 
     /// <summary>A by node, T·m.</summary>

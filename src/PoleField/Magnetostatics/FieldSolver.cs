@@ -4,7 +4,8 @@ namespace PoleField.Magnetostatics;
 /// <param name="Energy">W after the step, J/m.</param>
 /// <param name="Decrement">√(rᵀK⁻¹r / ∫H·B): relative size of the step in the energy norm.</param>
 /// <param name="StepLength">Fraction of the full step taken.</param>
-public readonly record struct NewtonStep(double Energy, double Decrement, double StepLength);
+/// <param name="TangentKept">True for a step with the tangent of the step before, which costs no factorisation.</param>
+public readonly record struct NewtonStep(double Energy, double Decrement, double StepLength, bool TangentKept = false);
 
 /// <summary>Newton's method ended without a solution.</summary>
 public sealed class FieldNotConvergedException(IReadOnlyList<NewtonStep> history) : Exception(
@@ -17,11 +18,15 @@ public sealed class FieldNotConvergedException(IReadOnlyList<NewtonStep> history
 
 /// <summary>
 /// Newton's method with a line search on the strictly convex energy (Armijo 1966): it converges from any start (Egger,
-/// Engertsberger and Radu 2024, abstract).
+/// Engertsberger and Radu 2024, abstract). The last digits are won with the last tangent kept.
 /// </summary>
 internal static class FieldSolver
 {
-    private const double AcceptedDecrement = 1e-6; // the step of this size ends at about its square
+    private const double AcceptedDecrement = 1e-6;     // a full step of this size ends at about its square
+    private const double AcceptedKeptDecrement = 1e-8; // what a step with a kept tangent may leave is a share of its size
+    private const double AcceptedRest = 1e-10;         // of the next step with a kept tangent, foreseen
+    private const double NearDecrement = 1e-4;         // below it steps shrink so fast that a tangent serves again
+    private const double KeptReduction = 0.25;         // a tangent that reduces less is made anew: a step with it costs a fifth
     private const double StartPermeability = 100;
     private const double ArmijoShare = 1e-4;
     private const double ShortestStep = 1e-6;
@@ -47,7 +52,8 @@ internal static class FieldSolver
         for (int k = 1; k <= MostSteps; k++)
         {
             cancellation.ThrowIfCancellationRequested();
-            tangent = equations.TangentAt(potential, tangent);
+            bool kept = tangent is not null && MayKeepTangent(history);
+            tangent = kept ? tangent! : equations.TangentAt(potential, tangent);
             double[] direction = tangent.Solve(state.Residual);
             double slope = -Dot(state.Residual, direction);
             double decrement = Math.Sqrt(Math.Max(0, -slope) / Math.Max(state.FieldProduct, double.Epsilon));
@@ -57,9 +63,9 @@ internal static class FieldSolver
             }
 
             (potential, state, double length) = Step(equations, potential, state, direction, slope);
-            history.Add(new NewtonStep(state.Energy, decrement, length));
+            history.Add(new NewtonStep(state.Energy, decrement, length, kept));
             step?.Invoke(k, history[^1]);
-            if ((decrement < AcceptedDecrement && length == 1.0) || !equations.IsNonlinear)
+            if (!equations.IsNonlinear || IsConverged(history))
             {
                 return (potential, history);
             }
@@ -67,6 +73,33 @@ internal static class FieldSolver
 
         throw new FieldNotConvergedException(history);
     }
+
+    private static bool IsConverged(List<NewtonStep> history)
+    {
+        NewtonStep last = history[^1];
+        bool small = last.TangentKept
+            ? last.Decrement < AcceptedKeptDecrement || Rest(history) < AcceptedRest
+            : last.Decrement < AcceptedDecrement;
+        return small && last.StepLength == 1.0;
+    }
+
+    private static bool MayKeepTangent(List<NewtonStep> history)
+    {
+        NewtonStep last = history[^1];
+        double reduction = last.TangentKept ? Reduction(history) : Rest(history) / last.Decrement;
+        return last.StepLength == 1.0 && last.Decrement < NearDecrement && reduction < KeptReduction;
+    }
+
+    // Decrement of the next step, foreseen: with a kept tangent in proportion to the last; with a new one, where the laws of the
+    // materials are smooth, with its square.
+    private static double Rest(List<NewtonStep> history)
+    {
+        double reduction = Reduction(history);
+        return history[^1].Decrement * (history[^1].TangentKept ? reduction : reduction * reduction);
+    }
+
+    private static double Reduction(List<NewtonStep> history) =>
+        history.Count < 2 ? 1.0 : Math.Min(1.0, history[^1].Decrement / history[^2].Decrement);
 
     private static double[] LinearStart(FieldEquations equations, CancellationToken cancellation)
     {

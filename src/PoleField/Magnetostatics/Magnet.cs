@@ -18,8 +18,8 @@ public sealed record PartRole(string Layer, Material Material)
     /// <summary>Remanence of a permanent magnet, T; zero otherwise. The material's law then acts on B less this.</summary>
     public Point Remanence { get; init; }
 
-    /// <summary>"coil", "magnet", "iron" or "air".</summary>
-    public string Kind => AmpereTurns != 0.0 ? "coil" : Remanence != default ? "magnet" : Material.IsMagnetic ? "iron" : "air";
+    /// <summary>"coil", "magnet", "iron" or "air"; metals as weakly magnetic as stainless steel count as air here.</summary>
+    public string Kind => AmpereTurns != 0.0 ? "coil" : Remanence != default ? "magnet" : Material.GuidesFlux ? "iron" : "air";
 }
 
 /// <summary>A magnet to be solved: section, what its parts are, and the uniform background field.</summary>
@@ -33,6 +33,9 @@ public sealed record Magnet
 
     /// <summary>Uniform background field (By, Bz), T.</summary>
     public Point AppliedField { get; init; }
+
+    /// <summary>Indices of the parts that guide or drive flux: iron and magnets.</summary>
+    public int[] MagneticParts => [.. Enumerable.Range(0, Roles.Count).Where(p => Roles[p].Material.GuidesFlux || Roles[p].Remanence != default)];
 
     /// <summary>The magnet with all its ampere-turns multiplied by a factor.</summary>
     public Magnet WithCurrentsScaled(double factor) =>

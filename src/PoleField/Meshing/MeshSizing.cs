@@ -14,6 +14,12 @@ namespace PoleField.Meshing;
 /// </remarks>
 public sealed class MeshSizing
 {
+    /// <summary>
+    /// An aperture nearer than this to a part, in its own diagonal, counts as touching it: filling the gap with three layers of
+    /// elements would cost more than a tenth of a million unknowns.
+    /// </summary>
+    internal const double LeastGap = 0.05;
+
     private const double Growth = 0.35;
     private const double LayersInGap = 3;
     private const double GapShareOnCurves = 1 / 2.5; // of the distance to the aperture
@@ -32,7 +38,6 @@ public sealed class MeshSizing
     // The error of a corner falls like its element size to the power 1.3, that of a smooth field like the sixth power
     // (third-order elements; both measured): corners follow the fineness with the power 6/1.3, so that neither is wasted.
     private const double CornerPower = 4.6;
-    private const double SmoothDegrees = 3; // joints that turn less are no corners
 
     private readonly CrossSection _section;
     private readonly Outline _aperture;
@@ -189,7 +194,7 @@ public sealed class MeshSizing
 
     private void AddCorners()
     {
-        foreach ((int vertex, double ironAngle) in IronCorners())
+        foreach ((int vertex, double ironAngle) in IronCorners.Of(_section, _magneticParts))
         {
             Point p = _section.Vertices[vertex];
             double distance = DistanceToAperture(p) / Reach;
@@ -201,46 +206,6 @@ public sealed class MeshSizing
             {
                 AddCorner(p, (distance <= LipReach ? LipSize : TipCornerSize) * Reach);
             }
-        }
-    }
-
-    // Vertices where the iron's outline turns, with the angle the iron fills there, radians.
-    private IEnumerable<(int Vertex, double IronAngle)> IronCorners()
-    {
-        Dictionary<int, List<(Point Leaves, bool IronLeft)>> ends = [];
-        foreach (SectionEdge e in _section.Edges.Where(e => IsMagnetic(e.Left) != IsMagnetic(e.Right)))
-        {
-            Note(e.Start, e.Curve.Derivative(0).Unit(), IsMagnetic(e.Left));
-            Note(e.End, -e.Curve.Derivative(1).Unit(), IsMagnetic(e.Right));
-        }
-
-        foreach ((int vertex, List<(Point Leaves, bool IronLeft)> around) in ends.OrderBy(e => e.Key))
-        {
-            if (around.Count != 2)
-            {
-                yield return (vertex, 0); // outlines that touch in a point are corners of the worst kind
-                continue;
-            }
-
-            (Point from, Point to) = around[0].IronLeft
-                ? (around[0].Leaves, around[1].Leaves)
-                : (around[1].Leaves, around[0].Leaves);
-            double angle = Math.Atan2(from.Cross(to), from.Dot(to));
-            angle += angle < 0 ? Math.Tau : 0;
-            if (Math.Abs(angle - Math.PI) > SmoothDegrees * Math.PI / 180)
-            {
-                yield return (vertex, angle);
-            }
-        }
-
-        void Note(int vertex, Point leaves, bool ironLeft)
-        {
-            if (!ends.TryGetValue(vertex, out List<(Point Leaves, bool IronLeft)>? list))
-            {
-                ends[vertex] = list = [];
-            }
-
-            list.Add((leaves, ironLeft));
         }
     }
 
@@ -282,8 +247,8 @@ public sealed class MeshSizing
         }
 
         // An aperture that touches a part leaves no gap to fill; one that is far from all is its own scale.
-        const double nearest = 0.01, farthest = 10;
-        return best > farthest * size ? size : Math.Max(best, nearest * size);
+        const double touching = 0.1, farthest = 10;
+        return best > farthest * size ? size : best < LeastGap * size ? touching * size : best;
     }
 
     private double DistanceFromMiddle()

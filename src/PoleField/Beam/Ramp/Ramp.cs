@@ -99,7 +99,7 @@ public sealed class Ramp
         Factor = factor,
         Report = solved.Report,
         Accuracy = solved.Record.AccuracyReached,
-        NewtonSteps = solved.Solution.History.Count,
+        NewtonSteps = solved.Solution.NewtonSteps,
         OwnMesh = ownMesh,
         ShapeFactor = _halfSpacing is { } a ? Beam.TwoWireField.ShapeFactor(solved.Report.Beam, a) : null,
     };
