@@ -47,7 +47,24 @@ internal sealed record Pipeline
     public IReadOnlyList<AnalysisStep> Analyses { get; init; } = [];
 
     /// <summary>The library's own steps.</summary>
-    public static Pipeline OfLibrary() => new()
+    public static Pipeline OfLibrary()
+    {
+        Pipeline pipeline = Steps();
+        return pipeline with
+        {
+            Analyses =
+            [
+                MapStep.Create(),
+                RampVerbStep.Create(),
+                CompareStep.Create(),
+                DeflectStep.Create(),
+                TuneVerbStep.Create(pipeline),
+                ToleranceStep.Create(),
+            ],
+        };
+    }
+
+    private static Pipeline Steps() => new()
     {
         ReadSketch = ReadDxf,
         Cut = CutSection,
@@ -59,15 +76,6 @@ internal sealed record Pipeline
         SketchPictures = CasePictures.OfSketch,
         ResultPictures = CasePictures.OfSolution,
         Page = ReportOutput.PageOf,
-        Analyses =
-        [
-            MapStep.Create(),
-            RampVerbStep.Create(),
-            CompareStep.Create(),
-            DeflectStep.Create(),
-            TuneVerbStep.Create(),
-            ToleranceStep.Create(),
-        ],
     };
 
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>

@@ -1,3 +1,4 @@
+using PoleField.Cli.Sketching;
 using PoleField.Drawing;
 using PoleField.Geometry;
 
@@ -119,14 +120,36 @@ internal sealed record RampSection(IReadOnlyList<double> Factors, double Onset)
 /// <summary>Grid of the field map; what is null follows from the aperture.</summary>
 internal sealed record MapSection(Point? From, Point? To, double? Step);
 
-/// <param name="Faces">Faces that may move.</param>
-/// <param name="Reach">Largest normal displacement, metres.</param>
-/// <param name="Freedoms">Smooth modes per face.</param>
-/// <param name="SmallestRadius">Concave curvature radius that is kept, metres; null for none.</param>
-/// <param name="Goal">What is made small.</param>
-/// <param name="Hold">What must stay.</param>
-internal sealed record TuneSection(
-    IReadOnlyList<TuneFace> Faces, double? Reach, int Freedoms, double? SmallestRadius, TuneGoal Goal, IReadOnlyList<Limit> Hold);
+/// <summary>What tuning may change, what it makes small and what must stay.</summary>
+internal sealed record TuneSection
+{
+    /// <summary>Faces that may move; empty when dimensions are tuned.</summary>
+    public IReadOnlyList<TuneFace> Faces { get; init; } = [];
+
+    /// <summary>Dimensions that may change instead; null for faces.</summary>
+    public TuneFamily? Family { get; init; }
+
+    /// <summary>Largest normal displacement, metres.</summary>
+    public double? Reach { get; init; }
+
+    /// <summary>Smooth modes per face.</summary>
+    public required int Freedoms { get; init; }
+
+    /// <summary>Concave curvature radius that is kept, metres; null for none.</summary>
+    public double? SmallestRadius { get; init; }
+
+    /// <summary>What is made small.</summary>
+    public TuneGoal Goal { get; init; }
+
+    /// <summary>What must stay.</summary>
+    public IReadOnlyList<Limit> Hold { get; init; } = [];
+}
+
+/// <summary>The family that drew the sketch, with the dimensions it had, and those that may change.</summary>
+/// <param name="Family">Family with the sketch's dimensions.</param>
+/// <param name="Each">Dimensions that may change, with their ranges in the shown unit.</param>
+/// <param name="At">Place in the case file.</param>
+internal sealed record TuneFamily(PoleFamily Family, IReadOnlyList<(FamilyOption Option, double Low, double High)> Each, Spot At);
 
 /// <summary>A layer's air-facing outline, or the stretch of it between two places (metres).</summary>
 internal sealed record TuneFace(string Layer, Point? From, Point? To);

@@ -11,7 +11,8 @@ internal sealed record SketchQuestion(SketchSection Sketch, IReadOnlyList<PartSe
     /// <summary>The question of a case, sound or not.</summary>
     public static SketchQuestion Of(CaseFile file, bool isClear) => new(file.Sketch, file.Parts, isClear ? RequestOf(file) : null);
 
-    private static SectionRequest RequestOf(CaseFile file) => new()
+    /// <summary>What a case asks of its drawing.</summary>
+    public static SectionRequest RequestOf(CaseFile file) => new()
     {
         PartLayers = [.. file.Parts.Select(p => p.Layer)],
         MaterialKeys = [.. file.Parts.Select(p => p.AmpereTurns is { } a ? FormattableString.Invariant($"coil {p.Layer} {a:R}") : p.Substance.Key)],

@@ -23,6 +23,18 @@ internal sealed record AnalysisStep(string Name, string Description)
     /// <summary>True when the first file is JSON, which <c>--json</c> prints.</summary>
     public bool FirstIsJson { get; init; } = true;
 
+    /// <summary>True when the command line allows files of an earlier run to be replaced without <c>--force</c>.</summary>
+    public Func<ParseResult, bool> GoesOn { get; init; } = _ => false;
+
+    /// <summary>Endings of files that are already written while it runs.</summary>
+    public IReadOnlyList<string> KeptOnTheWay { get; init; } = [];
+
+    /// <summary>How long an interrupted run may take to write what it has; null when it keeps nothing.</summary>
+    public TimeSpan? Farewell { get; init; }
+
+    /// <summary>True when the case's requirements are asked of what comes out, not of the solve it starts from.</summary>
+    public bool JudgesItself { get; init; }
+
     /// <summary>What a case lacks for it, looked at before the solve.</summary>
     public Func<CaseFile, IReadOnlyList<Finding>> Needs { get; init; } = _ => [];
 
@@ -45,6 +57,9 @@ internal sealed record AnalysisRequest
     /// <summary>For further solves.</summary>
     public required SolveOptions Options { get; init; }
 
+    /// <summary>Files to be written, in the order of <see cref="AnalysisStep.Endings"/>; empty when only JSON is printed.</summary>
+    public IReadOnlyList<string> Targets { get; init; } = [];
+
     /// <summary>The command line; under <c>report</c> it knows no options of the step.</summary>
     public required ParseResult Arguments { get; init; }
 
@@ -55,6 +70,13 @@ internal sealed record AnalysisRequest
 
 /// <summary>What came out of an analysis.</summary>
 /// <param name="Print">Prints it for people.</param>
-/// <param name="Files">Contents of the files, in the order of <see cref="AnalysisStep.Endings"/>.</param>
+/// <param name="Files">Contents of the files, in the order of <see cref="AnalysisStep.Endings"/>; null for one that is not needed.</param>
 /// <param name="Met">What it was asked to reach, it reached.</param>
-internal sealed record Analysis(Action<TextWriter, Ink> Print, IReadOnlyList<Action<Stream>> Files, bool Met = true);
+internal sealed record Analysis(Action<TextWriter, Ink> Print, IReadOnlyList<Action<Stream>?> Files, bool Met = true)
+{
+    /// <summary>What was asked and not met, in words.</summary>
+    public IReadOnlyList<string> NotMet { get; init; } = [];
+
+    /// <summary>True when it was stopped from outside and holds the best so far.</summary>
+    public bool Interrupted { get; init; }
+}

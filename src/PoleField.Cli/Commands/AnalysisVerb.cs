@@ -30,7 +30,15 @@ internal sealed class AnalysisVerb
             command.Options.Add(option);
         }
 
-        tool.SetRun(command, verb.Run);
+        if (step.Farewell is { } farewell)
+        {
+            tool.SetRun(command, (verb.Run, farewell));
+        }
+        else
+        {
+            tool.SetRun(command, verb.Run);
+        }
+
         return command;
     }
 
@@ -47,7 +55,12 @@ internal sealed class AnalysisVerb
         }
 
         List<string> targets = Targets(arguments);
-        using OutputFiles files = OutputFiles.Plan(targets, _run.Force(arguments));
+        using OutputFiles files = OutputFiles.Plan(targets, _run.Force(arguments) || _step.GoesOn(arguments));
+        foreach (string kept in targets.Where(t => _step.KeptOnTheWay.Any(e => t.EndsWith(e, StringComparison.Ordinal))))
+        {
+            files.MayReplace(kept);
+        }
+
         SolveOptions options = _run.OptionsOf(arguments, loaded);
         SolvedCase solved;
         Analysis analysis;
@@ -58,22 +71,49 @@ internal sealed class AnalysisVerb
             {
                 Solved = solved,
                 Options = options,
+                Targets = targets,
                 Arguments = arguments,
                 Progress = progress.Report,
                 Cancellation = cancellation,
             });
         }
 
+        // What an interrupted analysis keeps is written whole.
+        CancellationToken writing = _step.Farewell is null ? cancellation : CancellationToken.None;
+        List<string> written = [.. targets.Where((_, i) => analysis.Files[i] is not null)];
         for (int i = 0; i < targets.Count; i++)
         {
-            cancellation.ThrowIfCancellationRequested();
-            files.Write(targets[i], analysis.Files[i]);
+            writing.ThrowIfCancellationRequested();
+            if (analysis.Files[i] is { } content)
+            {
+                files.Write(targets[i], content);
+            }
         }
 
-        files.Commit(cancellation);
-        Print(arguments, analysis, targets);
-        _run.ReportNotMet(solved);
-        return solved.AllMet && analysis.Met ? ExitStatus.Done : ExitStatus.NotMet;
+        files.Commit(writing);
+        Print(arguments, analysis, written);
+        return Status(solved, analysis);
+    }
+
+    private int Status(SolvedCase solved, Analysis analysis)
+    {
+        if (analysis.Interrupted)
+        {
+            _tool.Terminal.Error.WriteLine("Interrupted; the best so far is kept.");
+            return ExitStatus.Interrupted;
+        }
+
+        if (!_step.JudgesItself)
+        {
+            _run.ReportNotMet(solved);
+        }
+
+        foreach (string what in analysis.NotMet)
+        {
+            _tool.Terminal.Error.WriteLine($"Not met: {what}");
+        }
+
+        return analysis.Met && (_step.JudgesItself || solved.AllMet) ? ExitStatus.Done : ExitStatus.NotMet;
     }
 
     // As with solve: JSON on standard output needs no file beside it unless one is named.
@@ -91,10 +131,10 @@ internal sealed class AnalysisVerb
 
     private void Print(ParseResult arguments, Analysis analysis, List<string> targets)
     {
-        if (_run.Json(arguments))
+        if (_run.Json(arguments) && analysis.Files[0] is { } json)
         {
             using var stream = new MemoryStream();
-            analysis.Files[0](stream);
+            json(stream);
             _tool.Terminal.Out.Write(Encoding.UTF8.GetString(stream.ToArray()));
         }
         else if (!_run.Quiet(arguments))

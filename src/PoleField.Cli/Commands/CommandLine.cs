@@ -8,8 +8,8 @@ namespace PoleField.Cli.Commands;
 /// <summary>The command tree and how a command line is run.</summary>
 internal static class CommandLine
 {
-    // The framework's own limit behind Tool's; only reached when a step blocks even the thread pool.
-    private static readonly TimeSpan TerminationTimeout = TimeSpan.FromSeconds(0.9);
+    // The framework's own limit behind Tool's, which ends every verb sooner; only reached when a step blocks even the thread pool.
+    private static readonly TimeSpan TerminationTimeout = TimeSpan.FromSeconds(12);
 
     /// <summary>Runs one command line and returns its exit status.</summary>
     public static async Task<int> RunAsync(string[] args, Terminal terminal, Pipeline pipeline, CancellationToken cancellation = default)

@@ -8,6 +8,8 @@ namespace PoleField.Cli.Commands;
 /// <summary>What every verb runs with: terminal, steps, and the options that hold for all verbs.</summary>
 internal sealed class Tool(Terminal terminal, Pipeline pipeline)
 {
+    private const string Nothing = "Interrupted; nothing was written.";
+
     // A run must be gone within a second of Ctrl-C even when a step is slow to notice.
     private static readonly TimeSpan Patience = TimeSpan.FromSeconds(0.7);
 
@@ -41,12 +43,19 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
     /// <param name="command">The command.</param>
     /// <param name="run">What it does.</param>
     /// <param name="interrupted">What to say when it was interrupted.</param>
-    public void SetRun(Command command, Func<ParseResult, CancellationToken, int> run, string interrupted = "Interrupted; nothing was written.") =>
+    public void SetRun(Command command, Func<ParseResult, CancellationToken, int> run, string interrupted = Nothing) =>
+        SetRun(command, (run, Patience), interrupted);
+
+    /// <summary>Makes a command run that may take longer than to notice when it is interrupted, because it writes what it has.</summary>
+    /// <param name="command">The command.</param>
+    /// <param name="verb">What it does, and how long it may take to end.</param>
+    /// <param name="interrupted">What to say when it was interrupted before it had anything.</param>
+    public void SetRun(Command command, (Func<ParseResult, CancellationToken, int> Run, TimeSpan Farewell) verb, string interrupted = Nothing) =>
         command.SetAction(async (arguments, cancellation) =>
         {
             try
             {
-                return await Guard(arguments, token => run(arguments, token), cancellation).ConfigureAwait(false);
+                return await Guard(arguments, (token => verb.Run(arguments, token), verb.Farewell), cancellation).ConfigureAwait(false);
             }
             catch (OperationCanceledException)
             {
@@ -55,12 +64,12 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
             }
         });
 
-    private async Task<int> Guard(ParseResult arguments, Func<CancellationToken, int> run, CancellationToken cancellation)
+    private async Task<int> Guard(ParseResult arguments, (Func<CancellationToken, int> Run, TimeSpan Patience) verb, CancellationToken cancellation)
     {
         try
         {
-            var work = Task.Run(() => run(cancellation), CancellationToken.None);
-            Task first = await Task.WhenAny(work, Cancelled(cancellation)).ConfigureAwait(false);
+            var work = Task.Run(() => verb.Run(cancellation), CancellationToken.None);
+            Task first = await Task.WhenAny(work, Cancelled(verb.Patience, cancellation)).ConfigureAwait(false);
             if (first != work)
             {
                 throw new OperationCanceledException(cancellation);
@@ -91,7 +100,7 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
         }
     }
 
-    private static async Task Cancelled(CancellationToken cancellation)
+    private static async Task Cancelled(TimeSpan patience, CancellationToken cancellation)
     {
         var cancelled = new TaskCompletionSource();
         await using (cancellation.Register(() => cancelled.TrySetResult()).ConfigureAwait(false))
@@ -99,7 +108,7 @@ internal sealed class Tool(Terminal terminal, Pipeline pipeline)
             await cancelled.Task.ConfigureAwait(false);
         }
 
-        await Task.Delay(Patience, CancellationToken.None).ConfigureAwait(false);
+        await Task.Delay(patience, CancellationToken.None).ConfigureAwait(false);
     }
 
     private int ReportOwnFault(Exception e, bool verbose)

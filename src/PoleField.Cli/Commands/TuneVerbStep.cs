@@ -1,128 +1,195 @@
+using System.CommandLine;
 using PoleField.Beam;
 using PoleField.Cli.Case;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
 using PoleField.Design;
 using PoleField.Drawing;
+using PoleField.Magnetostatics;
 using PoleField.Output.Figures;
 using PoleField.Output.Results;
 
 namespace PoleField.Cli.Commands;
 
-/// <summary><c>polefield tune CASE.toml</c>: moves the chosen faces until the gradient is uniform.</summary>
-internal static class TuneVerbStep
+/// <summary><c>polefield tune CASE.toml</c>: changes the chosen faces or dimensions until the gradient is uniform.</summary>
+internal sealed class TuneVerbStep
 {
-    private const double DefaultReach = 0.4e-3;      // metres
     private const double DefaultGradient = 0.97;     // of the gradient as it was, when the case holds none
     private const double DefaultClearance = 0.5;     // of the clearance as it was, when the case holds none
+    private const string StateEnding = ".tune-state";
+    private static readonly string[] Endings = [".tune.json", ".tuned.dxf", ".tuned.toml", ".tune.svg", StateEnding, ".trade-off.svg"];
 
-    public static AnalysisStep Create() => new("tune", "Moves the chosen pole faces until the gradient is uniform; writes the new sketch (DXF), case and a before/after result.")
+    private readonly Pipeline _pipeline;
+    private readonly Option<bool> _resume = new("--resume") { Description = "Go on from where an earlier run of this case stopped or ended; its files are replaced." };
+    private readonly Option<bool> _tradeOff = new("--trade-off")
     {
-        Examples =
-        [
-            ("polefield tune magnet.toml -o tuned/", "writes magnet.tune.json, the tuned DXF and case, and a picture"),
-            ("polefield tune magnet.toml --json | jq .after.rms", "the rms of the gradient after tuning"),
-        ],
-        Endings = _ => [".tune.json", ".tuned.dxf", ".tuned.toml", ".tune.svg"],
-        Run = Run,
+        Description = "Also find how uniform the gradient can be at larger and smaller gradients. Done in any case when a requirement is not met.",
     };
 
-    private static Analysis Run(AnalysisRequest request)
+    private TuneVerbStep(Pipeline pipeline) => _pipeline = pipeline;
+
+    /// <summary>The step.</summary>
+    /// <param name="pipeline">Cuts the drawings of tuned dimensions.</param>
+    public static AnalysisStep Create(Pipeline pipeline)
     {
-        SolvedCase solved = request.Solved;
-        CaseFile file = solved.Case.Case!;
-        if (file.Tune is not { } section)
+        var verb = new TuneVerbStep(pipeline);
+        return new AnalysisStep("tune", "Changes the chosen pole faces, or dimensions, until the gradient is uniform; writes the new sketch (DXF), case and a before/after result.")
         {
-            throw new InputException([new Finding(
-                Severity.Fault, "missing-table", "The case has no [tune]: nothing says which faces may move.", "Add [tune] with faces = [\"LAYER\", ...].")]);
-        }
-
-        (CaseFile _, Magnetostatics.Magnet magnet, Aperture aperture) = solved.Case.Ready();
-        BeamReport before = solved.Solved.Report;
-        TuneSettings settings = SettingsOf(section, before, request.Options.Threads);
-        TuneResult tuned = Tuning.Run(
-            magnet,
-            aperture,
-            settings,
-            s => request.Progress(new SolveProgress("tune", s.Number, 0, 0, double.NaN, s.Rms)),
-            request.Cancellation);
-        request.Cancellation.ThrowIfCancellationRequested();
-
-        // The end is judged by a solve to full accuracy, never by the steps' own meshes.
-        BeamReport after = MagnetSolver.Solve(tuned.Magnet, aperture, request.Options, request.Progress, request.Cancellation).Report;
-        IReadOnlyList<Verdict> verdicts = [.. section.Hold.Concat(file.Require).Select(l => l.Judge(after))];
-        bool better = settings.OfProduct
-            ? after.FieldTimesGradient.Rms < before.FieldTimesGradient.Rms
-            : after.Gradient.Rms < before.Gradient.Rms;
-        string name = Path.GetFileNameWithoutExtension(solved.Case.Path) + ".tuned.dxf";
-        Sketch sketch = TunedCase.SketchOf(solved.Case, magnet.Section, tuned, name);
-        string text = TunedCase.TextOf(solved.Case, name);
-        ResultFile head = ResultJson.ToFile(ResultOutput.Of(solved));
-        return new Analysis(
-            (writer, ink) => Print(writer, ink, file.Title, (before, after, tuned, verdicts)),
+            Examples =
             [
-                s => TuneJson.Write(head, (before, after), tuned, s),
-                s => DxfWriter.Write(sketch, s),
-                s => s.Write(System.Text.Encoding.UTF8.GetBytes(text)),
-                s => FigureWriter.Svg(TuneFigure.Draw(tuned), s),
+                ("polefield tune magnet.toml -o tuned/", "writes magnet.tune.json, the tuned DXF and case, and a picture"),
+                ("polefield tune magnet.toml -o tuned/ --resume", "goes on after Ctrl-C, or for further steps"),
+                ("polefield tune magnet.toml --json | jq .after.rms", "the rms of the gradient after tuning"),
             ],
-            better && verdicts.All(v => v.Met));
-    }
-
-    private static TuneSettings SettingsOf(TuneSection section, BeamReport before, int threads)
-    {
-        double? Least(string quantity) => section.Hold.FirstOrDefault(l => l.AtLeast && l.Quantity.Name == quantity)?.Bound;
-        return new TuneSettings
-        {
-            Stretches = [.. section.Faces.Select(f => new TuneStretch(f.Layer, f.From, f.To))],
-            Reach = section.Reach ?? DefaultReach,
-            Freedoms = section.Freedoms,
-            SmallestRadius = section.SmallestRadius ?? 0,
-            OfProduct = section.Goal == TuneGoal.FieldTimesGradientSpread,
-            LeastGradient = Least("gradient") ?? (DefaultGradient * Math.Abs(before.Beam.Gradient)),
-            LeastClearance = Least("clearance") ?? (DefaultClearance * before.Clearance),
-            Threads = threads,
+            Options = [verb._resume, verb._tradeOff],
+            Endings = _ => Endings,
+            GoesOn = arguments => arguments.GetValue(verb._resume),
+            KeptOnTheWay = [StateEnding],
+            Farewell = TimeSpan.FromSeconds(10),
+            JudgesItself = true,
+            Needs = file => file.Tune is not null ? [] :
+            [
+                new Finding(Severity.Fault, "missing-table", "The case has no [tune]: nothing says what may move.", "Add [tune] with faces = [\"LAYER\", ...]."),
+            ],
+            Run = verb.Run,
         };
     }
 
-    private static void Print(
-        TextWriter writer,
-        Ink ink,
-        string title,
-        (BeamReport Before, BeamReport After, TuneResult Tuned, IReadOnlyList<Verdict> Verdicts) of)
+    private Analysis Run(AnalysisRequest request)
     {
-        writer.WriteLine(ink.Strong(title));
-        writer.WriteLine();
-        var table = new TextTable("quantity", ">before", ">after");
-        Row("field |B|, T", r => Numbers.WithError(r.Beam.Field, r.FieldError));
-        Row("gradient d|B|/dz, T/m", r => Numbers.WithError(r.Beam.Gradient, r.GradientError));
-        Row("gradient over the aperture: rms", r => Numbers.Percent(r.Gradient.Rms));
-        Row("gradient over the aperture: spread", r => Numbers.Percent(r.Gradient.Spread));
-        Row("field × gradient: rms", r => Numbers.Percent(r.FieldTimesGradient.Rms));
-        Row("clearance, mm", r => Numbers.Millimetres(r.Clearance));
-        WriteLines(writer, table, ink);
-        writer.WriteLine();
-        foreach ((string layer, IReadOnlyList<FaceMove> points) in of.Tuned.Moves)
+        SolvedCase solved = request.Solved;
+        (CaseFile file, Magnet magnet, Aperture aperture) = solved.Case.Ready();
+        TuneSection section = file.Tune!;
+        string? state = request.Targets.FirstOrDefault(t => t.EndsWith(StateEnding, StringComparison.Ordinal));
+        TuneSettings settings = SettingsOf(request, section, magnet.Section) with
         {
-            writer.WriteLine(FormattableString.Invariant(
-                $"  {layer} moved by {Numbers.Significant(1e6 * points.Min(p => p.Move), 3)} to {Numbers.Significant(1e6 * points.Max(p => p.Move), 3)} um over {Numbers.Millimetres(points[^1].ArcLength - points[0].ArcLength, 1)} mm of face"));
-        }
-
-        writer.WriteLine(FormattableString.Invariant($"  {of.Tuned.Steps.Count - 1} steps, {of.Tuned.Solves} solves, then solved to full accuracy"));
-        foreach (Verdict v in of.Verdicts)
+            Start = request.Arguments.GetValue(_resume)
+                ? TuneStateFile.Read(state ?? ResultName.For(solved.Case.Path, StateEnding, null), solved.Case.SketchSha256)
+                : null,
+        };
+        TuneResult tuned = Tuning.Run(magnet, aperture, settings, Kept, request.Cancellation);
+        BeamReport? after = Verified(request, tuned.Magnet, aperture);
+        Verdict[] verdicts = after is null ? [] : [.. section.Hold.Concat(file.Require).DistinctBy(l => (l.Name, l.Bound)).Select(l => l.Judge(after))];
+        bool met = after is not null && Better(settings, solved.Solved.Report, after) && verdicts.All(v => v.Met);
+        IReadOnlyList<TradeOffPoint> curve = after is not null && (!met || request.Arguments.GetValue(_tradeOff))
+            ? TradeOffOf(request, (magnet, aperture), settings, (tuned, after))
+            : [];
+        var outcome = new TuneOutcome(solved.Solved.Report, after, tuned, curve) { OfProduct = settings.OfProduct };
+        return AnalysisOf(solved, outcome, verdicts) with
         {
-            writer.WriteLine(
-                $"  {v.Limit.Name}: {(v.Found is { } m ? Numbers.InUnit(m, v.Limit.Quantity.Dimension) : "-")}, {(v.Met ? "met" : "not met: best found is written")}");
-        }
+            Met = met,
+            Interrupted = request.Cancellation.IsCancellationRequested,
+            NotMet = [.. verdicts.Where(v => !v.Met).Select(v => v.Limit.Name)],
+        };
 
-        void Row(string name, Func<BeamReport, string> value) => table.Add(name, value(of.Before), value(of.After));
+        void Kept(TuneState now)
+        {
+            TuneStep step = now.Steps[^1];
+            request.Progress(new SolveProgress(FormattableString.Invariant($"tune, rms {100 * step.Rms:g3} %"), step.Number, 0, 0, double.NaN, double.NaN));
+            if (state is not null)
+            {
+                TuneStateFile.Save(now, solved.Case.SketchSha256, state);
+            }
+        }
     }
 
-    private static void WriteLines(TextWriter writer, TextTable table, Ink ink)
+    // The end is judged by a solve to full accuracy, never by the steps' own meshes; null when there is no time for it.
+    private static BeamReport? Verified(AnalysisRequest request, Magnet magnet, Aperture aperture)
     {
-        foreach (string line in table.Lines(ink))
+        try
         {
-            writer.WriteLine(line);
+            request.Cancellation.ThrowIfCancellationRequested();
+            return MagnetSolver.Solve(magnet, aperture, request.Options, request.Progress, request.Cancellation).Report;
+        }
+        catch (OperationCanceledException)
+        {
+            return null;
+        }
+    }
+
+    private static List<TradeOffPoint> TradeOffOf(
+        AnalysisRequest request, (Magnet Magnet, Aperture Aperture) of, TuneSettings settings, (TuneResult Shape, BeamReport Report) tuned)
+    {
+        var points = new List<TradeOffPoint>();
+        foreach ((double least, TuneResult shape) in TradeOff.Run(of.Magnet, of.Aperture, settings, tuned.Shape, request.Cancellation))
+        {
+            BeamReport? report = ReferenceEquals(shape, tuned.Shape) ? tuned.Report : Verified(request, shape.Magnet, of.Aperture);
+            if (report is not null)
+            {
+                points.Add(new TradeOffPoint(least, report, shape.Limits));
+            }
+        }
+
+        return points;
+    }
+
+    private static Analysis AnalysisOf(SolvedCase solved, TuneOutcome outcome, Verdict[] verdicts)
+    {
+        string name = Path.GetFileNameWithoutExtension(solved.Case.Path) + ".tuned.dxf";
+        TuneResult tuned = outcome.Tuned;
+        Sketch sketch = TunedCase.SketchOf(solved.Case, solved.Case.Reading!.Section!, tuned, name);
+        PoleFamily? family = solved.Case.Case!.Tune!.Family is { } f ? FamilyTuning.With(f, tuned.State.Values) : null;
+        string text = TunedCase.TextOf(solved.Case, name, family);
+        ResultFile head = ResultJson.ToFile(ResultOutput.Of(solved));
+        return new Analysis(
+            (writer, ink) => TuneText.Print(writer, ink, solved.Case.Case.Title, (outcome, verdicts)),
+            [
+                s => TuneJson.Write(head, outcome, s),
+                s => DxfWriter.Write(sketch, s),
+                s => s.Write(System.Text.Encoding.UTF8.GetBytes(text)),
+                s => FigureWriter.Svg(TuneFigure.Draw(tuned), s),
+                s => TuneStateFile.Write(tuned.State, solved.Case.SketchSha256, s),
+                outcome.TradeOff.Count > 1 ? s => FigureWriter.Svg(TradeOffFigure.Draw(outcome), s) : null,
+            ]);
+    }
+
+    private static bool Better(TuneSettings settings, BeamReport before, BeamReport after) => settings.OfProduct
+        ? after.FieldTimesGradient.Rms <= before.FieldTimesGradient.Rms
+        : after.Gradient.Rms <= before.Gradient.Rms;
+
+    private TuneSettings SettingsOf(AnalysisRequest request, TuneSection section, CrossSection drawn)
+    {
+        BeamReport before = request.Solved.Solved.Report;
+        var settings = new TuneSettings
+        {
+            Stretches = [.. section.Faces.Select(f => new TuneStretch(f.Layer, f.From, f.To))],
+            Dimensions = section.Family is { } family ? FamilyTuning.Of(request.Solved.Case, family, _pipeline, drawn) : null,
+            Freedoms = section.Freedoms,
+            SmallestRadius = section.SmallestRadius ?? 0,
+            OfProduct = section.Goal == TuneGoal.FieldTimesGradientSpread,
+            Holds = [.. HoldsOf(section.Hold.Concat(request.Solved.Case.Case!.Require), before)],
+            Threads = request.Options.Threads,
+        };
+        return section.Reach is { } reach ? settings with { Reach = reach } : settings;
+    }
+
+    // The bounds that steer; all others are judged at the end.
+    private static IEnumerable<TuneHold> HoldsOf(IEnumerable<Limit> limits, BeamReport before)
+    {
+        TuneHold[] stated =
+        [
+            .. limits.Where(l => l.Bound > 0).Select(l => (Limit: l, Of: l.Quantity.Name switch
+            {
+                "field" => HeldQuantity.Field,
+                "gradient" => HeldQuantity.Gradient,
+                "clearance" => HeldQuantity.Clearance,
+                "iron_field" => HeldQuantity.IronField,
+                _ => (HeldQuantity?)null,
+            })).Where(h => h.Of is not null).Select(h => new TuneHold(h.Of!.Value, h.Limit.AtLeast, h.Limit.Bound)),
+        ];
+        if (!stated.Any(h => h is { Of: HeldQuantity.Gradient, AtLeast: true }))
+        {
+            yield return new TuneHold(HeldQuantity.Gradient, true, DefaultGradient * Math.Abs(before.Beam.Gradient));
+        }
+
+        if (!stated.Any(h => h is { Of: HeldQuantity.Clearance, AtLeast: true }))
+        {
+            yield return new TuneHold(HeldQuantity.Clearance, true, DefaultClearance * before.Clearance);
+        }
+
+        foreach (TuneHold hold in stated.Distinct())
+        {
+            yield return hold;
         }
     }
 }

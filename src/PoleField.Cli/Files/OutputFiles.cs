@@ -28,6 +28,9 @@ internal sealed class OutputFiles : IDisposable
         return faults.Length == 0 ? files : throw new InputException(faults);
     }
 
+    /// <summary>Allows a target that was free at the check to be replaced: the run itself writes it on the way.</summary>
+    public void MayReplace(string target) => _replaceable.Add(Path.GetFullPath(target));
+
     /// <summary>Writes a file's content under a temporary name, down to the disk.</summary>
     /// <exception cref="InputException">It cannot be written: a full disk, a folder that went away.</exception>
     public void Write(string target, Action<Stream> content)

@@ -25,7 +25,7 @@ internal static class ResultName
 
     /// <summary>
     /// The files of several endings. A name after <c>-o</c> whose extension is that of one of them names all of them;
-    /// any other is a folder.
+    /// any other is a folder. Where two endings share an extension, the later file's name keeps its whole ending.
     /// </summary>
     public static IEnumerable<string> ForAll(string casePath, IReadOnlyList<string> endings, string? output)
     {
@@ -36,7 +36,9 @@ internal static class ResultName
 
         bool stem = !Directory.Exists(output) && endings.Any(e => Path.GetExtension(e).Equals(Path.GetExtension(output), StringComparison.OrdinalIgnoreCase));
         return stem
-            ? endings.Select(e => Path.ChangeExtension(output, Path.GetExtension(e)))
+            ? endings.Select((e, i) => endings.Take(i).Any(o => Path.GetExtension(o) == Path.GetExtension(e))
+                ? Path.ChangeExtension(output, null) + e
+                : Path.ChangeExtension(output, Path.GetExtension(e)))
             : endings.Select(e => For(casePath, e, Path.EndsInDirectorySeparator(output) ? output : output + Path.DirectorySeparatorChar));
     }
 

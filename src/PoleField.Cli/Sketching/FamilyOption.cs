@@ -15,6 +15,9 @@ internal sealed record FamilyOption(
     /// <summary>True when it grows with the family's leading length, unless it is given.</summary>
     public bool Scales { get; init; }
 
+    /// <summary>Its name in a case file: the option without its dashes in front.</summary>
+    public string Key => Name[2..];
+
     /// <summary>A length that keeps its proportion to the family's leading length.</summary>
     public static FamilyOption Length<T>(string name, string meaning, Func<T, double> get, Func<T, double, PoleFamily> set)
         where T : PoleFamily => Of(name, meaning, Dimension.Length, get, set) with { Scales = true };

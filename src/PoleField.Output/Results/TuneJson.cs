@@ -1,4 +1,3 @@
-using System.Text.Json;
 using System.Text.Json.Serialization;
 using PoleField.Beam;
 using PoleField.Design;
@@ -10,11 +9,12 @@ public static class TuneJson
 {
     /// <summary>Writes the result.</summary>
     /// <param name="head">Result before, whose title, hashes and beam are repeated.</param>
-    /// <param name="after">Report of the tuned magnet, solved to full accuracy.</param>
-    /// <param name="tuned">Moves and history.</param>
+    /// <param name="outcome">What came out.</param>
     /// <param name="stream">Where to.</param>
-    public static void Write(ResultFile head, (BeamReport Before, BeamReport After) after, TuneResult tuned, Stream stream)
+    public static void Write(ResultFile head, TuneOutcome outcome, Stream stream)
     {
+        TuneResult tuned = outcome.Tuned;
+        TuneStep last = tuned.State.Steps.Last(s => s.Accepted);
         var file = new TuneFile(
             "polefield-tune/1",
             head.Title,
@@ -22,27 +22,32 @@ public static class TuneJson
             head.SketchSha256,
             head.ProgramVersion,
             head.Beam,
-            State(after.Before),
-            State(after.After),
+            outcome.After is not null,
+            State(outcome.Before),
+            outcome.After is { } after ? State(after) : new StateSection { Gradient = last.Gradient, Rms = last.Rms, Clearance = 1e3 * last.Clearance },
+            [.. tuned.Limits],
             [.. tuned.Moves.Select(m => new FaceSection(
                 m.Layer, [.. m.Points.Select(p => new PointSection(1e3 * p.ArcLength, 1e3 * p.At.Y, 1e3 * p.At.Z, 1e6 * p.Move))]))],
-            tuned.Solves,
-            [.. tuned.Steps.Select(s => new StepSection(s.Number, s.Rms, s.Gradient, 1e3 * s.Clearance, s.Accepted))]);
-        JsonSerializer.Serialize(stream, file, ResultJson.Options);
-        stream.Write("\n"u8);
+            [.. tuned.Dimensions.Select(d => new DimensionSection(d.Name, d.Before, d.After))],
+            [.. outcome.TradeOff.Select(p => new TradeOffSection(p.LeastGradient, State(p.Report), p.Limits))],
+            tuned.State.Solves,
+            [.. tuned.State.Steps.Select(s => new StepSection(s.Number, s.Rms, s.Gradient, 1e3 * s.Clearance, s.Accepted))]);
+        AnalysisJson.Write(file, stream);
     }
 
-    private static StateSection State(BeamReport r) => new(
-        r.Beam.Field,
-        r.FieldError,
-        r.Beam.Gradient,
-        r.GradientError,
-        r.Gradient.Mean,
-        r.Gradient.Spread,
-        r.Gradient.Rms,
-        r.FieldTimesGradient.Spread,
-        r.FieldTimesGradient.Rms,
-        1e3 * r.Clearance);
+    private static StateSection State(BeamReport r) => new()
+    {
+        Field = r.Beam.Field,
+        FieldError = r.FieldError,
+        Gradient = r.Beam.Gradient,
+        GradientError = r.GradientError,
+        Mean = r.Gradient.Mean,
+        Spread = r.Gradient.Spread,
+        Rms = r.Gradient.Rms,
+        ProductSpread = r.FieldTimesGradient.Spread,
+        ProductRms = r.FieldTimesGradient.Rms,
+        Clearance = 1e3 * r.Clearance,
+    };
 
     private sealed record TuneFile(
         [property: JsonPropertyName("format")] string Format,
@@ -51,23 +56,58 @@ public static class TuneJson
         [property: JsonPropertyName("sketch_sha256")] string SketchSha256,
         [property: JsonPropertyName("program_version")] string ProgramVersion,
         [property: JsonPropertyName("beam")] BeamSection Beam,
+        [property: JsonPropertyName("verified")] bool Verified,
         [property: JsonPropertyName("before")] StateSection Before,
         [property: JsonPropertyName("after")] StateSection After,
+        [property: JsonPropertyName("limited_by")] IReadOnlyList<string> Limits,
         [property: JsonPropertyName("faces")] IReadOnlyList<FaceSection> Faces,
+        [property: JsonPropertyName("dimensions")] IReadOnlyList<DimensionSection> Dimensions,
+        [property: JsonPropertyName("trade_off")] IReadOnlyList<TradeOffSection> TradeOff,
         [property: JsonPropertyName("solves")] int Solves,
         [property: JsonPropertyName("steps")] IReadOnlyList<StepSection> Steps);
 
-    private sealed record StateSection(
-        [property: JsonPropertyName("field_T")] double Field,
-        [property: JsonPropertyName("field_error_T")] double FieldError,
-        [property: JsonPropertyName("gradient_T_per_m")] double Gradient,
-        [property: JsonPropertyName("gradient_error_T_per_m")] double GradientError,
-        [property: JsonPropertyName("gradient_mean_T_per_m")] double Mean,
-        [property: JsonPropertyName("spread")] double Spread,
-        [property: JsonPropertyName("rms")] double Rms,
-        [property: JsonPropertyName("field_times_gradient_spread")] double ProductSpread,
-        [property: JsonPropertyName("field_times_gradient_rms")] double ProductRms,
-        [property: JsonPropertyName("clearance_mm")] double Clearance);
+    private sealed record StateSection
+    {
+        [JsonPropertyName("field_T")]
+        public double? Field { get; init; }
+
+        [JsonPropertyName("field_error_T")]
+        public double? FieldError { get; init; }
+
+        [JsonPropertyName("gradient_T_per_m")]
+        public double? Gradient { get; init; }
+
+        [JsonPropertyName("gradient_error_T_per_m")]
+        public double? GradientError { get; init; }
+
+        [JsonPropertyName("gradient_mean_T_per_m")]
+        public double? Mean { get; init; }
+
+        [JsonPropertyName("spread")]
+        public double? Spread { get; init; }
+
+        [JsonPropertyName("rms")]
+        public double? Rms { get; init; }
+
+        [JsonPropertyName("field_times_gradient_spread")]
+        public double? ProductSpread { get; init; }
+
+        [JsonPropertyName("field_times_gradient_rms")]
+        public double? ProductRms { get; init; }
+
+        [JsonPropertyName("clearance_mm")]
+        public double? Clearance { get; init; }
+    }
+
+    private sealed record DimensionSection(
+        [property: JsonPropertyName("name")] string Name,
+        [property: JsonPropertyName("before")] double Before,
+        [property: JsonPropertyName("after")] double After);
+
+    private sealed record TradeOffSection(
+        [property: JsonPropertyName("least_gradient_T_per_m")] double LeastGradient,
+        [property: JsonPropertyName("shape")] StateSection Shape,
+        [property: JsonPropertyName("limited_by")] IReadOnlyList<string> Limits);
 
     private sealed record FaceSection(
         [property: JsonPropertyName("layer")] string Layer,

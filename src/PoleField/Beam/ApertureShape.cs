@@ -50,6 +50,21 @@ internal sealed class ApertureShape
         return inside ? 0.0 : Math.Sqrt(best);
     }
 
+    /// <summary>The place of the outline nearest to a place.</summary>
+    public Point NearestTo(Point p)
+    {
+        Point nearest = _corners[0];
+        for (int i = 0; i < _corners.Length; i++)
+        {
+            Point a = _corners[i];
+            Point d = _corners[(i + 1) % _corners.Length] - a;
+            Point q = a + (Math.Clamp((p - a).Dot(d) / d.SquaredLength, 0, 1) * d);
+            nearest = q.DistanceTo(p) < nearest.DistanceTo(p) ? q : nearest;
+        }
+
+        return nearest;
+    }
+
     /// <summary>Points along the outline, corners included.</summary>
     public IEnumerable<Point> EdgePoints(int perSide)
     {

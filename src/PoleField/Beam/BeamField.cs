@@ -38,4 +38,14 @@ public sealed class BeamField
 
     /// <summary>Values at a place inside the aperture (or on its edge).</summary>
     public BeamValues At(Point p) => _at(p);
+
+    /// <summary>The sum of two fields.</summary>
+    internal BeamField Plus(BeamField other) => new(
+        Aperture,
+        p =>
+        {
+            (BeamValues a, BeamValues b) = (_at(p), other._at(p));
+            return new BeamValues(p, a.By + b.By, a.Bz + b.Bz, a.DByDz + b.DByDz, a.DBzDz + b.DBzDz);
+        },
+        Method);
 }

@@ -3,24 +3,46 @@ namespace PoleField.Design;
 /// <summary>The damped least-squares step (Levenberg 1944, Marquardt 1963) with each unknown kept between bounds.</summary>
 internal static class BoundedStep
 {
-    /// <summary>Step δ minimising |r + Jδ|² + damping·Σ(Dδ)² with low ≤ δ ≤ high, D the columns' lengths.</summary>
-    /// <param name="rows">Residual and derivative row of each equation.</param>
+    private const int MostPasses = 12;
+
+    /// <summary>
+    /// Step δ minimising Σ(r + Jδ)² + damping·Σ(Dδ)² with low ≤ δ ≤ high, D the columns' lengths. Of one-sided equations only what is
+    /// above zero counts.
+    /// </summary>
+    /// <param name="rows">The equations.</param>
     /// <param name="damping">Damping, &gt; 0.</param>
     /// <param name="low">Lower bounds of the step.</param>
     /// <param name="high">Upper bounds of the step.</param>
-    public static double[] Of(IReadOnlyList<(double Residual, double[] Row)> rows, double damping, double[] low, double[] high)
+    public static double[] Of(IReadOnlyList<StepRow> rows, double damping, double[] low, double[] high)
+    {
+        bool[] counts = [.. rows.Select(r => !r.OneSided || r.Residual > 0)];
+        for (int pass = 0; ; pass++)
+        {
+            double[] step = OfCounting([.. rows.Where((_, k) => counts[k])], damping, low, high);
+            bool[] then = [.. rows.Select(r => !r.OneSided || r.At(step) > 0)];
+            if (pass == MostPasses || then.SequenceEqual(counts))
+            {
+                return step;
+            }
+
+            // Late passes only add, so that they end.
+            counts = pass < MostPasses / 2 ? then : [.. counts.Zip(then, (a, b) => a || b)];
+        }
+    }
+
+    private static double[] OfCounting(StepRow[] rows, double damping, double[] low, double[] high)
     {
         int n = low.Length;
         var matrix = new double[n, n];
         var right = new double[n];
-        foreach ((double residual, double[] row) in rows)
+        foreach (StepRow row in rows)
         {
             for (int i = 0; i < n; i++)
             {
-                right[i] -= row[i] * residual;
+                right[i] -= row.Derivatives[i] * row.Residual;
                 for (int j = 0; j < n; j++)
                 {
-                    matrix[i, j] += row[i] * row[j];
+                    matrix[i, j] += row.Derivatives[i] * row.Derivatives[j];
                 }
             }
         }
@@ -31,29 +53,63 @@ internal static class BoundedStep
             matrix[i, i] += damping * (matrix[i, i] + (1e-3 * mean));
         }
 
-        // Unknowns that would leave their range are put on its edge and the others solved again.
+        // Unknowns that would leave their range are put on its edge, and let go again when they pull inwards.
         var step = new double[n];
         var bound = new bool[n];
-        for (int pass = 0; pass <= n; pass++)
+        for (int pass = 0; pass <= 3 * n; pass++)
         {
             Solve(matrix, right, step, bound);
-            bool left = false;
+            bool changed = false;
             for (int i = 0; i < n; i++)
             {
                 if (!bound[i] && (step[i] < low[i] || step[i] > high[i]))
                 {
                     step[i] = Math.Clamp(step[i], low[i], high[i]);
-                    (bound[i], left) = (true, true);
+                    (bound[i], changed) = (true, true);
                 }
             }
 
-            if (!left)
+            if (!changed && !Release(matrix, right, step, (bound, high)))
             {
                 break;
             }
         }
 
+        for (int i = 0; i < n; i++)
+        {
+            step[i] = Math.Clamp(step[i], low[i], high[i]);
+        }
+
         return step;
+    }
+
+    // Lets go the one on an edge that pulls inwards most; false when none does.
+    private static bool Release(double[,] matrix, double[] right, double[] step, (bool[] Bound, double[] High) edge)
+    {
+        (int best, double most) = (-1, 0);
+        for (int i = 0; i < step.Length; i++)
+        {
+            if (!edge.Bound[i])
+            {
+                continue;
+            }
+
+            double slope = -right[i];
+            for (int k = 0; k < step.Length; k++)
+            {
+                slope += matrix[i, k] * step[k];
+            }
+
+            double pull = (step[i] >= edge.High[i] ? slope : -slope) / Math.Sqrt(matrix[i, i]);
+            (best, most) = pull > most ? (i, pull) : (best, most);
+        }
+
+        if (best >= 0)
+        {
+            edge.Bound[best] = false;
+        }
+
+        return best >= 0;
     }
 
     // Cholesky on the unknowns that are free.
@@ -103,5 +159,24 @@ internal static class BoundedStep
             x[i] /= factor[i, i];
             step[free[i]] = x[i];
         }
+    }
+}
+
+/// <summary>One equation of a least-squares step.</summary>
+/// <param name="Residual">Its value now.</param>
+/// <param name="Derivatives">By each unknown.</param>
+/// <param name="OneSided">Only a value above zero counts.</param>
+internal readonly record struct StepRow(double Residual, double[] Derivatives, bool OneSided = false)
+{
+    /// <summary>Its value after a step, to first order.</summary>
+    public double At(double[] step)
+    {
+        double value = Residual;
+        for (int i = 0; i < step.Length; i++)
+        {
+            value += Derivatives[i] * step[i];
+        }
+
+        return value;
     }
 }

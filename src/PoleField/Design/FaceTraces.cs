@@ -122,7 +122,8 @@ internal sealed class FaceTraces
         }
     }
 
-    private bool Differ(int a, int b)
+    /// <summary>True when two regions are filled differently.</summary>
+    public bool Differ(int a, int b)
     {
         RegionPhysics[] regions = _solution.Problem.Regions;
         return !SameLaw(regions[a].Law, regions[b].Law) || regions[a].RemanentGradient != regions[b].RemanentGradient

@@ -15,6 +15,9 @@ internal sealed record FixedMeshSolve
 
     public required BeamExtraction Extraction { get; init; }
 
+    /// <summary>The extraction's cut-off by node.</summary>
+    public required double[] Chi { get; init; }
+
     public required BeamField Field { get; init; }
 
     public required BeamMeasures Measures { get; init; }
@@ -67,6 +70,7 @@ internal sealed record FixedMeshSolve
             Solution = new FieldSolution(problem, potential, history),
             Equations = equations,
             Extraction = extraction,
+            Chi = chi,
             Field = field,
             Measures = BeamMeasures.Of(field, ApertureSamples.Of(options.Aperture, new ApertureShape(options.Aperture))),
         };

@@ -78,7 +78,8 @@ internal readonly record struct MaterialDerivatives(
             area * phi));
     }
 
-    private MaterialDerivatives Plus(in MaterialDerivatives other) => new(
+    /// <summary>Sum.</summary>
+    public MaterialDerivatives Plus(in MaterialDerivatives other) => new(
         AmpereTurns + other.AmpereTurns,
         Saturation + other.Saturation,
         Remanence + other.Remanence,

@@ -13,71 +13,51 @@ public sealed class Sensitivity
 {
     private const double BeamStep = 1e-3; // of the aperture's diagonal, for differences of the exactly harmonic field
 
-    private readonly FieldSolution _solution;
-    private readonly BeamField _field;
+    private readonly LinearisedField _linear;
     private readonly ApertureSamples _samples;
-    private readonly BeamExtraction _extraction;
-    private readonly TangentSystem _tangent;
     private readonly FaceTraces _faces;
+    private readonly int _threads;
 
-    private Sensitivity(FieldSolution solution, BeamField field, BeamExtraction extraction, TangentSystem tangent)
+    private Sensitivity(LinearisedField linear, int threads)
     {
-        _solution = solution;
-        _field = field;
-        _extraction = extraction;
-        _tangent = tangent;
-        _samples = ApertureSamples.Of(field.Aperture, new ApertureShape(field.Aperture));
-        Measures = BeamMeasures.Of(field, _samples);
-        _faces = new FaceTraces(solution);
+        (_linear, _threads) = (linear, threads);
+        _samples = ApertureSamples.Of(linear.Field.Aperture, new ApertureShape(linear.Field.Aperture));
+        Measures = BeamMeasures.Of(linear.Field, _samples);
+        _faces = new FaceTraces(linear.Solution);
     }
 
     /// <summary>Gauss points of all faces between different materials, in the order of the section's edges and along each.</summary>
     public IReadOnlyList<FacePoint> Points => _faces.Points;
 
     /// <summary>The magnet.</summary>
-    public Magnet Magnet => _solution.Magnet;
+    public Magnet Magnet => _linear.Solution.Magnet;
 
     /// <summary>The section.</summary>
-    public CrossSection Section => _solution.Mesh.Section;
+    public CrossSection Section => _linear.Solution.Mesh.Section;
 
     internal BeamMeasures Measures { get; }
 
     internal double[] SampleWeights => _samples.Weights;
 
-    /// <summary>
-    /// Takes one Newton step in the next order of elements and factors the tangent there: traces at faces need the digits.
-    /// </summary>
+    /// <summary>Takes one Newton step in the next order of elements and factors the tangent there.</summary>
     /// <param name="solved">Solved magnet.</param>
     /// <param name="threads">Threads, at least 1.</param>
-    public static Sensitivity Of(SolvedMagnet solved, int threads = 1)
-    {
-        FieldProblem problem = solved.Solution.Problem;
-        double[] chi = BandCutOff.Nodal(problem, new ApertureShape(solved.Field.Aperture))
-            ?? throw new InvalidOperationException("A solved magnet has a band of air around its aperture.");
-        HigherOrderStep higher = HigherOrderStep.From(solved.Solution, threads, CancellationToken.None);
-        var solution = new FieldSolution(higher.Problem, higher.Potential, solved.Solution.History);
-        BeamExtraction extraction = BeamExtraction.Create(higher.Problem.Space, higher.Lift.Up(chi));
-        return new Sensitivity(
-            solution,
-            extraction.FieldOf(solved.Field.Aperture, higher.Potential),
-            extraction,
-            new FieldEquations(higher.Problem, threads).TangentAt(higher.Potential));
-    }
+    public static Sensitivity Of(SolvedMagnet solved, int threads = 1) => new(LinearisedField.Of(solved, threads), threads);
 
-    internal static Sensitivity Of(FixedMeshSolve solve) =>
-        new(solve.Solution, solve.Field, solve.Extraction, solve.Equations.TangentAt(solve.Solution.Potential));
+    internal static Sensitivity Of(FixedMeshSolve solve, int threads = 1) => new(LinearisedField.Of(solve), threads);
 
     /// <summary>Derivatives of the quantities, in their order.</summary>
     public IReadOnlyList<QuantityDerivatives> Derivatives(IReadOnlyList<DesignQuantity> quantities)
     {
         double[][] adjoints = Adjoints([.. quantities.Select(q => q.Terms(Measures, _samples.Weights))]);
-        double step = BeamStep * _field.Aperture.Outline.Bounds.Diagonal;
+        double step = BeamStep * _linear.Field.Aperture.Outline.Bounds.Diagonal;
         BeamMeasures[] shifted =
         [
             .. new[] { new Point(step, 0), new(-step, 0), new(0, step), new(0, -step) }
-                .Select(by => BeamMeasures.Of(_field, _samples.ShiftedBy(by))),
+                .Select(by => BeamMeasures.Of(_linear.Field, _samples.ShiftedBy(by))),
         ];
-        return [.. quantities.Select((q, k) => Collect(q, adjoints[k], [.. shifted.Select(m => q.Value(m))], step))];
+        PartResponses parts = Responses();
+        return [.. quantities.Select((q, k) => Collect((q, parts), adjoints[k], [.. shifted.Select(m => q.Value(m))], step))];
     }
 
     /// <summary>Derivative densities at <see cref="Points"/> on the iron of sums of terms, one sum per row.</summary>
@@ -87,62 +67,74 @@ public sealed class Sensitivity
         return
         [
             .. Adjoints(sums).Select(a => _faces.Density(
-                a, touches ? Means(MaterialDerivatives.Of(_solution, a)) : new double[Section.Regions.Count])),
+                a, touches ? Means(MaterialDerivatives.Of(_linear.Solution, a)) : new double[Section.Regions.Count])),
         ];
     }
 
     private double[][] Adjoints(IReadOnlyList<IReadOnlyList<BeamTerm>> sums) =>
-        _tangent.Solve([.. sums.Select(_extraction.Functional)]);
+        _linear.Tangent.Solve([.. sums.Select(_linear.Extraction.Functional)]);
 
     private static double[] Means(MaterialDerivatives[] regions) => [.. regions.Select(r => r.Mean)];
 
-    private QuantityDerivatives Collect(DesignQuantity quantity, double[] adjoint, double[] shifted, double step)
+    private QuantityDerivatives Collect((DesignQuantity Quantity, PartResponses Parts) of, double[] adjoint, double[] shifted, double step)
     {
-        MaterialDerivatives[] regions = MaterialDerivatives.Of(_solution, adjoint);
-        double[] density = _faces.Density(adjoint, Means(regions));
+        MaterialDerivatives[] regions = MaterialDerivatives.Of(_linear.Solution, adjoint);
         return new QuantityDerivatives
         {
-            Quantity = quantity,
-            Value = quantity.Value(Measures),
-            Density = density,
-            Parts = [.. Enumerable.Range(0, Section.Parts.Count).Select(part => PartOf(part, density, regions))],
+            Quantity = of.Quantity,
+            Value = of.Quantity.Value(Measures),
+            Density = _faces.Density(adjoint, Means(regions)),
+            Parts = [.. Enumerable.Range(0, Section.Parts.Count).Select(part => PartOf(part, of, regions))],
             BeamPlace = new Point((shifted[0] - shifted[1]) / (2 * step), (shifted[2] - shifted[3]) / (2 * step)),
         };
     }
 
-    private PartDerivatives PartOf(int part, double[] density, MaterialDerivatives[] regions)
+    // Every part that is not the same as its surroundings, moved as a whole.
+    private PartResponses Responses()
+    {
+        bool Differ(SectionEdge e) => e.Left < 0 || e.Right < 0 || _faces.Differ(e.Left, e.Right);
+        int[] parts =
+        [
+            .. Enumerable.Range(0, Section.Parts.Count).Where(part => Section.Edges.Any(e =>
+                e.Left >= 0 && e.Right >= 0 && Section.Regions[e.Left].Part == part != (Section.Regions[e.Right].Part == part) && Differ(e))),
+        ];
+        var velocities = new PartVelocities(Section, [.. parts.Select(p => (p, PivotOf(p)))], Differ);
+        var motion = MeshMotion.Of(_linear.Solution.Problem.Space, _linear.Chi, velocities);
+        Point[] places = [_samples.Centre, .. _samples.Inside, .. _samples.Edge];
+        MotionResponse[] responses = MotionResponses.Of(_linear, motion, _threads);
+        var changes = new Dictionary<Point, BeamValues>[responses.Length];
+        Parallel.For(0, responses.Length, new ParallelOptions { MaxDegreeOfParallelism = _threads }, k =>
+            changes[k] = places.Distinct().ToDictionary(p => p, responses[k].Field.At));
+        return new PartResponses(parts, changes);
+    }
+
+    private Point PivotOf(int part)
     {
         Box box = Box.Empty;
+        foreach (Region region in Section.Regions.Where(r => r.Part == part))
+        {
+            box = box.Including(region.Bounds);
+        }
+
+        return box.IsEmpty ? default : box.Centre;
+    }
+
+    private PartDerivatives PartOf(int part, (DesignQuantity Quantity, PartResponses Responses) of, MaterialDerivatives[] regions)
+    {
         MaterialDerivatives own = default;
         for (int r = 0; r < regions.Length; r++)
         {
-            if (Section.Regions[r].Part == part)
-            {
-                box = box.Including(Section.Regions[r].Bounds);
-                own = own with
-                {
-                    AmpereTurns = own.AmpereTurns + regions[r].AmpereTurns,
-                    Saturation = own.Saturation + regions[r].Saturation,
-                    Remanence = own.Remanence + regions[r].Remanence,
-                    Turn = own.Turn + regions[r].Turn,
-                };
-            }
+            own = Section.Regions[r].Part == part ? own.Plus(regions[r]) : own;
         }
 
-        Point pivot = box.IsEmpty ? default : box.Centre;
-        Point shift = default;
-        double turn = own.Turn;
-        for (int i = 0; i < density.Length; i++)
-        {
-            FacePoint p = Points[i];
-            if (Section.Regions[p.Inner].Part == part != (Section.Regions[p.Outer].Part == part))
-            {
-                Point push = (density[i] * p.Length) * p.Outward;
-                shift += push;
-                turn += push.Dot((p.At - pivot).Perpendicular);
-            }
-        }
-
-        return new PartDerivatives(shift, turn, pivot, own.AmpereTurns, own.Saturation, own.Remanence);
+        int moved = Array.IndexOf(of.Responses.Parts, part);
+        IReadOnlyList<BeamTerm> terms = of.Quantity.Terms(Measures, _samples.Weights);
+        double By(int k) => moved < 0 ? 0 : BeamChange.Of(terms, of.Responses.Changes[(3 * moved) + k]);
+        return new PartDerivatives(
+            new Point(By(0), By(1)), By(2) + own.Turn, PivotOf(part), own.AmpereTurns, own.Saturation, own.Remanence);
     }
+
+    /// <param name="Parts">Parts that were moved.</param>
+    /// <param name="Changes">Field of each one's shift along y, along z and turn, by place.</param>
+    private sealed record PartResponses(int[] Parts, Dictionary<Point, BeamValues>[] Changes);
 }

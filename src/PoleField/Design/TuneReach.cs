@@ -15,9 +15,12 @@ internal static class TuneReach
     public static IEnumerable<FaceModes> Modes(
         IReadOnlyList<Face> faces, TuneSettings settings, FixedMeshSolve start, Aperture aperture)
     {
-        Sensitivity s = Sensitivity.Of(start);
-        double[] density = s.Densities([DesignQuantity.Gradient.Terms(s.Measures, s.SampleWeights)])[0];
-        bool even = IsMirrored(s.Measures);
+        var effect = new Lazy<(Sensitivity Of, double[] Density)>(() =>
+        {
+            Sensitivity s = Sensitivity.Of(start);
+            return (s, s.Densities([DesignQuantity.Gradient.Terms(s.Measures, s.SampleWeights)])[0]);
+        });
+        bool even = IsMirrored(start.Measures);
         foreach (TuneStretch stretch in settings.Stretches)
         {
             Face[] own = [.. faces.Where(f => string.Equals(f.Layer, stretch.Layer, StringComparison.OrdinalIgnoreCase))];
@@ -31,7 +34,7 @@ internal static class TuneReach
             Face face = own.MinBy(f => Nearest(f, beam).Distance)!;
             (double from, double to) = stretch is { From: { } a, To: { } b }
                 ? (Nearest(face, a).At, Nearest(face, b).At)
-                : Around(face, s, density, beam);
+                : Around(face, effect.Value.Of, effect.Value.Density, beam);
             yield return FaceModes.On(face, Math.Min(from, to), Math.Max(from, to), settings.Freedoms, even);
         }
     }
