@@ -136,23 +136,23 @@ public sealed class TuneVerbTests
 
             [tune]
             family = "two-wire"
-            dimensions = { groove-half-angle = ["70 deg", "95 deg"] }
+            dimensions = { ridge-radius = ["3 mm", "3.4 mm"], groove-half-angle = ["70 deg", "95 deg"] }
             drawn_with = { groove-half-angle = "80 deg" }
             hold = { gradient = ">= 200 T/m" }
             """);
 
-        Run run = await Run.Of(Pipeline.OfLibrary(), "tune", folder.CasePath, "-o", folder["tuned"], "--accuracy", "1e-2");
+        Run run = await Run.Of(Pipeline.OfLibrary(), "tune", folder.CasePath, "-o", folder["tuned"], "--accuracy", "1e-3");
 
         Assert.True(run.Status == 0, run.All);
         using JsonDocument tune = Json(folder["tuned/two-wire.tune.json"]);
         double before = Number(tune, "before", "rms"), after = Number(tune, "after", "rms");
-        Assert.True(after < 0.97 * before, $"{before} to {after}");
+        Assert.True(after < 0.98 * before, $"{before} to {after}");
         double[] values = [.. tune.RootElement.GetProperty("dimensions").EnumerateArray().Select(d => d.GetProperty("after").GetDouble())];
 
         // The tool that draws the family draws the same magnet from the tuned dimensions.
         using SketchFolder redrawn = await SketchFolder.Of(
-            "two-wire", "--groove-half-angle", FormattableString.Invariant($"{Assert.Single(values):R} deg"));
-        Run again = await Run.Of(Pipeline.OfLibrary(), "solve", redrawn.CasePath, "--accuracy", "1e-2", "-o", redrawn["again.json"]);
+            "two-wire", "--ridge-radius", FormattableString.Invariant($"{values[0]:R} mm"), "--groove-half-angle", FormattableString.Invariant($"{values[1]:R} deg"));
+        Run again = await Run.Of(Pipeline.OfLibrary(), "solve", redrawn.CasePath, "--accuracy", "1e-3", "-o", redrawn["again.json"]);
         Assert.Equal(0, again.Status);
         using JsonDocument solved = Json(redrawn["again.json"]);
         Assert.Equal(after, solved.RootElement.GetProperty("aperture").GetProperty("gradient").GetProperty("rms").GetDouble(), 1e-3);
