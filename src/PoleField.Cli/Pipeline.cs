@@ -7,6 +7,7 @@ using PoleField.Geometry;
 using PoleField.Magnetostatics;
 using PoleField.Materials;
 using PoleField.Output.Pages;
+using PoleField.Output.Results;
 
 namespace PoleField.Cli;
 
@@ -31,8 +32,8 @@ internal sealed record Pipeline
     /// <summary>|B| of a solved magnet at any place, T; null where the model ends.</summary>
     public Func<SolvedMagnet, Func<Point, double?>> FieldOf { get; init; } = solved => place => solved.Solution.At(place)?.Magnitude;
 
-    /// <summary>Result to the result file's JSON.</summary>
-    public required Action<Stream, SolvedCase> WriteResult { get; init; }
+    /// <summary>Writes the result file.</summary>
+    public Action<Stream, ResultFile> WriteResult { get; init; } = (stream, file) => JsonText.Write(file, stream);
 
     /// <summary>Pictures of a sketch with what was found in it.</summary>
     public PictureSet<LoadedCase> SketchPictures { get; init; } = new([], _ => []);
@@ -41,7 +42,7 @@ internal sealed record Pipeline
     public PictureSet<SolvedCase> ResultPictures { get; init; } = new([], _ => []);
 
     /// <summary>The page of a report as far as the solve itself goes.</summary>
-    public Func<SolvedCase, ReportPage> Page { get; init; } = solved => new ReportPage { Result = ResultOutput.Of(solved) };
+    public Func<SolvedCase, ReportPage> Page { get; init; } = solved => ReportOutput.PageOf(ResultOutput.FileOf(solved));
 
     /// <summary>Verbs that solve a case and work something out of it; each is registered as it is listed here.</summary>
     public IReadOnlyList<AnalysisStep> Analyses { get; init; } = [];
@@ -72,10 +73,9 @@ internal sealed record Pipeline
         ReadMaterial = ReadCurve,
         Solve = (magnet, aperture, options, progress, cancellation) =>
             MagnetSolver.Solve(magnet, aperture, options, progress, cancellation),
-        WriteResult = ResultOutput.WriteJson,
         SketchPictures = CasePictures.OfSketch,
         ResultPictures = CasePictures.OfSolution,
-        Page = ReportOutput.PageOf,
+        Page = solved => ReportOutput.PageOf(solved),
     };
 
     private static Sketch ReadDxf(Stream stream, string name, LengthUnit? unit) =>
@@ -94,6 +94,9 @@ internal sealed record SolvedCase
     public required SolvedMagnet Solved { get; init; }
 
     public required IReadOnlyList<Verdict> Verdicts { get; init; }
+
+    /// <summary>Heat, pull, energy and stray field.</summary>
+    public required OperationReport Operation { get; init; }
 
     public required IReadOnlyList<string> Cautions { get; init; }
 

@@ -33,6 +33,14 @@ internal sealed record Terminal(TextWriter Out, TextWriter Error)
         };
     }
 
+    /// <summary>Prints what a writer of UTF-8 text writes, as the result.</summary>
+    public void Print(Action<Stream> write)
+    {
+        using var stream = new MemoryStream();
+        write(stream);
+        Out.Write(Encoding.UTF8.GetString(stream.ToArray()));
+    }
+
     /// <summary>True when the terminal may be coloured: NO_COLOR unset or empty, TERM not "dumb".</summary>
     public bool MayColour => string.IsNullOrEmpty(Variable("NO_COLOR")) && Variable("TERM") != "dumb";
 }

@@ -1,10 +1,30 @@
+using PoleField.Beam;
 using PoleField.Geometry;
 
 namespace PoleField.Cli.Case;
 
-/// <summary>Reads the sections of the analyses: two wires, ramp, map, tolerance.</summary>
+/// <summary>Reads the sections of the analyses: the magnet's use, two wires, ramp, map, tolerance.</summary>
 internal static class AnalysisReader
 {
+    /// <summary>[magnet]: length, temperature of the warm coils, levels of stray field.</summary>
+    public static OperationSetup ReadOperation(TableReader root)
+    {
+        const double zeroCelsius = 273.15;
+        OperationSetup usual = OperationSetup.Default;
+        if (root.Table("magnet") is not { } table)
+        {
+            return usual;
+        }
+
+        double length = table.RequiredQuantity("length", Dimension.Length, Allowed.Positive);
+        double? kelvin = table.Quantity("coil_temperature", Dimension.Temperature, new Allowed(zeroCelsius - 50, zeroCelsius + 250));
+        double[]? levels = table.List("stray_levels", "[\"0.5 mT\", \"3 mT\"]") is { } items
+            ? [.. items.Select(i => table.QuantityOf(i, table.Where("stray_levels"), Dimension.Field, Allowed.Positive)).Order()]
+            : null;
+        table.Close();
+        return new OperationSetup(length, kelvin - zeroCelsius ?? usual.Celsius, levels ?? usual.StrayLevels);
+    }
+
     public static TwoWireSection ReadTwoWire(TableReader root)
     {
         if (root.Table("two_wire") is not { } table)

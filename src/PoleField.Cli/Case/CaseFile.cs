@@ -1,3 +1,4 @@
+using PoleField.Beam;
 using PoleField.Cli.Sketching;
 using PoleField.Drawing;
 using PoleField.Geometry;
@@ -22,8 +23,11 @@ internal sealed record CaseFile
 
     public required BeamSection Beam { get; init; }
 
+    /// <summary>What is stated about the magnet's use: length, warm coils, levels of stray field.</summary>
+    public OperationSetup Operation { get; init; } = OperationSetup.Default;
+
     /// <summary>Length along the beam, metres; null when not stated.</summary>
-    public double? Length { get; init; }
+    public double? Length => Operation.Length;
 
     /// <summary>Relative accuracy of field and gradient over the aperture.</summary>
     public double Accuracy { get; init; } = 1e-4;
@@ -32,6 +36,9 @@ internal sealed record CaseFile
     public IReadOnlyList<Limit> Require { get; init; } = [];
 
     public required TwoWireSection TwoWire { get; init; }
+
+    /// <summary>What is known of the wires that the poles follow.</summary>
+    public StatedWires Wires => new(TwoWire.HalfSpacing, TwoWire.Midpoint);
 
     public required RampSection Ramp { get; init; }
 

@@ -57,7 +57,7 @@ internal static class CaseReader
             Surroundings = Asking(() => ReadSurroundings(root, layers)),
             MirrorLeftRight = Asking(() => ReadMirror(root)),
             Beam = ReadBeam(root, layers),
-            Length = ReadSingle(root, "magnet", t => t.RequiredQuantity("length", Dimension.Length, Allowed.Positive)),
+            Operation = AnalysisReader.ReadOperation(root),
             Accuracy = ReadSingle(root, "accuracy", t => t.RequiredQuantity("relative", Dimension.Ratio, AccuracyRange)) ?? 1e-4,
             Require = LimitReader.ReadRequire(root),
             TwoWire = AnalysisReader.ReadTwoWire(root),

@@ -6,8 +6,8 @@ using PoleField.Output.Pages;
 
 namespace PoleField.Cli.Commands;
 
-/// <summary>A verb that solves a case and works something out of it: its words, its files and its step.</summary>
-/// <param name="Name">Verb.</param>
+/// <summary>A verb that solves a case and works something out of it: its words, its files, its pictures and its step.</summary>
+/// <param name="Name">Verb; also the anchor of its section in a report.</param>
 /// <param name="Description">What it does, one sentence.</param>
 internal sealed record AnalysisStep(string Name, string Description)
 {
@@ -19,6 +19,9 @@ internal sealed record AnalysisStep(string Name, string Description)
 
     /// <summary>Endings of the files it will write, after the case's name: ".ramp.json". Checked before the solve.</summary>
     public required Func<ParseResult, IReadOnlyList<string>> Endings { get; init; }
+
+    /// <summary>Names of all pictures it may draw; their files are checked before the solve.</summary>
+    public IReadOnlyList<string> Pictures { get; init; } = [];
 
     /// <summary>True when the first file is JSON, which <c>--json</c> prints.</summary>
     public bool FirstIsJson { get; init; } = true;
@@ -35,19 +38,14 @@ internal sealed record AnalysisStep(string Name, string Description)
     /// <summary>True when the case's requirements are asked of what comes out, not of the solve it starts from.</summary>
     public bool JudgesItself { get; init; }
 
-    /// <summary>What a case lacks for it, looked at before the solve.</summary>
-    public Func<CaseFile, IReadOnlyList<Finding>> Needs { get; init; } = _ => [];
+    /// <summary>What a case or the command line lacks for it, looked at before the solve.</summary>
+    public Func<CaseFile, ParseResult, IReadOnlyList<Finding>> Needs { get; init; } = (_, _) => [];
+
+    /// <summary>True when a report on the case holds it.</summary>
+    public Func<CaseFile, bool> IsInReport { get; init; } = _ => false;
 
     public required Func<AnalysisRequest, Analysis> Run { get; init; }
-
-    /// <summary>What it adds to the page of <c>report</c>; null for nothing.</summary>
-    public ReportPart? Report { get; init; }
 }
-
-/// <summary>What an analysis adds to the page of a report.</summary>
-/// <param name="Pictures">Names of all pictures it may add; their files are checked before the solve.</param>
-/// <param name="AddTo">The page with its section; the same page when the case does not ask for it.</param>
-internal sealed record ReportPart(IReadOnlyList<string> Pictures, Func<AnalysisRequest, ReportPage, ReportPage> AddTo);
 
 /// <summary>What an analysis starts from.</summary>
 internal sealed record AnalysisRequest
@@ -69,11 +67,16 @@ internal sealed record AnalysisRequest
 }
 
 /// <summary>What came out of an analysis.</summary>
-/// <param name="Print">Prints it for people.</param>
+/// <param name="Answer">It in words, for the terminal and for the page of a report.</param>
 /// <param name="Files">Contents of the files, in the order of <see cref="AnalysisStep.Endings"/>; null for one that is not needed.</param>
-/// <param name="Met">What it was asked to reach, it reached.</param>
-internal sealed record Analysis(Action<TextWriter, Ink> Print, IReadOnlyList<Action<Stream>?> Files, bool Met = true)
+internal sealed record Analysis(Answer Answer, IReadOnlyList<Action<Stream>?> Files)
 {
+    /// <summary>Pictures, named as <see cref="AnalysisStep.Pictures"/> says.</summary>
+    public IReadOnlyList<ReportPicture> Pictures { get; init; } = [];
+
+    /// <summary>What it was asked to reach, it reached.</summary>
+    public bool Met { get; init; } = true;
+
     /// <summary>What was asked and not met, in words.</summary>
     public IReadOnlyList<string> NotMet { get; init; } = [];
 

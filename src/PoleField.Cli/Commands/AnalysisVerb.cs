@@ -1,5 +1,4 @@
 using System.CommandLine;
-using System.Text;
 using PoleField.Beam;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
@@ -49,13 +48,14 @@ internal sealed class AnalysisVerb
             return ExitStatus.WrongInput;
         }
 
-        if (_step.Needs(loaded.Case!) is { Count: > 0 } missing)
+        if (_step.Needs(loaded.Case!, arguments) is { Count: > 0 } missing)
         {
-            throw new InputException([.. missing.Select(f => f with { File = Path.GetFileName(loaded.Path) })]);
+            throw new InputException([.. missing.Select(f => f with { File = f.File ?? Path.GetFileName(loaded.Path) })]);
         }
 
         List<string> targets = Targets(arguments);
-        using OutputFiles files = OutputFiles.Plan(targets, _run.Force(arguments) || _step.GoesOn(arguments));
+        PictureFiles pictures = _run.Pictures(arguments);
+        using OutputFiles files = OutputFiles.Plan(targets.Concat(pictures.Targets(_step.Pictures)), _run.Force(arguments) || _step.GoesOn(arguments));
         foreach (string kept in targets.Where(t => _step.KeptOnTheWay.Any(e => t.EndsWith(e, StringComparison.Ordinal))))
         {
             files.MayReplace(kept);
@@ -67,15 +67,7 @@ internal sealed class AnalysisVerb
         using (ProgressLine progress = _run.Progress(arguments, options))
         {
             solved = _run.Solve(loaded, options, progress, cancellation);
-            analysis = _step.Run(new AnalysisRequest
-            {
-                Solved = solved,
-                Options = options,
-                Targets = targets,
-                Arguments = arguments,
-                Progress = progress.Report,
-                Cancellation = cancellation,
-            });
+            analysis = _step.Run(CaseRun.Request(arguments, solved, new SolveSteps(options, progress.Report, cancellation)) with { Targets = targets });
         }
 
         // What an interrupted analysis keeps is written whole.
@@ -90,8 +82,9 @@ internal sealed class AnalysisVerb
             }
         }
 
+        pictures.Write(files, [.. analysis.Pictures.Select(p => p.Figure)], writing);
         files.Commit(writing);
-        Print(arguments, analysis, written);
+        Print(arguments, (solved, analysis), written);
         return Status(solved, analysis);
     }
 
@@ -129,17 +122,15 @@ internal sealed class AnalysisVerb
         return [.. ResultName.ForAll(_run.CasePath(arguments), endings, output)];
     }
 
-    private void Print(ParseResult arguments, Analysis analysis, List<string> targets)
+    private void Print(ParseResult arguments, (SolvedCase Solved, Analysis Analysis) of, List<string> targets)
     {
-        if (_run.Json(arguments) && analysis.Files[0] is { } json)
+        if (_run.Json(arguments) && of.Analysis.Files[0] is { } json)
         {
-            using var stream = new MemoryStream();
-            json(stream);
-            _tool.Terminal.Out.Write(Encoding.UTF8.GetString(stream.ToArray()));
+            _tool.Terminal.Print(json);
         }
         else if (!_run.Quiet(arguments))
         {
-            analysis.Print(_tool.Terminal.Out, _tool.OutInk(arguments));
+            of.Analysis.Answer.Write(_tool.Terminal.Out, _tool.OutInk(arguments), of.Solved.Case.Case!.Title);
         }
 
         foreach (string target in targets.Where(_ => !_run.Quiet(arguments)))

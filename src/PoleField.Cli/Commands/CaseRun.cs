@@ -2,6 +2,7 @@ using System.CommandLine;
 using System.Diagnostics;
 using PoleField.Beam;
 using PoleField.Cli.Case;
+using PoleField.Cli.Files;
 using PoleField.Cli.Text;
 using PoleField.Magnetostatics;
 
@@ -16,6 +17,7 @@ internal sealed class CaseRun(Tool tool, string outDescription)
     private readonly Option<string?> _out = CommonOptions.Out(outDescription);
     private readonly Option<bool> _json = CommonOptions.Json();
     private readonly Option<bool> _force = CommonOptions.Force();
+    private readonly Option<string?> _figures = CommonOptions.Figures();
 
     /// <summary>Adds case and options to a command.</summary>
     public void AddTo(Command command, bool withJson)
@@ -27,6 +29,7 @@ internal sealed class CaseRun(Tool tool, string outDescription)
             command.Options.Add(_json);
         }
 
+        command.Options.Add(_figures);
         command.Options.Add(_accuracy);
         command.Options.Add(_threads);
         command.Options.Add(_force);
@@ -41,6 +44,19 @@ internal sealed class CaseRun(Tool tool, string outDescription)
     public bool Force(ParseResult arguments) => arguments.GetValue(_force);
 
     public bool Quiet(ParseResult arguments) => arguments.GetValue(tool.Quiet);
+
+    /// <summary>The folder for pictures.</summary>
+    public PictureFiles Pictures(ParseResult arguments) => new(arguments.GetValue(_figures), tool.Terminal.Error);
+
+    /// <summary>What an analysis of a solved case starts from.</summary>
+    public static AnalysisRequest Request(ParseResult arguments, SolvedCase solved, SolveSteps steps) => new()
+    {
+        Solved = solved,
+        Options = steps.Options,
+        Arguments = arguments,
+        Progress = steps.Progress,
+        Cancellation = steps.Cancellation,
+    };
 
     /// <summary>Loads the case; null after its faults have been printed.</summary>
     public LoadedCase? Load(ParseResult arguments)
@@ -85,17 +101,15 @@ internal sealed class CaseRun(Tool tool, string outDescription)
         SolvedMagnet solved = pipeline.Solve(magnet, aperture, steps.Options, steps.Progress, steps.Cancellation);
         steps.Cancellation.ThrowIfCancellationRequested();
 
-        // A uniform background never falls off.
-        double? reach = magnet.AppliedField == default
-            ? StrayField.Reach(pipeline.FieldOf(solved), magnet.Section.Bounds, StrayField.ImplantLevel)
-            : null;
+        var operation = OperationReport.Of(magnet, solved.Report.Circuit, pipeline.FieldOf(solved), file.Operation);
         using var process = Process.GetCurrentProcess();
         return new SolvedCase
         {
             Case = loaded,
             Solved = solved,
             Verdicts = [.. file.Require.Select(r => r.Judge(solved.Report))],
-            Cautions = Cautions.Of(file, solved.Report, reach),
+            Operation = operation,
+            Cautions = Cautions.Of(solved.Report, operation),
             Warnings = [.. loaded.Findings.Concat(solved.Report.Findings).Where(f => f.Severity == Severity.Warning)],
             ReadSeconds = loaded.Seconds,
             TotalSeconds = loaded.Seconds + clock.Elapsed.TotalSeconds,

@@ -1,7 +1,7 @@
 using System.CommandLine;
-using System.Text;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
+using PoleField.Output.Results;
 
 namespace PoleField.Cli.Commands;
 
@@ -52,7 +52,7 @@ internal sealed class CheckVerb
         Print(arguments, loaded);
         if (target is not null)
         {
-            files.Write(target, s => CheckJson.Write(s, loaded));
+            files.Write(target, s => JsonText.Write(new CheckFile(loaded), s));
         }
 
         if (pictures.Wanted)
@@ -68,9 +68,7 @@ internal sealed class CheckVerb
     {
         if (arguments.GetValue(_json))
         {
-            using var stream = new MemoryStream();
-            CheckJson.Write(stream, loaded);
-            _tool.Terminal.Out.Write(Encoding.UTF8.GetString(stream.ToArray()));
+            _tool.Terminal.Print(s => JsonText.Write(new CheckFile(loaded), s));
         }
         else if (!arguments.GetValue(_tool.Quiet))
         {

@@ -1,5 +1,4 @@
 using PoleField.Beam;
-using PoleField.Cli.Case;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
 using PoleField.Output.Figures;
@@ -19,43 +18,23 @@ internal static class CompareStep
             ("polefield compare magnet.toml --json | jq .two_wire", "the same for programs"),
         ],
         Endings = _ => [".compare.json"],
+        Pictures = [ComparisonFigure.GradientName, ComparisonFigure.FieldName, ProfileFigure.Name],
+        IsInReport = _ => true,
         Run = request =>
         {
-            TwoWireComparison comparison = ComparisonOf(request.Solved);
+            SolvedMagnet solved = request.Solved.Solved;
+            TwoWireComparison comparison = TwoWireComparison.Of(solved.Field, request.Solved.Case.Case!.Wires);
             return new Analysis(
-                (writer, ink) => AnswerOf(request.Solved, comparison).Write(writer, ink, request.Solved.Case.Case!.Title),
-                [s => TwoWireJson.Write(AnalysisOutput.HeadOf(request.Solved), comparison, s)]);
+                CompareText.Of(comparison, solved.Record.AccuracyReached),
+                [s => AnalysisJson.Write(ResultOutput.HeadOf(request.Solved), comparison, s)])
+            {
+                Pictures =
+                [
+                    new ReportPicture(ComparisonFigure.Gradient(solved.Field, comparison)),
+                    new ReportPicture(ComparisonFigure.Field(solved.Field, comparison)),
+                    new ReportPicture(ComparisonFigure.Lines(solved.Report, comparison)),
+                ],
+            };
         },
-        Report = new ReportPart([ComparisonFigure.MapName, ComparisonFigure.ProfilesName], AddTo),
     };
-
-    /// <summary>What a case states of its wires.</summary>
-    public static StatedWires WiresOf(CaseFile file) => new(file.TwoWire.HalfSpacing, file.TwoWire.Midpoint);
-
-    private static TwoWireComparison ComparisonOf(SolvedCase solved) =>
-        TwoWireComparison.Of(solved.Solved.Field, WiresOf(solved.Case.Case!));
-
-    private static Answer AnswerOf(SolvedCase solved, TwoWireComparison comparison) =>
-        CompareText.Of(comparison, solved.Solved.Record.AccuracyReached);
-
-    private static ReportPage AddTo(AnalysisRequest request, ReportPage page)
-    {
-        SolvedCase solved = request.Solved;
-        TwoWireComparison comparison;
-        try
-        {
-            comparison = ComparisonOf(solved);
-        }
-        catch (InputException)
-        {
-            return page; // poles of another kind have nothing to compare
-        }
-
-        return page with
-        {
-            TwoWire = AnswerOf(solved, comparison).ForPage(
-                new ReportPicture(ComparisonFigure.Map(solved.Solved.Field, comparison)),
-                new ReportPicture(ComparisonFigure.Lines(solved.Solved.Report, comparison))),
-        };
-    }
 }

@@ -19,15 +19,17 @@ internal static class DeflectStep
             ("polefield deflect magnet.toml --json | jq .flight.splitting_mm", "one number for programs"),
         ],
         Endings = _ => [".deflect.json"],
-        Needs = Missing,
+        Pictures = [DeflectionFigure.Name],
+        Needs = (file, _) => Missing(file),
+        IsInReport = file => Missing(file).Count == 0,
         Run = request =>
         {
             FlightReport flight = Fly(request);
-            return new Analysis(
-                (writer, ink) => DeflectText.Of(flight).Write(writer, ink, request.Solved.Case.Case!.Title),
-                [s => FlightJson.Write(AnalysisOutput.HeadOf(request.Solved), flight, s)]);
+            return new Analysis(DeflectText.Of(flight), [s => AnalysisJson.Write(ResultOutput.HeadOf(request.Solved), flight, s)])
+            {
+                Pictures = [new ReportPicture(DeflectionFigure.Draw(flight, DeflectText.Caption(flight)))],
+            };
         },
-        Report = new ReportPart(["deflection"], AddTo),
     };
 
     private static List<Finding> Missing(CaseFile file)
@@ -79,18 +81,4 @@ internal static class DeflectStep
     private static SpeedDistribution SpeedsOf(FlightSource source, double mass) => source.Temperature is { } temperature
         ? SpeedDistribution.Effusive(temperature, mass)
         : SpeedDistribution.Narrow(source.Speed!.Value, source.Width ?? 0);
-
-    private static ReportPage AddTo(AnalysisRequest request, ReportPage page)
-    {
-        if (Missing(request.Solved.Case.Case!).Count > 0)
-        {
-            return page;
-        }
-
-        FlightReport flight = Fly(request);
-        return page with
-        {
-            Deflection = DeflectText.Of(flight).ForPage(new ReportPicture(DeflectionFigure.Draw(flight, DeflectText.Caption(flight)))),
-        };
-    }
 }

@@ -5,7 +5,9 @@ using PoleField.Cli.Case;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
 using PoleField.Geometry;
+using PoleField.Output.Figures;
 using PoleField.Output.Maps;
+using PoleField.Output.Pages;
 
 namespace PoleField.Cli.Commands;
 
@@ -33,17 +35,25 @@ internal static class MapStep
             DefaultValueFactory = _ => ["csv"],
             Arity = ArgumentArity.OneOrMore,
         };
+        var points = new Option<string?>("--points")
+        {
+            Description = "Take the places from a table of y and z in mm, one place a line, instead of a grid; for csv.",
+            HelpName = "FILE",
+        };
         return new AnalysisStep("map", "Field maps for trajectory programs and viewers.")
         {
             Examples =
             [
                 ("polefield map magnet.toml", "writes magnet.map.csv and magnet.map.json"),
                 ("polefield map magnet.toml --format h5 --format vtu -o maps/", "HDF5 and mesh, into a folder"),
+                ("polefield map magnet.toml --points probes.csv", "the field at listed places"),
             ],
-            Options = [format],
+            Options = [format, points],
             FirstIsJson = false,
+            Pictures = CasePictures.OfSolution.Names,
             Endings = arguments => [.. Chosen(arguments.GetValue(format)).SelectMany(f => Formats[f])],
-            Run = request => Run(request, Chosen(request.Arguments.GetValue(format))),
+            Needs = (_, arguments) => Faults(Chosen(arguments.GetValue(format)), arguments.GetValue(points)),
+            Run = request => Run(request, Chosen(request.Arguments.GetValue(format)), request.Arguments.GetValue(points)),
         };
     }
 
@@ -68,18 +78,46 @@ internal static class MapStep
         return MapGrid.Rectangle(first, box.Max, step);
     }
 
-    private static Analysis Run(AnalysisRequest request, IReadOnlyList<string> formats)
+    // Looked at before the solve: a list that cannot be read, and a list for a format that holds grids only.
+    private static IReadOnlyList<Finding> Faults(IReadOnlyList<string> formats, string? points)
+    {
+        if (points is null)
+        {
+            return [];
+        }
+
+        try
+        {
+            PlacesFile.Read(points);
+        }
+        catch (InputException e)
+        {
+            return e.Findings;
+        }
+
+        return formats.All(f => f == "csv")
+            ? []
+            : [new Finding(Severity.Fault, "map-places", "A list of places goes into csv only; h5 holds grids and vtu the mesh.", "Leave --points out, or take --format csv.")];
+    }
+
+    private static Analysis Run(AnalysisRequest request, IReadOnlyList<string> formats, string? points)
     {
         SolvedCase result = request.Solved;
         SolvedMagnet solved = result.Solved;
         var origin = new MapProvenance(
             result.Case.Case!.Title, result.Case.CaseSha256, result.Case.SketchSha256, ResultOutput.ProgramVersion, solved.Record.AccuracyReached);
+        request.Progress(SolveProgress.Of("field map"));
         FieldMap? map = formats.Any(f => f != "vtu")
-            ? FieldMap.Sample(GridOf(result.Case.Case.Map, solved), FieldMap.FieldOf(solved), origin, request.Cancellation)
+            ? FieldMap.Sample(
+                points is null ? GridOf(result.Case.Case.Map, solved) : MapGrid.Places(PlacesFile.Read(points)),
+                FieldMap.FieldOf(solved),
+                origin,
+                new ParallelOptions { MaxDegreeOfParallelism = request.Options.Threads, CancellationToken = request.Cancellation })
             : null;
-        return new Analysis(
-            (writer, ink) => Print(writer, ink, result, map, formats),
-            [.. formats.SelectMany(f => Writers(f, map, solved, origin))]);
+        return new Analysis(MapText.Of(map, formats.Contains("vtu") ? solved.Record.Triangles : null), [.. formats.SelectMany(f => Writers(f, map, solved, origin))])
+        {
+            Pictures = [.. CasePictures.DrawField(FieldScene.Of(solved)).Select(f => new ReportPicture(f))],
+        };
     }
 
     private static IEnumerable<Action<Stream>> Writers(string format, FieldMap? map, SolvedMagnet solved, MapProvenance origin) => format switch
@@ -88,36 +126,6 @@ internal static class MapStep
         "h5" => [s => OpenPmdMap.Write(map!, s)],
         _ => [s => VtuMap.Write(solved.Solution.QuadraticCells(), solved.Solution.Magnet.Section, origin, s)],
     };
-
-    private static void Print(TextWriter writer, Ink ink, SolvedCase result, FieldMap? map, IReadOnlyList<string> formats)
-    {
-        writer.WriteLine(ink.Strong(result.Case.Case!.Title));
-        if (map is not null)
-        {
-            MapGrid grid = map.Grid;
-            Point from = grid[0];
-            Point to = grid[grid.Count - 1];
-            int exact = map.Samples.Count(s => s.Source == MapSource.Extraction);
-            int none = map.Samples.Count(s => s.Source == MapSource.None);
-            writer.WriteLine(FormattableString.Invariant(
-                $"  {grid.CountY} by {grid.CountZ} places, y from {Mm(from.Y)} to {Mm(to.Y)} mm, z from {Mm(from.Z)} to {Mm(to.Z)} mm"));
-            writer.WriteLine(FormattableString.Invariant(
-                $"  {exact} in the aperture, field and gradient from the extracted field"));
-            writer.WriteLine(FormattableString.Invariant(
-                $"  {map.Samples.Count - exact - none} outside it, field of the finite elements, no gradient"));
-            if (none > 0)
-            {
-                writer.WriteLine(FormattableString.Invariant($"  {none} outside the model, empty"));
-            }
-        }
-
-        if (formats.Contains("vtu"))
-        {
-            writer.WriteLine(FormattableString.Invariant($"  mesh of {result.Solved.Record.Triangles} triangles, values of the finite elements"));
-        }
-
-        static string Mm(double metres) => Numbers.Short(1e3 * metres);
-    }
 
     private static IReadOnlyList<string> Chosen(string[]? formats) => [.. (formats ?? ["csv"]).Distinct()];
 

@@ -1,11 +1,10 @@
 using System.CommandLine;
-using System.Text;
-using System.Text.Json;
 using PoleField.Cli.Case;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
 using PoleField.Materials;
 using PoleField.Output.Figures;
+using PoleField.Output.Results;
 
 namespace PoleField.Cli.Commands;
 
@@ -71,16 +70,7 @@ internal sealed class MaterialsVerb
         }
         else if (json)
         {
-            WriteJson(w =>
-            {
-                w.WriteStartArray();
-                foreach (Material material in shown)
-                {
-                    MaterialTables.WriteJson(w, material, withTable: false);
-                }
-
-                w.WriteEndArray();
-            });
+            _tool.Terminal.Print(s => JsonText.Write(new MaterialsFile(shown, withCurves: false), s));
         }
         else
         {
@@ -121,13 +111,13 @@ internal sealed class MaterialsVerb
         }
         catch (InputException e) when (json)
         {
-            WriteJson(w => WriteVerdict(w, e.Findings));
+            _tool.Terminal.Print(s => JsonText.Write(new MaterialCheckFile(e.Findings), s));
             return ExitStatus.WrongInput;
         }
 
         if (json)
         {
-            WriteJson(w => WriteVerdict(w, material.Findings));
+            _tool.Terminal.Print(s => JsonText.Write(new MaterialCheckFile(material.Findings), s));
         }
         else if (!arguments.GetValue(_tool.Quiet))
         {
@@ -142,7 +132,7 @@ internal sealed class MaterialsVerb
     {
         if (json)
         {
-            WriteJson(w => MaterialTables.WriteJson(w, material, withTable: true));
+            _tool.Terminal.Print(s => JsonText.Write(new MaterialsFile([material], withCurves: true), s));
         }
         else
         {
@@ -173,39 +163,5 @@ internal sealed class MaterialsVerb
     {
         byte[] bytes = CaseLoader.ReadFile(path, "magnetisation curve");
         return _tool.Pipeline.ReadMaterial(new MemoryStream(bytes), Path.GetFileName(path));
-    }
-
-    private static void WriteVerdict(Utf8JsonWriter json, IReadOnlyList<Finding> findings)
-    {
-        json.WriteStartObject();
-        json.WriteBoolean("ok", findings.All(f => f.Severity != Severity.Fault));
-        json.WriteStartArray("faults");
-        foreach (Finding finding in findings.Where(f => f.Severity == Severity.Fault))
-        {
-            json.WriteStartObject();
-            json.WriteString("what", finding.What);
-            if (finding.Line is { } line)
-            {
-                json.WriteNumber("line", line);
-            }
-
-            json.WriteString("text", finding.Text);
-            json.WriteString("fix", finding.Fix);
-            json.WriteEndObject();
-        }
-
-        json.WriteEndArray();
-        json.WriteEndObject();
-    }
-
-    private void WriteJson(Action<Utf8JsonWriter> write)
-    {
-        using var stream = new MemoryStream();
-        using (var json = new Utf8JsonWriter(stream, new JsonWriterOptions { Indented = true, NewLine = "\n" }))
-        {
-            write(json);
-        }
-
-        _tool.Terminal.Out.WriteLine(Encoding.UTF8.GetString(stream.ToArray()));
     }
 }

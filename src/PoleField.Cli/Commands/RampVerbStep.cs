@@ -19,37 +19,23 @@ internal static class RampVerbStep
             ("polefield ramp magnet.toml --json | jq .onset_factor", "the onset for programs"),
         ],
         Endings = _ => [".ramp.json"],
+        Pictures = [ExcitationFigure.Name],
+        IsInReport = file => !ReferenceEquals(file.Ramp, RampSection.Default),
         Run = request =>
         {
             RampReport ramp = Curve(request);
-            return new Analysis(
-                (writer, ink) => RampText.Of(ramp).Write(writer, ink, request.Solved.Case.Case!.Title),
-                [s => RampJson.Write(AnalysisOutput.HeadOf(request.Solved), ramp, s)],
-                ramp.AccuracyMet);
+            return new Analysis(RampText.Of(ramp), [s => AnalysisJson.Write(ResultOutput.HeadOf(request.Solved), ramp, s)])
+            {
+                Pictures = [new ReportPicture(ExcitationFigure.Draw(ramp, RampText.Onset(ramp)))],
+                Met = ramp.AccuracyMet,
+            };
         },
-        Report = new ReportPart(["excitation"], AddTo),
     };
 
     private static RampReport Curve(AnalysisRequest request)
     {
         CaseFile file = request.Solved.Case.Case!;
-        var settings = new RampSettings(file.Ramp.Factors, file.Ramp.Onset, CompareStep.WiresOf(file));
+        var settings = new RampSettings(file.Ramp.Factors, file.Ramp.Onset, file.Wires);
         return Ramp.Of(request.Solved.Solved, settings, request.Options, request.Progress, request.Cancellation);
-    }
-
-    private static ReportPage AddTo(AnalysisRequest request, ReportPage page)
-    {
-        bool asked = !ReferenceEquals(request.Solved.Case.Case!.Ramp, RampSection.Default);
-        if (!asked || !(request.Solved.Solved.Report.Circuit.AmpereTurns > 0))
-        {
-            return page;
-        }
-
-        RampReport ramp = Curve(request);
-        ExcitationPoint[] points = [.. ramp.Steps.Prepend(ramp.Start).Select(
-            s => new ExcitationPoint(s.AmpereTurns, s.Report.Beam.Field, s.Report.Beam.Gradient))];
-        Figure figure = ExcitationFigure.Draw(
-            points, ramp.OnsetFactor * request.Solved.Solved.Report.Circuit.AmpereTurns, RampText.Onset(ramp));
-        return page with { Ramp = RampText.Of(ramp).ForPage(new ReportPicture(figure)) };
     }
 }

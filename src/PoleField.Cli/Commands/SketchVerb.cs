@@ -1,10 +1,9 @@
 using System.CommandLine;
-using System.Text;
-using System.Text.Json;
 using PoleField.Cli.Files;
 using PoleField.Cli.Sketching;
 using PoleField.Cli.Text;
 using PoleField.Drawing;
+using PoleField.Output.Results;
 
 namespace PoleField.Cli.Commands;
 
@@ -98,7 +97,7 @@ internal sealed class SketchVerb
         files.Commit(cancellation);
         if (arguments.GetValue(_json))
         {
-            PrintJson(start, drawing, text);
+            _tool.Terminal.Print(s => JsonText.Write(new SketchFile(start, drawing, text), s));
         }
         else if (!arguments.GetValue(_tool.Quiet))
         {
@@ -138,30 +137,5 @@ internal sealed class SketchVerb
                 writer.WriteLine(line);
             }
         }
-    }
-
-    private void PrintJson(StartingCase start, string drawing, string text)
-    {
-        using var stream = new MemoryStream();
-        using (var json = new Utf8JsonWriter(stream, new JsonWriterOptions { Indented = true, NewLine = "\n" }))
-        {
-            json.WriteStartObject();
-            json.WriteString("format", "polefield-sketch/1");
-            json.WriteString("family", start.Family.Name);
-            json.WriteString("title", start.Title);
-            json.WriteString("sketch", drawing);
-            json.WriteString("case", text);
-            json.WriteNumber("ampere_turns", start.AmpereTurns);
-            json.WriteStartObject("beam");
-            json.WriteNumber("y_mm", start.Sketch.Beam.Y);
-            json.WriteNumber("z_mm", start.Sketch.Beam.Z);
-            json.WriteNumber("field_T", start.Field);
-            json.WriteNumber("gradient_T_per_m", start.Gradient);
-            json.WriteEndObject();
-            json.WriteString("holds_for", start.Idealisation);
-            json.WriteEndObject();
-        }
-
-        _tool.Terminal.Out.WriteLine(Encoding.UTF8.GetString(stream.ToArray()));
     }
 }

@@ -1,9 +1,9 @@
 using System.CommandLine;
-using System.Text;
 using PoleField.Beam;
 using PoleField.Cli.Case;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
+using PoleField.Output.Results;
 
 namespace PoleField.Cli.Commands;
 
@@ -11,11 +11,9 @@ namespace PoleField.Cli.Commands;
 internal sealed class SolveVerb
 {
     private const string Ending = ".result.json";
-    private const string ResultFormat = "polefield-result/1";
 
     private readonly Tool _tool;
     private readonly CaseRun _run;
-    private readonly Option<string?> _figures = CommonOptions.Figures();
 
     private SolveVerb(Tool tool)
     {
@@ -42,8 +40,6 @@ internal sealed class SolveVerb
             ],
         };
         verb._run.AddTo(command, withJson: true);
-        command.Options.Add(verb._figures);
-
         tool.SetRun(command, verb.Run);
         return command;
     }
@@ -55,7 +51,7 @@ internal sealed class SolveVerb
             return ExitStatus.WrongInput;
         }
 
-        var pictures = new PictureFiles(arguments.GetValue(_figures), _tool.Terminal.Error);
+        PictureFiles pictures = _run.Pictures(arguments);
         using OutputFiles files = PlanFiles(arguments, pictures, out string? target);
         SolveOptions options = _run.OptionsOf(arguments, loaded);
         SolvedCase result;
@@ -66,7 +62,7 @@ internal sealed class SolveVerb
 
         if (target is not null)
         {
-            files.Write(target, s => _tool.Pipeline.WriteResult(s, result));
+            files.Write(target, s => _tool.Pipeline.WriteResult(s, ResultOutput.FileOf(result)));
         }
 
         if (pictures.Wanted)
@@ -83,7 +79,7 @@ internal sealed class SolveVerb
     {
         string? output = _run.Out(arguments);
         target = output is null && _run.Json(arguments) ? null : ResultName.For(_run.CasePath(arguments), Ending, output);
-        bool replaceable = output is null && target is not null && ResultName.IsOwn(target, ResultFormat);
+        bool replaceable = output is null && target is not null && ResultName.IsOwn(target, ResultJson.Format);
         IEnumerable<string> drawn = pictures.Targets(_tool.Pipeline.ResultPictures.Names);
         return OutputFiles.Plan(target is null ? drawn : drawn.Prepend(target), _run.Force(arguments), replaceable ? [target!] : []);
     }
@@ -93,9 +89,7 @@ internal sealed class SolveVerb
         bool quiet = _run.Quiet(arguments);
         if (_run.Json(arguments))
         {
-            using var stream = new MemoryStream();
-            _tool.Pipeline.WriteResult(stream, result);
-            _tool.Terminal.Out.Write(Encoding.UTF8.GetString(stream.ToArray()));
+            _tool.Terminal.Print(s => _tool.Pipeline.WriteResult(s, ResultOutput.FileOf(result)));
         }
         else if (!quiet)
         {

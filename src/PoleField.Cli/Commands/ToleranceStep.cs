@@ -1,9 +1,11 @@
 using System.CommandLine;
+using PoleField.Beam;
 using PoleField.Cli.Case;
 using PoleField.Cli.Files;
 using PoleField.Cli.Text;
 using PoleField.Design;
 using PoleField.Output.Figures;
+using PoleField.Output.Pages;
 using PoleField.Output.Results;
 
 namespace PoleField.Cli.Commands;
@@ -12,7 +14,6 @@ namespace PoleField.Cli.Commands;
 internal static class ToleranceStep
 {
     private const double Loosest = 200e-6; // metres; common practice: what any mill keeps without asking
-    private const double TooFarFromLinear = 0.2; // of the deviation found, from which on a warning says so
 
     public static AnalysisStep Create()
     {
@@ -32,12 +33,14 @@ internal static class ToleranceStep
         {
             Examples =
             [
-                ("polefield tolerance magnet.toml", "prints the budget, writes magnet.tolerance.json and a picture of the faces"),
+                ("polefield tolerance magnet.toml", "prints the budget, writes magnet.tolerance.json"),
                 ("polefield tolerance magnet.toml --verify 50", "also solves 50 magnets with random errors"),
             ],
             Options = [verify],
-            Endings = _ => [".tolerance.json", ".tolerance.svg"],
-            Run = request => Run(request, request.Arguments.GetValue(verify)),
+            Endings = _ => [".tolerance.json"],
+            Pictures = [ToleranceFigure.Name],
+            IsInReport = file => file.Tolerance is not null,
+            Run = request => Run(request, request.Arguments.GetResult(verify) is null ? 0 : request.Arguments.GetValue(verify)),
         };
     }
 
@@ -46,20 +49,22 @@ internal static class ToleranceStep
         SolvedCase solved = request.Solved;
         ToleranceSection section = solved.Case.Case!.Tolerance ?? new ToleranceSection();
         int threads = request.Options.Threads;
+        request.Progress(SolveProgress.Of("sensitivities"));
         var budget = ToleranceBudget.Of(Sensitivity.Of(solved.Solved, threads), TolerancesOf(section));
         IReadOnlyList<FormAllowance> allowances = section.AllowGradient is { } share
             ? budget.Allowances(1, share * Math.Abs(budget.Derivatives[1].Value), Loosest)
             : [];
         ToleranceTrial? trial = draws == 0
             ? null
-            : ToleranceTrial.Run(budget, solved.Solved.Field.Aperture, new TrialOptions(draws, threads), null, request.Cancellation);
-        ResultFile head = ResultJson.ToFile(ResultOutput.Of(solved));
+            : ToleranceTrial.Run(budget, solved.Solved.Field.Aperture, new TrialOptions(draws, threads), Solved, request.Cancellation);
+        var answer = new ToleranceAnswer(budget, allowances, trial);
         return new Analysis(
-            (writer, ink) => Print(writer, ink, (solved.Case.Case.Title, section.AllowGradient), (budget, allowances, trial)),
-            [
-                s => ToleranceJson.Write(head, budget, allowances, (trial, s)),
-                s => FigureWriter.Svg(ToleranceFigure.Draw(budget), s),
-            ]);
+            ToleranceText.Of(answer, section.AllowGradient, Loosest), [s => AnalysisJson.Write(ResultOutput.HeadOf(solved), answer, s)])
+        {
+            Pictures = [new ReportPicture(ToleranceFigure.Draw(budget))],
+        };
+
+        void Solved(int magnets) => request.Progress(SolveProgress.Of(FormattableString.Invariant($"magnet {magnets} of {draws} with random errors")));
     }
 
     // What a case does not state is taken from common practice of a good workshop and supply.
@@ -75,118 +80,4 @@ internal static class ToleranceStep
         BeamY = s.BeamY ?? 50e-6,
         BeamZ = s.BeamZ ?? 50e-6,
     };
-
-    private static void Print(
-        TextWriter writer,
-        Ink ink,
-        (string Title, double? Allowed) of,
-        (ToleranceBudget Budget, IReadOnlyList<FormAllowance> Allowances, ToleranceTrial? Trial) result)
-    {
-        ToleranceBudget budget = result.Budget;
-        writer.WriteLine(ink.Strong(of.Title));
-        writer.WriteLine();
-        writer.WriteLine(ink.Strong("Tolerance budget, one sigma"));
-        var table = new TextTable("what is off", ">assumed", ">field", ">gradient", ">spread, points");
-        foreach (ToleranceContribution c in budget.Contributions)
-        {
-            Row(table, budget, (c.Name, c.Assumed), c.OneSigma);
-        }
-
-        Row(table, budget, ("together (root of squares)", string.Empty), budget.Total);
-        Row(table, budget, ("all at one sigma, worst signs", string.Empty), budget.Worst);
-        WriteLines(writer, table, ink);
-        if (result.Allowances.Count > 0)
-        {
-            Allowances(writer, ink, result.Budget, (result.Allowances, of.Allowed!.Value));
-        }
-
-        if (result.Trial is { } trial)
-        {
-            Trial(writer, ink, budget, trial);
-        }
-    }
-
-    private static void Row(TextTable table, ToleranceBudget budget, (string Name, string Assumed) what, IReadOnlyList<double> effects) =>
-        table.Add(
-            what.Name,
-            what.Assumed,
-            Percent(effects[0] / Math.Abs(budget.Derivatives[0].Value)),
-            Percent(effects[1] / Math.Abs(budget.Derivatives[1].Value)),
-            Percent(effects[2]));
-
-    private static void Allowances(
-        TextWriter writer, Ink ink, ToleranceBudget budget, (IReadOnlyList<FormAllowance> Stretches, double Allowed) of)
-    {
-        writer.WriteLine();
-        writer.WriteLine(ink.Strong($"Loosest form, one sigma, that keeps the gradient within {Percent(of.Allowed)}"));
-        var table = new TextTable("face", ">from y, z, mm", ">to y, z, mm", ">form, um");
-        int k = 0;
-        while (k < of.Stretches.Count)
-        {
-            FormAllowance first = of.Stretches[k];
-            double step = Preferred(first.OneSigma);
-            int last = k;
-            while (last + 1 < of.Stretches.Count && of.Stretches[last + 1].Face == first.Face && Preferred(of.Stretches[last + 1].OneSigma) == step)
-            {
-                last++;
-            }
-
-            Face face = budget.Faces[first.Face];
-            table.Add(
-                face.Layer,
-                Place(face.At(first.From).At),
-                Place(face.At(of.Stretches[last].To).At),
-                step >= Preferred(Loosest) ? $"{Numbers.Short(1e6 * step)} or more" : Numbers.Short(1e6 * step));
-            k = last + 1;
-        }
-
-        WriteLines(writer, table, ink);
-    }
-
-    // Rounded down to 1, 2 or 5 times a power of ten.
-    private static double Preferred(double size)
-    {
-        double decade = Math.Pow(10, Math.Floor(Math.Log10(size * 1e6)));
-        double lead = (size * 1e6 * (1 + 1e-9) / decade) switch { >= 5 => 5, >= 2 => 2, _ => 1 };
-        return 1e-6 * lead * decade;
-    }
-
-    private static void Trial(TextWriter writer, Ink ink, ToleranceBudget budget, ToleranceTrial trial)
-    {
-        writer.WriteLine();
-        writer.WriteLine(ink.Strong(FormattableString.Invariant($"{trial.Draws} magnets with random errors, solved anew")));
-        var table = new TextTable("one sigma", ">field", ">gradient", ">spread, points");
-        Effects("of the budget", trial.Predicted);
-        Effects("found", trial.Found);
-        Effects("beyond the linear prediction", trial.Residual);
-        WriteLines(writer, table, ink);
-        writer.WriteLine($"  sampling error of what was found: {Percent(trial.SamplingError)} of it");
-        if (Enumerable.Range(0, 2).Any(q => trial.Residual[q] > TooFarFromLinear * trial.Found[q]))
-        {
-            writer.WriteLine("  The errors are too large for the linear budget; take the figures found.");
-        }
-
-        if (trial.Residual[2] > TooFarFromLinear * trial.Found[2])
-        {
-            writer.WriteLine("  The spread does not follow the linear budget (in a symmetric magnet it grows with a shift of either sign); take the figures found.");
-        }
-
-        void Effects(string name, IReadOnlyList<double> effects) => table.Add(
-            name,
-            Percent(effects[0] / Math.Abs(budget.Derivatives[0].Value)),
-            Percent(effects[1] / Math.Abs(budget.Derivatives[1].Value)),
-            Percent(effects[2]));
-    }
-
-    private static string Percent(double ratio) => $"{Numbers.Significant(100 * ratio, 2)} %";
-
-    private static string Place(Geometry.Point p) => $"{Numbers.Millimetres(p.Y, 2)}, {Numbers.Millimetres(p.Z, 2)}";
-
-    private static void WriteLines(TextWriter writer, TextTable table, Ink ink)
-    {
-        foreach (string line in table.Lines(ink))
-        {
-            writer.WriteLine(line);
-        }
-    }
 }

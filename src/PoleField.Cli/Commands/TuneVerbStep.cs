@@ -7,6 +7,7 @@ using PoleField.Design;
 using PoleField.Drawing;
 using PoleField.Magnetostatics;
 using PoleField.Output.Figures;
+using PoleField.Output.Pages;
 using PoleField.Output.Results;
 
 namespace PoleField.Cli.Commands;
@@ -47,7 +48,9 @@ internal sealed class TuneVerbStep
             KeptOnTheWay = [StateEnding],
             Farewell = TimeSpan.FromSeconds(10),
             JudgesItself = true,
-            Needs = file => file.Tune is not null ? [] :
+            Pictures = [TuneFigure.Name, TradeOffFigure.Name],
+            IsInReport = file => file.Tune is not null,
+            Needs = (file, _) => file.Tune is not null ? [] :
             [
                 new Finding(Severity.Fault, "missing-table", "The case has no [tune]: nothing says what may move.", "Add [tune] with faces = [\"LAYER\", ...]."),
             ],
@@ -63,7 +66,7 @@ internal sealed class TuneVerbStep
         string? state = request.Targets.FirstOrDefault(t => t.EndsWith(StateEnding, StringComparison.Ordinal));
         TuneSettings settings = SettingsOf(request, section, magnet.Section) with
         {
-            Start = request.Arguments.GetValue(_resume)
+            Start = Asked(request, _resume)
                 ? TuneStateFile.Read(state ?? ResultName.For(solved.Case.Path, StateEnding, null), solved.Case.SketchSha256)
                 : null,
         };
@@ -71,7 +74,7 @@ internal sealed class TuneVerbStep
         BeamReport? after = Verified(request, tuned.Magnet, aperture);
         Verdict[] verdicts = after is null ? [] : [.. section.Hold.Concat(file.Require).DistinctBy(l => (l.Name, l.Bound)).Select(l => l.Judge(after))];
         bool met = after is not null && Better(settings, solved.Solved.Report, after) && verdicts.All(v => v.Met);
-        IReadOnlyList<TradeOffPoint> curve = after is not null && (!met || request.Arguments.GetValue(_tradeOff))
+        IReadOnlyList<TradeOffPoint> curve = after is not null && (!met || Asked(request, _tradeOff))
             ? TradeOffOf(request, (magnet, aperture), settings, (tuned, after))
             : [];
         var outcome = new TuneOutcome(solved.Solved.Report, after, tuned, curve) { OfProduct = settings.OfProduct };
@@ -85,7 +88,7 @@ internal sealed class TuneVerbStep
         void Kept(TuneState now)
         {
             TuneStep step = now.Steps[^1];
-            request.Progress(new SolveProgress(FormattableString.Invariant($"tune, rms {100 * step.Rms:g3} %"), step.Number, 0, 0, double.NaN, double.NaN));
+            request.Progress(SolveProgress.Of(FormattableString.Invariant($"tune, step {step.Number}, rms {100 * step.Rms:g3} %")));
             if (state is not null)
             {
                 TuneStateFile.Save(now, solved.Case.SketchSha256, state);
@@ -130,18 +133,26 @@ internal sealed class TuneVerbStep
         Sketch sketch = TunedCase.SketchOf(solved.Case, solved.Case.Reading!.Section!, tuned, name);
         PoleFamily? family = solved.Case.Case!.Tune!.Family is { } f ? FamilyTuning.With(f, tuned.State.Values) : null;
         string text = TunedCase.TextOf(solved.Case, name, family);
-        ResultFile head = ResultJson.ToFile(ResultOutput.Of(solved));
+        Figure faces = TuneFigure.Draw(tuned);
+        Figure? tradeOff = outcome.TradeOff.Count > 1 ? TradeOffFigure.Draw(outcome) : null;
         return new Analysis(
-            (writer, ink) => TuneText.Print(writer, ink, solved.Case.Case.Title, (outcome, verdicts)),
+            TuneText.Of(outcome, verdicts),
             [
-                s => TuneJson.Write(head, outcome, s),
+                s => AnalysisJson.Write(ResultOutput.HeadOf(solved), outcome, s),
                 s => DxfWriter.Write(sketch, s),
                 s => s.Write(System.Text.Encoding.UTF8.GetBytes(text)),
-                s => FigureWriter.Svg(TuneFigure.Draw(tuned), s),
+                s => FigureWriter.Svg(faces, s),
                 s => TuneStateFile.Write(tuned.State, solved.Case.SketchSha256, s),
-                outcome.TradeOff.Count > 1 ? s => FigureWriter.Svg(TradeOffFigure.Draw(outcome), s) : null,
-            ]);
+                tradeOff is null ? null : s => FigureWriter.Svg(tradeOff, s),
+            ])
+        {
+            Pictures = tradeOff is null ? [new ReportPicture(faces)] : [new ReportPicture(faces), new ReportPicture(tradeOff)],
+        };
     }
+
+    // Under report the options are not there.
+    private static bool Asked(AnalysisRequest request, Option<bool> option) =>
+        request.Arguments.GetResult(option) is not null && request.Arguments.GetValue(option);
 
     private static bool Better(TuneSettings settings, BeamReport before, BeamReport after) => settings.OfProduct
         ? after.FieldTimesGradient.Rms <= before.FieldTimesGradient.Rms

@@ -2,54 +2,68 @@ using PoleField.Beam;
 using PoleField.Cli.Text;
 using PoleField.Output.Figures;
 using PoleField.Output.Pages;
+using PoleField.Output.Results;
 
 namespace PoleField.Cli.Files;
 
-/// <summary>Lays the solve of a case out as a report's page.</summary>
+/// <summary>Lays a result out as a report's page.</summary>
 internal static class ReportOutput
 {
     /// <summary>Names of the pictures of the solve.</summary>
-    public static IReadOnlyList<string> Pictures { get; } = [.. CasePictures.OfSolution.Names, "gradient-map", "profiles", "saturation"];
+    public static IReadOnlyList<string> Pictures { get; } = [.. CasePictures.OfSolution.Names, "gradient-map", ProfileFigure.Name, "saturation"];
 
-    /// <summary>The page with everything the solve itself tells.</summary>
-    public static ReportPage PageOf(SolvedCase result)
+    /// <summary>Names of the pictures that a result file alone gives.</summary>
+    public static IReadOnlyList<string> PicturesOfResult { get; } = [ProfileFigure.Name];
+
+    /// <summary>The page that a result file alone gives: all its numbers, and the profiles.</summary>
+    public static ReportPage PageOf(ResultFile result)
     {
-        SolvedMagnet solved = result.Solved;
-        FieldScene scene = FieldScene.Of(solved);
+        Profiles computed = ProfilesOf(result);
+        bool drawable = computed.AlongY.Count > 1 && computed.AlongZ.Count > 1;
         return new ReportPage
         {
-            Result = ResultOutput.Of(result),
+            Result = result,
+            Aperture = drawable ? [new ReportPicture(ProfileFigure.Draw(computed, Lines), ProfileNumbers.Of(result.Aperture))] : [],
+            Sections = [.. OperationText.Of(result).Select(o => o.Answer.ForPage(o.Id, []))],
+        };
+    }
+
+    /// <summary>The page with everything the solve itself tells.</summary>
+    public static ReportPage PageOf(SolvedCase solved)
+    {
+        ResultFile result = ResultOutput.FileOf(solved);
+        FieldScene scene = FieldScene.Of(solved.Solved);
+        return PageOf(result) with
+        {
             Field = [.. CasePictures.DrawField(scene).Select(f => new ReportPicture(f))],
-            Aperture = [new ReportPicture(CasePictures.DrawGradient(solved)), Profiles(result)],
-            Coil = CoilText.Coils(solved.Solution.Magnet, result.Case.Case?.Length)?.ForPage(),
-            StrayField = CoilText.StrayFieldOf(solved)?.ForPage(),
+            Aperture = [new ReportPicture(CasePictures.DrawGradient(solved.Solved)), BesideWires(solved, result)],
             Saturation = scene.IsIron.Any(iron => iron) ? new ReportPicture(SaturationFigure.Draw(scene)) : null,
         };
     }
 
-    /// <summary>All pictures of a page in its order.</summary>
-    public static IReadOnlyList<Figure> PicturesOf(ReportPage page)
-    {
-        ReportSection?[] sections =
-            [page.TwoWire, page.Ramp, page.Tolerance, page.Tuning, page.Coil, page.StrayField, page.Deflection, .. page.Further];
-        IEnumerable<ReportPicture> pictures = page.Aperture.Concat(page.Field).Concat(page.Saturation is { } iron ? [iron] : [])
-            .Concat(sections.OfType<ReportSection>().SelectMany(s => s.Pictures));
-        return [.. pictures.Select(p => p.Figure)];
-    }
+    private const string Lines = "Lines through the beam's centre, inside the aperture.";
 
-    // Wires stated by the case are drawn beside; they carry the current that gives the computed field at the beam.
-    private static ReportPicture Profiles(SolvedCase result)
+    // The wires are those of compare: stated by the case or fitted to the computed field; none where no two wires are near.
+    private static ReportPicture BesideWires(SolvedCase solved, ResultFile result)
     {
-        BeamReport report = result.Solved.Report;
-        var computed = new Profiles("computed", report.ProfileY, report.ProfileZ);
-        string caption = "Lines through the beam's centre, inside the aperture.";
-        Profiles? wires = null;
-        if (result.Case.Case?.TwoWire is { HalfSpacing: { } a } stated)
+        Figure figure;
+        try
         {
-            wires = new TwoWireCurve(a, stated.Midpoint ?? default, report.Beam).Along(report);
-            caption += FormattableString.Invariant($" Two-wire field: half spacing {1e3 * a:g4} mm, scaled to the computed field at the beam.");
+            TwoWireComparison near = TwoWireComparison.Of(solved.Solved.Field, solved.Case.Case!.Wires);
+            figure = ComparisonFigure.Lines(solved.Solved.Report, near);
+        }
+        catch (InputException)
+        {
+            figure = ProfileFigure.Draw(ProfilesOf(result), Lines + " No field of two wires is near this one.");
         }
 
-        return new ReportPicture(ProfileFigure.Draw(computed, caption, wires), ProfileNumbers.Of(report));
+        return new ReportPicture(figure, ProfileNumbers.Of(result.Aperture));
     }
+
+    private static Profiles ProfilesOf(ResultFile result) => new(
+        "computed",
+        [.. result.Aperture.ProfileY.Select(v => new ProfilePoint(1e-3 * Known(v.Y), Known(v.Field), Known(v.Gradient)))],
+        [.. result.Aperture.ProfileZ.Select(v => new ProfilePoint(1e-3 * Known(v.Z), Known(v.Field), Known(v.Gradient)))]);
+
+    private static double Known(double? value) => value ?? double.NaN;
 }

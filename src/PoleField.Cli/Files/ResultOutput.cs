@@ -13,11 +13,14 @@ internal static class ResultOutput
     public static string ProgramVersion { get; } =
         typeof(ResultOutput).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()?.InformationalVersion ?? "unknown";
 
-    /// <summary>Writes the result file.</summary>
-    public static void WriteJson(Stream stream, SolvedCase result) => ResultJson.Write(Of(result), stream);
+    /// <summary>The result file.</summary>
+    public static ResultFile FileOf(SolvedCase result) => ResultJson.ToFile(Of(result));
 
-    /// <summary>What the result file says.</summary>
-    public static SolveResult Of(SolvedCase result)
+    /// <summary>What the files of all analyses repeat of the solve.</summary>
+    public static AnalysisHead HeadOf(SolvedCase result) => new(
+        result.Case.Case?.Title ?? string.Empty, result.Case.CaseSha256, result.Case.SketchSha256, ProgramVersion, result.Solved.Report);
+
+    private static SolveResult Of(SolvedCase result)
     {
         SolveRecord record = result.Solved.Record;
         return new SolveResult
@@ -32,6 +35,8 @@ internal static class ResultOutput
                 result.ReadSeconds, record.MeshSeconds, record.SolveSeconds, record.EvaluateSeconds, result.TotalSeconds),
             PeakMemoryMB = result.PeakMemoryMegabytes,
             Requirements = [.. result.Verdicts.Select(Requirement)],
+            Materials = [.. result.Case.Roles.Select(r => r.Material).DistinctBy(m => m.Name)],
+            Operation = result.Operation,
             Cautions = result.Cautions,
             Warnings = [.. result.Warnings.Select(w => Warning(w, result.Case.DrawingUnit))],
         };

@@ -125,7 +125,7 @@ internal sealed class SweepRun(Pipeline pipeline, string casePath, SweepPlan pla
                 solved.AllMet ? ExitStatus.Done : ExitStatus.NotMet,
                 string.Join("; ", CaseRun.NotMet(solved).Select(m => "not met: " + m)),
                 0,
-                ResultJson.ToFile(ResultOutput.Of(solved)));
+                ResultOutput.FileOf(solved));
         }
         catch (InputException e) when (e.Findings.All(f => f.What != InputsChanged))
         {

@@ -20,7 +20,10 @@ internal sealed record AnswerTable(string Caption, IReadOnlyList<string> Heads, 
         BeamTables.WriteTable(writer, table, ink);
     }
 
-    public ReportTable ForPage() => new(Caption, [.. Heads.Select(h => h.TrimStart('>'))], Rows);
+    public ReportTable ForPage() => new(Caption, [.. Heads.Select(h => h.TrimStart('>'))], [.. Rows.Select(r => r.Select(WithMinus).ToArray())]);
+
+    // A page has the true minus sign; a terminal may not.
+    private static string WithMinus(string cell) => cell.Length > 1 && cell[0] == '-' && char.IsAsciiDigit(cell[1]) ? "−" + cell[1..] : cell;
 }
 
 /// <summary>An analysis in words: tables and remarks, for the terminal and for the page.</summary>
@@ -48,8 +51,9 @@ internal sealed record Answer(string Heading, IReadOnlyList<AnswerTable> Tables,
     }
 
     /// <summary>The section of a page, with pictures.</summary>
-    public ReportSection ForPage(params ReportPicture[] pictures) => new()
+    public ReportSection ForPage(string id, IReadOnlyList<ReportPicture> pictures) => new()
     {
+        Id = id,
         Heading = Heading,
         Tables = [.. Tables.Select(t => t.ForPage())],
         Pictures = pictures,

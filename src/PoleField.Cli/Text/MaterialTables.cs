@@ -1,4 +1,3 @@
-using System.Text.Json;
 using PoleField.Materials;
 
 namespace PoleField.Cli.Text;
@@ -61,46 +60,8 @@ internal static class MaterialTables
         }
     }
 
-    public static void WriteJson(Utf8JsonWriter json, Material material, bool withTable)
-    {
-        json.WriteStartObject();
-        json.WriteString("name", material.Name);
-        json.WriteString("description", material.Description);
-        json.WriteString("source", material.Source);
-        json.WriteString("state", material.State);
-        json.WriteString("caution", material.Caution);
-        json.WriteStartArray("findings");
-        foreach (Finding finding in material.Findings)
-        {
-            json.WriteStringValue($"{finding.Text} {finding.Fix}".Trim());
-        }
-
-        json.WriteEndArray();
-        json.WriteBoolean("linear", material.Law.IsLinear);
-        if (double.IsFinite(material.Law.SaturationPolarisation))
-        {
-            json.WriteNumber("saturation_polarisation_T", material.Law.SaturationPolarisation);
-        }
-
-        if (withTable)
-        {
-            json.WriteStartArray("curve");
-            foreach ((double b, double h, double mu, _) in Rows(material))
-            {
-                json.WriteStartObject();
-                json.WriteNumber("B_T", b);
-                json.WriteNumber("H_A_per_m", h);
-                json.WriteNumber("mu_r", mu);
-                json.WriteEndObject();
-            }
-
-            json.WriteEndArray();
-        }
-
-        json.WriteEndObject();
-    }
-
-    private static IEnumerable<(double B, double H, double Mu, double J)> Rows(Material material) =>
+    /// <summary>Points of the curve for people: B, H, relative permeability, polarisation.</summary>
+    public static IEnumerable<(double B, double H, double Mu, double J)> Rows(Material material) =>
         FluxDensities.Select(b =>
         {
             double h = material.Law.At(b).FieldStrength;

@@ -48,7 +48,12 @@ internal sealed class ProgressLine(Terminal terminal, bool on, double asked, Tim
 
     private string Words(SolveProgress progress)
     {
-        var words = new List<string> { FormattableString.Invariant($"{progress.What}, mesh {progress.AdaptiveStep}") };
+        var words = new List<string> { progress.What };
+        if (progress.AdaptiveStep > 0)
+        {
+            words.Add(FormattableString.Invariant($"mesh {progress.AdaptiveStep}"));
+        }
+
         if (progress.Unknowns > 0)
         {
             words.Add(FormattableString.Invariant($"{progress.Unknowns} unknowns"));
@@ -57,6 +62,11 @@ internal sealed class ProgressLine(Terminal terminal, bool on, double asked, Tim
         if (progress.NewtonStep > 0)
         {
             words.Add(FormattableString.Invariant($"step {progress.NewtonStep}"));
+        }
+
+        if (double.IsFinite(progress.Residual))
+        {
+            words.Add($"last change {Numbers.Accuracy(progress.Residual)}");
         }
 
         if (double.IsFinite(progress.Accuracy))

@@ -11,7 +11,7 @@ internal static class RampText
             "Excitation",
             [
                 ">factor", ">ampere-turns, A", ">|B|, T", ">d|B|/dz, T/m", ">per ampere-turn", ">spread", ">iron max, T", ">saturated", "most in",
-                ">efficiency", ">k", ">Newton steps",
+                ">efficiency", ">k",
             ],
             [.. ramp.Steps.Select(s => Row(ramp, s))]);
         return new Answer("Excitation curve", [table], Remarks(ramp));
@@ -44,7 +44,6 @@ internal static class RampText
         s.MostSaturated is { } part ? Cell.Of(part.Layer, 12) : "-",
         s.Report.Circuit.Efficiency is { } e ? Numbers.Percent(e) : "-",
         Cell.Of(s.ShapeFactor, digits: 4),
-        FormattableString.Invariant($"{s.NewtonSteps}"),
     ];
 
     private static double Best(RampReport ramp) => ramp.Steps.Append(ramp.Start).Max(s => s.GradientPerAmpereTurn);

@@ -1,4 +1,5 @@
 using PoleField.Beam;
+using PoleField.Cli.Files;
 
 namespace PoleField.Cli.Text;
 
@@ -18,6 +19,11 @@ internal static class SolveTables
         WriteParts(writer, report, ink);
         WriteCoilsAndForces(writer, report, ink);
         WriteCircuit(writer, report.Circuit, ink);
+        foreach (AnswerTable table in OperationText.Of(ResultOutput.FileOf(result)).SelectMany(o => o.Answer.Tables))
+        {
+            table.Write(writer, ink);
+        }
+
         WriteRun(writer, result, ink);
         BeamTables.WriteRequirements(writer, result.Verdicts, ink);
         WriteCautions(writer, result, ink);
@@ -59,12 +65,20 @@ internal static class SolveTables
                 Cell.Of(part.AmpereTurns),
                 Cell.Of(part.CurrentDensity, 1e-6, 3),
                 Cell.Of(part.MmfDrop, digits: 4),
-                Cell.Of(part.ForcePerMetre?.Y, digits: 4),
-                Cell.Of(part.ForcePerMetre?.Z, digits: 4));
+                Force(part, part.ForcePerMetre?.Y),
+                Force(part, part.ForcePerMetre?.Z));
         }
 
         BeamTables.WriteTable(writer, table, ink);
+        if (parts.Any(p => p.ForceOnFreeFacesOnly))
+        {
+            writer.WriteLine("  * on faces in air alone; what the joint to other iron carries is not counted");
+            writer.WriteLine();
+        }
     }
+
+    private static string Force(PartReport part, double? component) =>
+        Cell.Of(component, digits: 4) + (part.ForceOnFreeFacesOnly ? "*" : string.Empty);
 
     private static void WriteCircuit(TextWriter writer, CircuitReport circuit, Ink ink)
     {
@@ -76,6 +90,7 @@ internal static class SolveTables
         table.Add("efficiency (gap share)", circuit.Efficiency is { } e ? Numbers.Percent(e) : "-");
         table.Add("stored energy, J/m", Numbers.Significant(circuit.EnergyPerMetre));
         table.Add("inductance, µH/m per turn²", Cell.Of(circuit.InductancePerMetre, 1e6));
+        table.Add("pull across the gap, N/m", Numbers.Significant(circuit.GapPullPerMetre, 4));
         BeamTables.WriteTable(writer, table, ink);
     }
 

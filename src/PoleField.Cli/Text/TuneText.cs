@@ -5,91 +5,97 @@ using PoleField.Output.Results;
 
 namespace PoleField.Cli.Text;
 
-/// <summary>Prints what tuning found.</summary>
+/// <summary>Tells what tuning found.</summary>
 internal static class TuneText
 {
-    public static void Print(TextWriter writer, Ink ink, string title, (TuneOutcome Outcome, IReadOnlyList<Verdict> Verdicts) of)
+    public static Answer Of(TuneOutcome outcome, IReadOnlyList<Verdict> verdicts)
     {
-        TuneOutcome outcome = of.Outcome;
-        writer.WriteLine(ink.Strong(title));
-        writer.WriteLine();
-        if (outcome.After is { } after)
+        List<AnswerTable> tables = outcome.After is { } after ? [BeforeAndAfter(outcome.Before, after)] : [];
+        TuneResult tuned = outcome.Tuned;
+        if (tuned.Moves.Count > 0)
         {
-            BeforeAndAfter(writer, ink, outcome.Before, after);
-        }
-        else
-        {
-            TuneStep last = outcome.Tuned.State.Steps.Last(s => s.Accepted);
-            writer.WriteLine(
-                $"  Stopped at rms {Numbers.Percent(last.Rms)}, gradient {Numbers.Significant(last.Gradient)} T/m, by the steps' own meshes; not yet solved to full accuracy.");
-            writer.WriteLine();
-        }
-
-        Changes(writer, outcome.Tuned);
-        TuneState state = outcome.Tuned.State;
-        string verified = outcome.After is null ? string.Empty : ", then solved to full accuracy";
-        writer.WriteLine(FormattableString.Invariant($"  {state.Steps.Count - 1} steps, {state.Solves} solves{verified}"));
-        foreach (Verdict v in of.Verdicts)
-        {
-            writer.WriteLine(
-                $"  {v.Limit.Name} {Numbers.InUnit(v.Limit.Bound, v.Limit.Quantity.Dimension)}: {(v.Found is { } m ? Numbers.InUnit(m, v.Limit.Quantity.Dimension) : "-")}, {(v.Met ? "met" : "not met: best found is written")}");
+            tables.Add(new AnswerTable(
+                "Moves of the faces, outward where positive",
+                ["face", ">least, um", ">most, um", ">length of face, mm"],
+                [.. tuned.Moves.Select(m => new[]
+                {
+                    m.Layer,
+                    Numbers.Significant(1e6 * m.Points.Min(p => p.Move), 3),
+                    Numbers.Significant(1e6 * m.Points.Max(p => p.Move), 3),
+                    Numbers.Millimetres(m.Points[^1].ArcLength - m.Points[0].ArcLength, 1),
+                })]));
         }
 
-        foreach (string line in Wrapped.Lines("What limits it: " + string.Join("; ", outcome.Tuned.Limits) + ".", 100, "  "))
+        if (tuned.Dimensions.Count > 0)
         {
-            writer.WriteLine(line);
+            tables.Add(new AnswerTable(
+                "Dimensions, mm or degrees",
+                ["dimension", ">before", ">now"],
+                [.. tuned.Dimensions.Select(d => new[] { d.Name, Numbers.Short(d.Before), Numbers.Short(d.After) })]));
+        }
+
+        if (verdicts.Count > 0)
+        {
+            tables.Add(new AnswerTable("What must hold", ["name", "bound", "found", "verdict"], [.. verdicts.Select(Verdict)]));
         }
 
         if (outcome.TradeOff.Count > 1)
         {
-            TradeOff(writer, ink, outcome);
+            tables.Add(TradeOff(outcome));
         }
+
+        return new Answer("Tuning", tables, Remarks(outcome));
     }
 
-    private static void BeforeAndAfter(TextWriter writer, Ink ink, BeamReport before, BeamReport after)
+    private static AnswerTable BeforeAndAfter(BeamReport before, BeamReport after)
     {
-        var table = new TextTable("quantity", ">before", ">after");
-        Row("field |B|, T", r => Numbers.WithError(r.Beam.Field, r.FieldError));
-        Row("gradient d|B|/dz, T/m", r => Numbers.WithError(r.Beam.Gradient, r.GradientError));
-        Row("gradient over the aperture: rms", r => Numbers.Percent(r.Gradient.Rms));
-        Row("gradient over the aperture: spread", r => Numbers.Percent(r.Gradient.Spread));
-        Row("field × gradient: rms", r => Numbers.Percent(r.FieldTimesGradient.Rms));
-        Row("clearance, mm", r => Numbers.Millimetres(r.Clearance));
-        BeamTables.WriteTable(writer, table, ink);
+        return new AnswerTable(
+            "Before and after, each solved to full accuracy",
+            ["quantity", ">before", ">after"],
+            [
+                Row("field |B|, T", r => Numbers.WithError(r.Beam.Field, r.FieldError)),
+                Row("gradient d|B|/dz, T/m", r => Numbers.WithError(r.Beam.Gradient, r.GradientError)),
+                Row("gradient over the aperture: rms", r => Numbers.Percent(r.Gradient.Rms)),
+                Row("gradient over the aperture: spread", r => Numbers.Percent(r.Gradient.Spread)),
+                Row("field × gradient: rms", r => Numbers.Percent(r.FieldTimesGradient.Rms)),
+                Row("clearance, mm", r => Numbers.Millimetres(r.Clearance)),
+            ]);
 
-        void Row(string name, Func<BeamReport, string> value) => table.Add(name, value(before), value(after));
+        string[] Row(string name, Func<BeamReport, string> value) => [name, value(before), value(after)];
     }
 
-    private static void Changes(TextWriter writer, TuneResult tuned)
+    private static string[] Verdict(Verdict v) =>
+    [
+        v.Limit.Name,
+        Numbers.InUnit(v.Limit.Bound, v.Limit.Quantity.Dimension),
+        v.Found is { } m ? Numbers.InUnit(m, v.Limit.Quantity.Dimension) : "-",
+        v.Met ? "met" : "not met: best found is written",
+    ];
+
+    private static AnswerTable TradeOff(TuneOutcome outcome) => new(
+        "Gradient against uniformity, each shape solved to full accuracy",
+        [">gradient, T/m", ">rms", ">clearance, mm", "limited by"],
+        [.. outcome.TradeOff.Select(p => new[]
+        {
+            Numbers.WithError(Math.Abs(p.Report.Beam.Gradient), p.Report.GradientError),
+            Numbers.Percent(outcome.RmsOf(p.Report)),
+            Numbers.Millimetres(p.Report.Clearance),
+            string.Join("; ", p.Limits.Select(limit => limit.Split(':')[0])),
+        })]);
+
+    private static List<string> Remarks(TuneOutcome outcome)
     {
-        foreach (FaceMoves face in tuned.Moves)
+        TuneState state = outcome.Tuned.State;
+        List<string> remarks = [];
+        if (outcome.After is null)
         {
-            writer.WriteLine(FormattableString.Invariant(
-                $"  {face.Layer} moved by {Numbers.Significant(1e6 * face.Points.Min(p => p.Move), 3)} to {Numbers.Significant(1e6 * face.Points.Max(p => p.Move), 3)} um over {Numbers.Millimetres(face.Points[^1].ArcLength - face.Points[0].ArcLength, 1)} mm of face"));
+            TuneStep last = state.Steps.Last(s => s.Accepted);
+            remarks.Add("Stopped: not yet solved to full accuracy.");
+            remarks.Add($"By the steps' own meshes: rms {Numbers.Percent(last.Rms)}, gradient {Numbers.Significant(last.Gradient)} T/m.");
         }
 
-        foreach (TunedDimension d in tuned.Dimensions)
-        {
-            writer.WriteLine(FormattableString.Invariant($"  {d.Name}: {d.Before:g6} before, {d.After:g6} now (mm or degrees)"));
-        }
+        remarks.Add(FormattableString.Invariant($"{state.Steps.Count - 1} steps, {state.Solves} solves."));
+        remarks.Add("What limits it: " + string.Join("; ", outcome.Tuned.Limits) + ".");
+        return remarks;
     }
-
-    private static void TradeOff(TextWriter writer, Ink ink, TuneOutcome outcome)
-    {
-        writer.WriteLine();
-        writer.WriteLine(ink.Strong("Gradient against uniformity, each shape solved to full accuracy"));
-        var table = new TextTable(">gradient, T/m", ">rms", ">clearance, mm", "limited by");
-        foreach (TradeOffPoint p in outcome.TradeOff)
-        {
-            table.Add(
-                Numbers.WithError(Math.Abs(p.Report.Beam.Gradient), p.Report.GradientError),
-                Numbers.Percent(outcome.RmsOf(p.Report)),
-                Numbers.Millimetres(p.Report.Clearance),
-                string.Join("; ", p.Limits.Select(Shortened)));
-        }
-
-        BeamTables.WriteTable(writer, table, ink);
-    }
-
-    private static string Shortened(string limit) => limit.Split(':')[0];
 }

@@ -7,6 +7,9 @@ namespace PoleField.Output.Figures;
 /// <summary>The pattern a beam leaves at the detector, with the magnet on and off.</summary>
 public static class DeflectionFigure
 {
+    /// <summary>Name of the picture.</summary>
+    public const string Name = "deflection";
+
     /// <summary>Draws the pattern.</summary>
     /// <param name="flight">The flight.</param>
     /// <param name="caption">Species, source and what is not modelled.</param>
@@ -23,7 +26,7 @@ public static class DeflectionFigure
         Figure figure = FigureFrame.Begin(
             new FrameText
             {
-                Name = "deflection",
+                Name = Name,
                 Title = "Pattern at the detector along the deflection",
                 Caption = caption,
                 Key = [new("magnet on", FigureStyle.Main), new(offName, FigureStyle.Reference)],

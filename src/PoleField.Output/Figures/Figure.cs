@@ -9,4 +9,11 @@ namespace PoleField.Output.Figures;
 /// <param name="Model">The plot.</param>
 /// <param name="Width">Width, points of 1/96 inch.</param>
 /// <param name="Height">Height, points of 1/96 inch.</param>
-public sealed record Figure(string Name, string Title, string Caption, PlotModel Model, double Width, double Height);
+public sealed record Figure(string Name, string Title, string Caption, PlotModel Model, double Width, double Height)
+{
+    /// <summary>Height of the title at the top, points; a page that writes the title as text leaves it out.</summary>
+    public double TitleHeight { get; init; }
+
+    /// <summary>Height of the caption at the bottom, points; likewise.</summary>
+    public double CaptionHeight { get; init; }
+}

@@ -30,6 +30,8 @@ internal readonly record struct PlotRoom(double Width, double Height, double Lef
 internal sealed class FigureFrame : Annotation
 {
     private const double Edge = 14;
+    private const double TitleLine = 20;
+    private const double Gap = 4; // kept of the margin where a page leaves the title out
     private const double KeySample = 27; // ends with a whole dash of the aperture's pen
     private readonly FrameText _text;
     private readonly IReadOnlyList<string> _title;
@@ -53,7 +55,7 @@ internal sealed class FigureFrame : Annotation
         Layer = AnnotationLayer.AboveSeries;
     }
 
-    private double HeadHeight => Edge + (_title.Count * 20) + (_keyRows.Count * 18) + 8;
+    private double HeadHeight => Edge + (_title.Count * TitleLine) + (_keyRows.Count * 18) + 8;
 
     private double FootHeight => (_foot.Count * FigureStyle.LineHeight) + Edge;
 
@@ -76,7 +78,11 @@ internal sealed class FigureFrame : Annotation
         };
         model.Annotations.Add(frame);
         double height = frame.HeadHeight + room.Height + room.Bottom + frame.FootHeight;
-        return new Figure(text.Name, text.Title, text.Caption, model, width, height);
+        return new Figure(text.Name, text.Title, text.Caption, model, width, height)
+        {
+            TitleHeight = Edge + (frame._title.Count * TitleLine) - Gap,
+            CaptionHeight = text.Notes.Count == 0 ? frame.FootHeight : 0,
+        };
     }
 
     /// <inheritdoc/>
@@ -89,7 +95,7 @@ internal sealed class FigureFrame : Annotation
         foreach (string line in _title)
         {
             Write(rc, line, y, isTitle: true);
-            y += 20;
+            y += TitleLine;
         }
 
         foreach (IReadOnlyList<KeyEntry> row in _keyRows)

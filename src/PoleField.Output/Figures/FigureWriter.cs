@@ -20,15 +20,17 @@ public static partial class FigureWriter
     /// <summary>Writes a figure as a stand-alone SVG document, UTF-8 without byte order mark.</summary>
     public static void Svg(Figure figure, Stream stream)
     {
-        byte[] bytes = new UTF8Encoding(false).GetBytes(SvgText(figure) + "\n");
+        byte[] bytes = new UTF8Encoding(false).GetBytes(Element(figure, 0, 0) + "\n");
         stream.Write(bytes);
     }
 
     /// <summary>
-    /// The figure as an <c>svg</c> element for a page: scales to the width it is given, has a name for screen readers, and
-    /// its inner ids start with the figure's name so that several can stand in one page.
+    /// The figure as an <c>svg</c> element for a page that writes title and caption beside it as text: scales to the width it is
+    /// given, has a name for screen readers, and its inner ids start with the figure's name so that several can stand in one page.
     /// </summary>
-    public static string SvgText(Figure figure)
+    public static string SvgText(Figure figure) => Element(figure, figure.TitleHeight, figure.CaptionHeight);
+
+    private static string Element(Figure figure, double above, double below)
     {
         OxyPlot.SvgExporter exporter = new()
         {
@@ -43,7 +45,7 @@ public static partial class FigureWriter
         string inner = text[body..].TrimEnd();
         inner = IdPattern().Replace(inner, m => $"{m.Groups[1].Value}{figure.Name}-{m.Groups[2].Value}");
         inner = inner.Replace($"font-family=\"{FigureStyle.Font}\"", $"font-family=\"{FontChoice}\"", StringComparison.Ordinal);
-        return Head(figure) + inner;
+        return Head(figure, above, below) + inner;
     }
 
     /// <summary>Writes a figure as PNG.</summary>
@@ -75,12 +77,13 @@ public static partial class FigureWriter
         }
     }
 
-    private static string Head(Figure figure)
+    private static string Head(Figure figure, double above, double below)
     {
         string w = figure.Width.ToString("0.##", CultureInfo.InvariantCulture);
-        string h = figure.Height.ToString("0.##", CultureInfo.InvariantCulture);
+        string top = above.ToString("0.##", CultureInfo.InvariantCulture);
+        string h = (figure.Height - above - below).ToString("0.##", CultureInfo.InvariantCulture);
         string id = figure.Name;
-        return $"<svg xmlns=\"http://www.w3.org/2000/svg\" xmlns:xlink=\"http://www.w3.org/1999/xlink\" viewBox=\"0 0 {w} {h}\" width=\"{w}\" "
+        return $"<svg xmlns=\"http://www.w3.org/2000/svg\" xmlns:xlink=\"http://www.w3.org/1999/xlink\" viewBox=\"0 {top} {w} {h}\" width=\"{w}\" "
             + $"role=\"img\" aria-labelledby=\"{id}-title {id}-desc\">"
             + $"<title id=\"{id}-title\">{WebUtility.HtmlEncode(figure.Title)}</title>"
             + $"<desc id=\"{id}-desc\">{WebUtility.HtmlEncode(figure.Caption)}</desc>\n";

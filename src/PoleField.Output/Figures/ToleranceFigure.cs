@@ -8,6 +8,9 @@ namespace PoleField.Output.Figures;
 /// <summary>Where along the faces the shape matters: what a bump costs, millimetre by millimetre, on the faces that matter most.</summary>
 public static class ToleranceFigure
 {
+    /// <summary>Name of the picture.</summary>
+    public const string Name = "tolerance";
+
     private const int MostFaces = 2;
     private const double Shown = 0.98;  // share of a face's effect that the picture shows
     private const double Bump = 1e-5 * 1e-3; // 10 µm over 1 mm, m²
@@ -24,7 +27,7 @@ public static class ToleranceFigure
         Figure figure = FigureFrame.Begin(
             new FrameText
             {
-                Name = "tolerance",
+                Name = Name,
                 Title = "What a bump on the pole face costs",
                 Caption = $"Change of gradient and field at the beam for 10 µm more iron over 1 mm of face ({beside}). "
                     + "s runs along the face from the place nearest to the beam. Where a curve is near zero the face may be rough; "

@@ -7,6 +7,9 @@ namespace PoleField.Output.Figures;
 /// <summary>How uniform the gradient can be for each size of it.</summary>
 public static class TradeOffFigure
 {
+    /// <summary>Name of the picture.</summary>
+    public const string Name = "trade-off";
+
     private const double Margin = 0.05; // of the axis, beside the curve
 
     /// <summary>Draws the trade-off of an outcome that has one.</summary>
@@ -21,7 +24,7 @@ public static class TradeOffFigure
         Figure figure = FigureFrame.Begin(
             new FrameText
             {
-                Name = "trade-off",
+                Name = Name,
                 Title = "Gradient against uniformity",
                 Caption = "Smallest rms found over the aperture for each gradient at the beam, within the reach, clearance and tool the case allows; "
                     + "every shape was solved to full accuracy. The dashed lines cross at the magnet as drawn.",

@@ -7,6 +7,9 @@ namespace PoleField.Output.Figures;
 /// <summary>Old and new faces, and how far each place moved.</summary>
 public static class TuneFigure
 {
+    /// <summary>Name of the picture.</summary>
+    public const string Name = "tuned-faces";
+
     private const int MostFaces = 2;
 
     private const double Shown = 0.2; // of a panel's height: how far the largest move is drawn
@@ -19,7 +22,7 @@ public static class TuneFigure
         Figure figure = FigureFrame.Begin(
             new FrameText
             {
-                Name = "tuned-faces",
+                Name = Name,
                 Title = "Tuned pole faces",
                 Caption = "Above: the faces as they were (dashed) and tuned"
                     + (times > 1 ? FormattableString.Invariant($", the move drawn {times:g3} times as large as it is. ") : ". ")

@@ -14,7 +14,7 @@ public enum MapSource
     /// <summary>The exactly harmonic field extracted around the aperture: field and gradient.</summary>
     Extraction,
 
-    /// <summary>Differentiated in the finite element: field only.</summary>
+    /// <summary>Differentiated in the finite element: the field, and in air its gradient.</summary>
     Element,
 }
 
@@ -54,12 +54,22 @@ public readonly record struct MapSample(double By, double Bz, double DByDz, doub
     public static MapSample From(BeamValues values) =>
         new(values.By, values.Bz, values.DByDz, values.DBzDz, Air, MapSource.Extraction);
 
-    /// <summary>A value of the finite elements, without gradient.</summary>
+    /// <summary>A value of the finite elements; the gradient in air alone, where curl and divergence of B leave two numbers of it.</summary>
     /// <param name="sample">The sample; null outside the model.</param>
     /// <param name="mediumOf">Name of a region's medium.</param>
-    public static MapSample From(FieldSample? sample, Func<int, string> mediumOf) => sample is FieldSample s
-        ? new(s.By, s.Bz, double.NaN, double.NaN, mediumOf(s.Region), MapSource.Element)
-        : Nothing;
+    /// <param name="slopes">Derivatives of B in the element; null where they are not known.</param>
+    public static MapSample From(FieldSample? sample, Func<int, string> mediumOf, FieldSlopes? slopes = null)
+    {
+        if (sample is not { } s)
+        {
+            return Nothing;
+        }
+
+        string medium = mediumOf(s.Region);
+        return slopes is { } d && medium == Air
+            ? new(s.By, s.Bz, 0.5 * (d.DByDz + d.DBzDy), 0.5 * (d.DBzDz - d.DByDy), medium, MapSource.Element)
+            : new(s.By, s.Bz, double.NaN, double.NaN, medium, MapSource.Element);
+    }
 }
 
 /// <summary>Where a map comes from.</summary>
@@ -68,11 +78,7 @@ public readonly record struct MapSample(double By, double Bz, double DByDz, doub
 /// <param name="SketchSha256">SHA-256 of the sketch.</param>
 /// <param name="ProgramVersion">Version of the program.</param>
 /// <param name="AccuracyReached">Largest relative error bar of field and gradient over the aperture.</param>
-public sealed record MapProvenance(string Title, string CaseSha256, string SketchSha256, string ProgramVersion, double AccuracyReached)
-{
-    /// <summary>When the map was made; null leaves it out, so that equal input gives equal bytes.</summary>
-    public DateTimeOffset? MadeAt { get; init; }
-}
+public sealed record MapProvenance(string Title, string CaseSha256, string SketchSha256, string ProgramVersion, double AccuracyReached);
 
 /// <summary>The field at the places of a grid.</summary>
 public sealed class FieldMap
@@ -104,7 +110,7 @@ public sealed class FieldMap
         Box near = aperture.Bounds.Inflated(Rounding);
         return p => near.Contains(p) && (aperture.Contains(p) || aperture.Curves.Min(c => c.DistanceTo(p)) <= Rounding)
             ? MapSample.From(solved.Field.At(p))
-            : MapSample.From(solved.Solution.At(p), MediumOf);
+            : MapSample.From(solved.Solution.At(p), MediumOf, solved.Solution.SlopesAt(p));
 
         string MediumOf(int region)
         {
@@ -113,17 +119,12 @@ public sealed class FieldMap
         }
     }
 
-    /// <summary>Evaluates the field at every place.</summary>
+    /// <summary>Evaluates the field at every place; the map does not depend on the number of threads.</summary>
     public static FieldMap Sample(
-        MapGrid grid, Func<Point, MapSample> field, MapProvenance provenance, CancellationToken cancellation = default)
+        MapGrid grid, Func<Point, MapSample> field, MapProvenance provenance, ParallelOptions? threads = null)
     {
         MapSample[] samples = new MapSample[grid.Count];
-        for (int i = 0; i < samples.Length; i++)
-        {
-            cancellation.ThrowIfCancellationRequested();
-            samples[i] = field(grid[i]);
-        }
-
+        Parallel.For(0, samples.Length, threads ?? new ParallelOptions { MaxDegreeOfParallelism = 1 }, i => samples[i] = field(grid[i]));
         return new FieldMap(grid, samples, provenance);
     }
 }

@@ -1,4 +1,3 @@
-using System.Globalization;
 using System.Text;
 using PoleField.Geometry;
 using PureHDF;
@@ -63,7 +62,7 @@ public static class OpenPmdMap
 
     private static (string Key, string Value)[] RootTexts(MapProvenance origin)
     {
-        List<(string, string)> texts =
+        return
         [
             ("openPMD", "1.1.0"),
             ("basePath", "/data/%T/"),
@@ -77,12 +76,6 @@ public static class OpenPmdMap
             ("caseSha256", origin.CaseSha256),
             ("sketchSha256", origin.SketchSha256),
         ];
-        if (origin.MadeAt is DateTimeOffset at)
-        {
-            texts.Add(("date", at.ToString("yyyy-MM-dd HH:mm:ss ", CultureInfo.InvariantCulture) + at.ToString("zzz", CultureInfo.InvariantCulture).Replace(":", "", StringComparison.Ordinal)));
-        }
-
-        return [.. texts];
     }
 
     // Fixed-length strings are cut silently by the writer, and the standard's readers accept no others: take the longest.

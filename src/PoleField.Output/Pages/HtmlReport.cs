@@ -1,6 +1,5 @@
 using System.Globalization;
 using System.Text;
-using PoleField.Beam;
 using PoleField.Output.Results;
 
 namespace PoleField.Output.Pages;
@@ -20,7 +19,7 @@ public static class HtmlReport
     /// <summary>The page as text.</summary>
     public static string Text(ReportPage page)
     {
-        SolveResult result = page.Result;
+        ResultFile result = page.Result;
         (string Id, string Heading, Action<PageText> Body)[] sections = [.. Sections(page)];
         PageText html = new();
         html.Raw("<!DOCTYPE html>\n<html lang=\"en\">\n<head>\n<meta charset=\"utf-8\">");
@@ -50,16 +49,17 @@ public static class HtmlReport
 
     private static void WriteHeader(PageText html, ReportPage page, IReadOnlyList<(string Id, string Heading, Action<PageText> Body)> sections)
     {
-        BeamReport report = page.Result.Report;
+        (BeamSection beam, ApertureSection aperture) = (page.Result.Beam, page.Result.Aperture);
         html.Raw("<header>").Element("h1", page.Result.Title);
         (string kind, string words) = OverallVerdict(page.Result);
         html.Raw($"<p class=\"verdict {kind}\">{PageText.Escape(words)}</p>");
+        html.Element("p class=\"lacks\"", page.Lacks);
         html.Raw("<dl class=\"key\">");
-        Key(html, "field |B| at the beam", $"{ResultTables.Number(report.Beam.Field)} T", $"± {ResultTables.Number(report.FieldError, 2)} T");
-        Key(html, "gradient d|B|/dz", $"{ResultTables.Number(report.Beam.Gradient)} T/m", $"± {ResultTables.Number(report.GradientError, 2)} T/m");
-        Key(html, "spread of the gradient", ResultTables.Percent(report.Gradient.Spread), $"rms {ResultTables.Percent(report.Gradient.Rms)}");
-        Key(html, "clearance of the beam", $"{ResultTables.Number(1e3 * report.Clearance, 3)} mm", "to the nearest part");
-        PartReport? worst = report.Parts.Where(p => p.Kind == "iron" && p.FieldMax is not null).MaxBy(p => p.FieldMax);
+        Key(html, "field |B| at the beam", $"{ResultTables.Number(beam.Field)} T", $"± {ResultTables.Number(beam.FieldError, 2)} T");
+        Key(html, "gradient d|B|/dz", $"{ResultTables.Number(beam.Gradient)} T/m", $"± {ResultTables.Number(beam.GradientError, 2)} T/m");
+        Key(html, "spread of the gradient", ResultTables.Percent(aperture.Gradient.Spread), $"rms {ResultTables.Percent(aperture.Gradient.Rms)}");
+        Key(html, "clearance of the beam", $"{ResultTables.Number(aperture.Clearance, 3)} mm", "to the nearest part");
+        PartSection? worst = page.Result.Parts.Where(p => p.Kind == "iron" && p.FieldMax is not null).MaxBy(p => p.FieldMax);
         if (worst is not null)
         {
             Key(html, "largest |B| in iron", $"{ResultTables.Number(worst.FieldMax, 3)} T", "in " + worst.Layer);
@@ -77,10 +77,11 @@ public static class HtmlReport
     private static void Key(PageText html, string name, string value, string small) =>
         html.Raw($"<div><dt>{PageText.Escape(name)}</dt><dd>{PageText.Escape(value)}<small>{PageText.Escape(small)}</small></dd></div>");
 
-    private static (string Kind, string Words) OverallVerdict(SolveResult result)
+    private static (string Kind, string Words) OverallVerdict(ResultFile result)
     {
-        int missed = result.Requirements.Count(r => !r.Met);
-        return (result.Record.AccuracyMet, result.Requirements.Count, missed) switch
+        int missed = result.Require.Count(r => !r.Met);
+        bool accurate = result.Run.AccuracyReached <= result.Run.AccuracyAsked;
+        return (accurate, result.Require.Count, missed) switch
         {
             (false, _, 0) => ("missed", "✗ The asked accuracy was not reached"),
             (_, 0, _) => ("open", "The case sets no requirements"),
@@ -91,9 +92,8 @@ public static class HtmlReport
 
     private static IEnumerable<(string Id, string Heading, Action<PageText> Body)> Sections(ReportPage page)
     {
-        SolveResult result = page.Result;
-        BeamReport report = result.Report;
-        if (result.Requirements.Count > 0)
+        ResultFile result = page.Result;
+        if (result.Require.Count > 0)
         {
             yield return ("requirements", "Requirements", h => h.Table(ResultTables.Requirements(result)));
         }
@@ -103,20 +103,16 @@ public static class HtmlReport
             yield return ("warnings", "Doubts of this run", h => h.List([.. result.Warnings.Select(w => w.Where.Length > 0 ? $"{w.Where}: {w.Text}" : w.Text)]));
         }
 
-        yield return ("beam", "Beam and aperture", h => Pictures(h.Table(ResultTables.Beam(report)).Table(ResultTables.Aperture(report)), page.Aperture));
+        yield return ("beam", "Beam and aperture", h => Pictures(h.Table(ResultTables.Beam(result.Beam)).Table(ResultTables.Aperture(result.Aperture)), page.Aperture));
         if (page.Field.Count > 0)
         {
             yield return ("field", "Field of the cross-section", h => Pictures(h, page.Field));
         }
 
-        yield return ("iron", "Iron, coils and circuit", h => Pictures(
-            h.Table(ResultTables.Parts(report)).Table(ResultTables.Circuit(report.Circuit)), page.Saturation is null ? [] : [page.Saturation]));
-        foreach ((string id, ReportSection? section) in Analyses(page))
+        yield return ("iron", "Iron, currents and circuit", h => Iron(h, page));
+        foreach (ReportSection section in page.Sections)
         {
-            if (section is not null)
-            {
-                yield return (id, section.Heading, h => WriteSection(h, section));
-            }
+            yield return (section.Id, section.Heading, h => WriteSection(h, section));
         }
 
         if (result.Cautions.Count > 0)
@@ -127,21 +123,29 @@ public static class HtmlReport
         yield return ("run", "Computation and provenance", h => h.Table(ResultTables.Run(result)).Table(ResultTables.Provenance(result)));
     }
 
-    private static IEnumerable<(string Id, ReportSection? Section)> Analyses(ReportPage page) =>
-    [
-        ("two-wire", page.TwoWire),
-        ("ramp", page.Ramp),
-        ("tolerance", page.Tolerance),
-        ("tuning", page.Tuning),
-        ("coil", page.Coil),
-        ("stray-field", page.StrayField),
-        ("deflection", page.Deflection),
-        .. page.Further.Select((s, i) => ("further-" + (i + 1).ToString(CultureInfo.InvariantCulture), (ReportSection?)s)),
-    ];
+    private static void Iron(PageText html, ReportPage page)
+    {
+        ResultFile result = page.Result;
+        Pictures(html.Table(ResultTables.Iron(result.Parts)), page.Saturation is null ? [] : [page.Saturation]);
+        html.Table(ResultTables.Circuit(result.Circuit));
+        if (result.Parts.Any(p => p.Force is not null))
+        {
+            html.Table(ResultTables.Forces(result.Parts));
+        }
+
+        if (result.Parts.Any(p => p.ForceOnFreeFacesOnly == true))
+        {
+            html.Element("p class=\"soft\"", "Faces in air only: the part touches other iron or magnets, and what the joint itself carries is not in the number.");
+        }
+
+        if (result.Materials is { Count: > 0 } materials)
+        {
+            html.Table(ResultTables.Materials(materials));
+        }
+    }
 
     private static void WriteSection(PageText html, ReportSection section)
     {
-        html.Element("p", section.Text);
         foreach (ReportTable table in section.Tables)
         {
             html.Table(table);
@@ -161,15 +165,12 @@ public static class HtmlReport
 
     private static void WriteFooter(PageText html, ReportPage page)
     {
-        string made = page.MadeAt is DateTimeOffset at
-            ? " Made " + at.ToString("yyyy-MM-dd HH:mm zzz", CultureInfo.InvariantCulture) + "."
-            : "";
         html.Raw("<footer>");
-        html.Element("p", $"PoleField {page.Result.ProgramVersion}. Lengths in mm, everything else SI. Beam along +x, out of the page; z along the deflection, y across it.{made}");
+        html.Element("p", $"PoleField {page.Result.ProgramVersion}. Lengths in mm, everything else SI. Beam along +x, out of the page; z along the deflection, y across it.");
         html.Raw("</footer>");
     }
 
     // "<" as an escape, so that no text of the case can close the element.
-    private static string EmbeddedJson(SolveResult result) =>
-        ResultJson.Text(ResultJson.ToFile(result)).TrimEnd().Replace("<", "\\u003c", StringComparison.Ordinal);
+    private static string EmbeddedJson(ResultFile result) =>
+        JsonText.Of(result).TrimEnd().Replace("<", "\\u003c", StringComparison.Ordinal);
 }

@@ -35,22 +35,24 @@ internal static class PageStyle
         th,td{padding:.3rem .6rem;border-bottom:1px solid var(--line);text-align:left;vertical-align:top}
         thead th{border-bottom:2px solid var(--ink);font-size:.85rem}
         tbody th{font-weight:500}
-        td.number{white-space:nowrap}
+        .number{text-align:right}td.number{white-space:nowrap}
+        .lacks{border-left:4px solid var(--caution);padding-left:.75rem}
         figure{margin:1rem 0}
         .paper{background:#fff;border:1px solid var(--line);border-radius:4px;padding:.25rem}
         .paper svg{display:block;width:100%;height:auto}
-        figcaption{color:var(--soft);font-size:.85rem;margin-top:.25rem}
+        figcaption{font-size:.9rem;margin-top:.4rem;max-width:46rem}figcaption b{font-weight:600}
         details{margin:.5rem 0}summary{cursor:pointer;color:var(--accent)}
         .cautions{background:var(--caution-ground);border-color:var(--caution)}
         .cautions h2{color:var(--caution)}
         li{margin:.3rem 0;max-width:52rem}
+        @media (max-width:40rem){main,header,footer{padding:0 .6rem}section{padding:.8rem .6rem}h1{font-size:1.4rem}dl.key{grid-template-columns:1fr 1fr;gap:.4rem}.paper{padding:0}}
         code{font:.85em/1.4 "DejaVu Sans Mono",Consolas,Menlo,monospace;overflow-wrap:anywhere}
         footer{color:var(--soft);font-size:.85rem;padding-bottom:2rem}
         @page{size:A4;margin:15mm 14mm}
         @media print{
           body{background:#fff;font-size:10pt}main,header,footer{max-width:none;padding:0}header{padding-top:0}
-          nav,details{display:none}section{border:0;padding:0;margin:6mm 0 0}h1{font-size:18pt}h2{font-size:13pt;break-after:avoid}
-          dl.key{grid-template-columns:repeat(5,1fr)}dl.key dd{font-size:12pt}figure,table,tr,dl.key div,.verdict,.cautions{break-inside:avoid}figure{max-width:165mm!important}.paper{border:0;padding:0}.scroll{overflow:visible}
+          nav,details{display:none}table,thead th{font-size:8pt}th,td{padding:.15rem .35rem}section{border:0;padding:0;margin:6mm 0 0}h1{font-size:18pt}h2{font-size:13pt;break-after:avoid}
+          dl.key{grid-template-columns:repeat(5,1fr)}dl.key dd{font-size:12pt}figure,table,tr,dl.key div,.verdict,.cautions{break-inside:avoid}figure{max-width:112mm!important}.paper{border:0;padding:0}.scroll{overflow:visible}
           .cautions{border:1px solid var(--caution);padding:3mm}
           .verdict,.cautions{print-color-adjust:exact;-webkit-print-color-adjust:exact}
         }

@@ -39,15 +39,16 @@ internal sealed class PageText
         return Raw("</ul>");
     }
 
-    /// <summary>Adds a table; cells that start with a number are kept on one line.</summary>
+    /// <summary>Adds a table; columns of numbers are aligned to the right.</summary>
     public PageText Table(ReportTable table)
     {
         Raw($"<div class=\"scroll\" tabindex=\"0\" role=\"region\" aria-label=\"{Escape(table.Caption)}\"><table>");
         Raw($"<caption>{Escape(table.Caption)}</caption>");
-        Raw($"<thead><tr>{string.Concat(table.Columns.Select(c => $"<th scope=\"col\">{Escape(c)}</th>"))}</tr></thead><tbody>");
+        bool[] numeric = [.. table.Columns.Select((_, c) => c > 0 && IsNumeric(table.Rows.Select(r => r[c])))];
+        Raw($"<thead><tr>{string.Concat(table.Columns.Select((c, i) => $"<th scope=\"col\"{(numeric[i] ? " class=\"number\"" : "")}>{Escape(c)}</th>"))}</tr></thead><tbody>");
         foreach (IReadOnlyList<string> row in table.Rows)
         {
-            string cells = string.Concat(row.Skip(1).Select(Cell));
+            string cells = string.Concat(row.Skip(1).Select((c, i) => Cell(c, numeric[i + 1])));
             Raw($"<tr><th scope=\"row\">{Escape(row[0])}</th>{cells}</tr>");
         }
 
@@ -63,7 +64,7 @@ internal sealed class PageText
         string width = figure.Width.ToString("0", CultureInfo.InvariantCulture);
         Raw($"<figure id=\"figure-{number}\" style=\"max-width:{width}px\"><div class=\"paper\">");
         Raw(FigureWriter.SvgText(figure));
-        Raw($"</div><figcaption>Figure {number}</figcaption>");
+        Raw($"</div><figcaption><b>Figure {number}. {Escape(figure.Title)}.</b> {Escape(figure.Caption)}</figcaption>");
         if (picture.Numbers is not null)
         {
             Raw("<details><summary>Numbers of this figure</summary>").Table(picture.Numbers).Raw("</details>");
@@ -79,11 +80,18 @@ internal sealed class PageText
         .Replace(">", "&gt;", StringComparison.Ordinal)
         .Replace("\"", "&quot;", StringComparison.Ordinal);
 
-    private static string Cell(string text) => text switch
+    // A column of numbers is aligned to the right; empty cells and dashes do not count, but one must be a number.
+    private static bool IsNumeric(IEnumerable<string> cells)
+    {
+        string[] filled = [.. cells.Where(c => c.Length > 0 && c != "–" && c != "-")];
+        return filled.Length > 0 && filled.All(c => char.IsAsciiDigit(c[0]) || (c.Length > 1 && c[0] is '−' or '+' or '≤' && char.IsAsciiDigit(c.TrimStart('−', '+', '≤', ' ')[0])));
+    }
+
+    private static string Cell(string text, bool numeric) => text switch
     {
         Verdict.Met => $"<td class=\"met\">{text}</td>",
         Verdict.NotMet => $"<td class=\"missed\">{text}</td>",
-        _ when text.Length > 0 && (char.IsAsciiDigit(text[0]) || text[0] is '−' or '–' or '+') => $"<td class=\"number\">{Escape(text)}</td>",
+        _ when numeric => $"<td class=\"number\">{Escape(text)}</td>",
         _ => $"<td>{Escape(text)}</td>",
     };
 }

@@ -17,11 +17,11 @@ public sealed record ReportPicture(Figure Figure, ReportTable? Numbers = null);
 /// <summary>One analysis on the page.</summary>
 public sealed record ReportSection
 {
+    /// <summary>Name of its anchor, lower-case letters and hyphens, unique on the page.</summary>
+    public required string Id { get; init; }
+
     /// <summary>Heading.</summary>
     public required string Heading { get; init; }
-
-    /// <summary>What the reader should take from it, one or two sentences; may be empty.</summary>
-    public string Text { get; init; } = "";
 
     /// <summary>Tables in sight.</summary>
     public IReadOnlyList<ReportTable> Tables { get; init; } = [];
@@ -29,15 +29,18 @@ public sealed record ReportSection
     /// <summary>Pictures.</summary>
     public IReadOnlyList<ReportPicture> Pictures { get; init; } = [];
 
-    /// <summary>Remarks listed under the rest.</summary>
+    /// <summary>What to make of the numbers, and what they leave out; listed under the rest.</summary>
     public IReadOnlyList<string> Remarks { get; init; } = [];
 }
 
-/// <summary>A report as one page: the result, and each analysis that was made. Sections that are null are left out.</summary>
+/// <summary>A report as one page: the result file with its pictures, and each analysis that was made.</summary>
 public sealed record ReportPage
 {
     /// <summary>The result the page leads with; also embedded as data.</summary>
-    public required SolveResult Result { get; init; }
+    public required ResultFile Result { get; init; }
+
+    /// <summary>What the page lacks and why; empty when it is whole.</summary>
+    public string Lacks { get; init; } = "";
 
     /// <summary>Field lines of the whole section and around the beam.</summary>
     public IReadOnlyList<ReportPicture> Field { get; init; } = [];
@@ -48,30 +51,10 @@ public sealed record ReportPage
     /// <summary>Flux density in the iron.</summary>
     public ReportPicture? Saturation { get; init; }
 
-    /// <summary>Excitation curve.</summary>
-    public ReportSection? Ramp { get; init; }
+    /// <summary>Further sections in their order: coils and stray field, then the analyses.</summary>
+    public IReadOnlyList<ReportSection> Sections { get; init; } = [];
 
-    /// <summary>Comparison with the two-wire field.</summary>
-    public ReportSection? TwoWire { get; init; }
-
-    /// <summary>Tuning of the faces.</summary>
-    public ReportSection? Tuning { get; init; }
-
-    /// <summary>Tolerance budget.</summary>
-    public ReportSection? Tolerance { get; init; }
-
-    /// <summary>Coil: current density, heat, cooling.</summary>
-    public ReportSection? Coil { get; init; }
-
-    /// <summary>Stray field around the magnet.</summary>
-    public ReportSection? StrayField { get; init; }
-
-    /// <summary>Deflection and pattern of the beam.</summary>
-    public ReportSection? Deflection { get; init; }
-
-    /// <summary>Any other sections, in order, after the named ones.</summary>
-    public IReadOnlyList<ReportSection> Further { get; init; } = [];
-
-    /// <summary>When the page was made; null leaves it out, so that equal input gives equal bytes.</summary>
-    public DateTimeOffset? MadeAt { get; init; }
+    /// <summary>All pictures in the order of the page.</summary>
+    public IEnumerable<ReportPicture> Pictures =>
+        [.. Aperture, .. Field, .. Saturation is null ? (ReportPicture[])[] : [Saturation], .. Sections.SelectMany(s => s.Pictures)];
 }

@@ -21,7 +21,9 @@ public sealed record ResultFile(
     [property: JsonPropertyName("run"), Description("How the answer was reached.")] RunSection Run,
     [property: JsonPropertyName("require"), Description("The case's requirements.")] IReadOnlyList<RequireSection> Require,
     [property: JsonPropertyName("cautions"), Description("What a two-dimensional solve cannot know, and safety.")] IReadOnlyList<string> Cautions,
-    [property: JsonPropertyName("warnings"), Description("Doubts of this run.")] IReadOnlyList<WarningSection> Warnings);
+    [property: JsonPropertyName("warnings"), Description("Doubts of this run.")] IReadOnlyList<WarningSection> Warnings,
+    [property: JsonPropertyName("materials"), Description("Materials of the parts, each once.")] IReadOnlyList<MaterialSection>? Materials = null,
+    [property: JsonPropertyName("operation"), Description("Heat, pull, energy, inductance and stray field; without the magnet's ends.")] OperationSection? Operation = null);
 
 /// <summary>Values at the beam's centre.</summary>
 public sealed record BeamSection(
@@ -69,7 +71,9 @@ public sealed record GradientStatistics(
 public sealed record ProductStatistics(
     [property: JsonPropertyName("mean_T2_per_m"), Description("Mean.")] double? Mean,
     [property: JsonPropertyName("spread"), Description("(max - min) / (2 |mean|).")] double? Spread,
-    [property: JsonPropertyName("rms"), Description("Standard deviation / |mean|.")] double? Rms);
+    [property: JsonPropertyName("rms"), Description("Standard deviation / |mean|.")] double? Rms,
+    [property: JsonPropertyName("min_T2_per_m"), Description("Smallest.")] double? Min = null,
+    [property: JsonPropertyName("max_T2_per_m"), Description("Largest.")] double? Max = null);
 
 /// <summary>One place of the profile along y.</summary>
 public sealed record ProfileAlongY(
@@ -109,7 +113,7 @@ public sealed record CircuitSection(
     [property: JsonPropertyName("efficiency"), Description("Gap share of the ampere-turns; null without currents.")] double? Efficiency,
     [property: JsonPropertyName("energy_J_per_m"), Description("Stored energy per metre of length.")] double? Energy,
     [property: JsonPropertyName("inductance_uH_per_m_turn2"), Description("Inductance per metre and turn squared; null without currents.")] double? Inductance,
-    [property: JsonPropertyName("gap_pull_N_per_m"), Description("Pull per metre of length across the horizontal line through the beam, positive when the poles attract each other.")] double? GapPull);
+    [property: JsonPropertyName("gap_pull_N_per_m"), Description("Pull across the horizontal line through the beam per metre of length; positive when the poles attract each other.")] double? GapPull = null);
 
 /// <summary>The last mesh.</summary>
 public sealed record MeshSection(
@@ -155,3 +159,40 @@ public sealed record RequireSection(
 public sealed record WarningSection(
     [property: JsonPropertyName("where"), Description("File, layer or place.")] string Where,
     [property: JsonPropertyName("text"), Description("What was seen and what to do.")] string Text);
+
+/// <summary>One material and where its numbers come from.</summary>
+public sealed record MaterialSection(
+    [property: JsonPropertyName("name"), Description("Name, as in parts.")] string Name,
+    [property: JsonPropertyName("description"), Description("What it is.")] string Text,
+    [property: JsonPropertyName("source"), Description("Where its curve comes from.")] string Source,
+    [property: JsonPropertyName("state"), Description("State of the sample: heat treatment, form, scatter.")] string State,
+    [property: JsonPropertyName("caution"), Description("What the numbers cannot promise; null when there is nothing to say.")] string? Caution);
+
+/// <summary>What running the magnet takes and what is around it.</summary>
+public sealed record OperationSection(
+    [property: JsonPropertyName("length_mm"), Description("Length along the beam; null when not stated, and then the values over the length are null too.")] double? Length,
+    [property: JsonPropertyName("coil_temperature_C"), Description("Temperature of the warm winding.")] double? Celsius,
+    [property: JsonPropertyName("heat_W_at_20_C"), Description("Heat of all coils over the length at 20 degrees Celsius.")] double? ColdHeat,
+    [property: JsonPropertyName("heat_W_warm"), Description("The same at coil_temperature_C.")] double? WarmHeat,
+    [property: JsonPropertyName("heat_W_per_m_at_20_C"), Description("Heat of all coils per metre; null when no coil states its copper share.")] double? ColdHeatPerMetre,
+    [property: JsonPropertyName("heat_W_per_m_warm"), Description("The same at coil_temperature_C.")] double? WarmHeatPerMetre,
+    [property: JsonPropertyName("gap_pull_N"), Description("Pull between the poles over the length.")] double? Pull,
+    [property: JsonPropertyName("energy_J"), Description("Stored energy over the length: what a switch-off must take up.")] double? Energy,
+    [property: JsonPropertyName("inductance_uH_per_turn2"), Description("Inductance over the length, flux linkage per current; times the turns squared.")] double? Inductance,
+    [property: JsonPropertyName("linkage_Wb_per_turn"), Description("Flux linked with one turn over the length; over the time of a switch-off it is the mean voltage of a turn.")] double? Linkage,
+    [property: JsonPropertyName("coils"), Description("Coils whose copper share is stated.")] IReadOnlyList<CoilSection> Coils,
+    [property: JsonPropertyName("stray_field"), Description("How far the field around the magnet exceeds a level; empty where it does not fall off.")] IReadOnlyList<StraySection> Stray);
+
+/// <summary>One coil.</summary>
+public sealed record CoilSection(
+    [property: JsonPropertyName("layer"), Description("Layer of the sketch.")] string Layer,
+    [property: JsonPropertyName("copper_area_mm2"), Description("Copper of all its outlines.")] double? CopperArea,
+    [property: JsonPropertyName("current_density_A_per_mm2"), Description("Current density in the copper.")] double? CurrentDensity,
+    [property: JsonPropertyName("heat_W_per_m_at_20_C"), Description("Heat per metre of length.")] double? ColdHeat,
+    [property: JsonPropertyName("heat_W_per_m_warm"), Description("The same at coil_temperature_C.")] double? WarmHeat);
+
+/// <summary>Reach of a level of stray field.</summary>
+public sealed record StraySection(
+    [property: JsonPropertyName("level_mT"), Description("Flux density.")] double? Level,
+    [property: JsonPropertyName("distance_m"), Description("Distance from the middle of the section beyond which it stays below; null when not known.")] double? Distance,
+    [property: JsonPropertyName("is_bound"), Description("True when it is weaker already on the circle around the section, whose radius the distance then is.")] bool IsBound);

@@ -1,21 +1,14 @@
-using System.Text.Encodings.Web;
 using System.Text.Json;
-using System.Text.Json.Serialization.Metadata;
 using PoleField.Beam;
-using PoleField.Geometry;
+using static PoleField.Output.Results.JsonText;
 
 namespace PoleField.Output.Results;
 
-/// <summary>
-/// Writes and reads the result file <c>polefield-result/1</c>: UTF-8 without byte order mark, two-space indentation, fixed
-/// key order, doubles with the fewest digits that read back to the same bits, null where there is no finite number.
-/// </summary>
+/// <summary>Makes and reads the result file <c>polefield-result/1</c>.</summary>
 public static class ResultJson
 {
     /// <summary>Name and version of the format.</summary>
     public const string Format = "polefield-result/1";
-
-    internal static JsonSerializerOptions Options { get; } = MakeOptions();
 
     /// <summary>Turns a result (SI) into the file's sections (mm).</summary>
     public static ResultFile ToFile(SolveResult result)
@@ -36,23 +29,12 @@ public static class ResultJson
             Run(result),
             [.. result.Requirements.Select(r => new RequireSection(r.Name, r.Unit, Finite(r.Wanted), Finite(r.Found), r.Met))],
             result.Cautions,
-            [.. result.Warnings.Select(w => new WarningSection(w.Where, w.Text))]);
+            [.. result.Warnings.Select(w => new WarningSection(w.Where, w.Text))],
+            [.. result.Materials.Select(m => new MaterialSection(m.Name, m.Description, m.Source, m.State, m.Caution))],
+            result.Operation is { } operation ? Operation(operation) : null);
     }
 
-    /// <summary>Writes a result.</summary>
-    public static void Write(SolveResult result, Stream stream) => Write(ToFile(result), stream);
-
-    /// <summary>Writes the sections of a result file.</summary>
-    public static void Write(ResultFile file, Stream stream)
-    {
-        JsonSerializer.Serialize(stream, file, Options);
-        stream.WriteByte((byte)'\n');
-    }
-
-    /// <summary>The text <see cref="Write(ResultFile, Stream)"/> writes.</summary>
-    public static string Text(ResultFile file) => JsonSerializer.Serialize(file, Options) + "\n";
-
-    /// <summary>Reads a result file; keys it does not know are skipped.</summary>
+    /// <summary>Reads a result file; keys it does not know are skipped, and what later versions of the program added may be missing.</summary>
     /// <exception cref="InputException">Not JSON, a required key is missing or of the wrong type, or another format.</exception>
     public static ResultFile Read(Stream stream, string fileName = "result")
     {
@@ -109,7 +91,7 @@ public static class ResultJson
             new FieldStatistics(Finite(f.Mean), Finite(f.Min), Finite(f.Max), Finite(f.Spread), Finite(f.Rms)),
             new GradientStatistics(
                 Finite(g.Mean), Finite(g.Min), Finite(g.Max), Finite(g.Spread), Finite(g.Rms), Finite(report.GradientMeanError)),
-            new ProductStatistics(Finite(p.Mean), Finite(p.Spread), Finite(p.Rms)),
+            new ProductStatistics(Finite(p.Mean), Finite(p.Spread), Finite(p.Rms), Finite(p.Min), Finite(p.Max)),
             [.. report.ProfileY.Select(v => new ProfileAlongY(Millimetres(v.At.Y), Finite(v.Field), Finite(v.Gradient)))],
             [.. report.ProfileZ.Select(v => new ProfileAlongZ(Millimetres(v.At.Z), Finite(v.Field), Finite(v.Gradient)))]);
     }
@@ -123,13 +105,13 @@ public static class ResultJson
         Finite(p.AmpereTurns),
         Finite(p.CurrentDensity / 1e6),
         Finite(p.FieldMax),
-        p.FieldMaxAt is Point at ? Pair(1e3 * at) : null,
+        Pair(p.FieldMaxAt, 1e3),
         Finite(p.FieldP99),
         Finite(p.SaturatedShare),
         Finite(p.MmfDrop),
-        p.ForcePerMetre is Point force ? Pair(force) : null,
-        p.ForceOtherWay is Point other ? Pair(other) : null,
-        p.ForceOnFreeFacesOnly ? true : null);
+        Pair(p.ForcePerMetre),
+        Pair(p.ForceOtherWay),
+        p.ForcePerMetre is null ? null : p.ForceOnFreeFacesOnly);
 
     private static CircuitSection Circuit(CircuitReport c) => new(
         Finite(c.AmpereTurns),
@@ -153,40 +135,26 @@ public static class ResultJson
             Finite(result.Record.AccuracyAsked));
     }
 
-    internal static double? Finite(double? value) => value is double v && double.IsFinite(v) ? v : null;
-
-    internal static double? Millimetres(double metres) => Finite(metres * 1e3);
-
-    internal static double[]? Pair(Point p) => p.IsFinite ? [p.Y, p.Z] : null;
-
-    private static JsonSerializerOptions MakeOptions()
+    private static OperationSection Operation(OperationReport o)
     {
-        JsonSerializerOptions options = new()
-        {
-            WriteIndented = true,
-            NewLine = "\n",
-            RespectNullableAnnotations = true,
-            RespectRequiredConstructorParameters = true,
-
-            // Names in any script stay readable; quotes and control characters are still escaped. HTML pages escape on their own.
-            Encoder = JavaScriptEncoder.UnsafeRelaxedJsonEscaping,
-            TypeInfoResolver = new DefaultJsonTypeInfoResolver { Modifiers = { LeaveOutWhatDoesNotApply } },
-        };
-        options.MakeReadOnly();
-        return options;
-    }
-
-    // Keys of a part that do not apply to its kind are left out; everywhere else null says "there is no number".
-    private static void LeaveOutWhatDoesNotApply(JsonTypeInfo type)
-    {
-        if (type.Type != typeof(PartSection))
-        {
-            return;
-        }
-
-        foreach (JsonPropertyInfo property in type.Properties.Where(p => !p.IsRequired))
-        {
-            property.ShouldSerialize = static (_, value) => value is not null;
-        }
+        CircuitReport c = o.Circuit;
+        return new OperationSection(
+            Millimetres(o.Setup.Length),
+            Finite(o.Setup.Celsius),
+            Finite(o.OverLength(o.ColdHeatPerMetre)),
+            Finite(o.OverLength(o.WarmHeatPerMetre)),
+            Finite(o.ColdHeatPerMetre),
+            Finite(o.WarmHeatPerMetre),
+            Finite(o.OverLength(c.GapPullPerMetre)),
+            Finite(o.OverLength(c.EnergyPerMetre)),
+            Finite(o.OverLength(1e6 * c.InductancePerMetre)),
+            Finite(o.OverLength(o.LinkagePerMetre)),
+            [.. o.Coils.Select(coil => new CoilSection(
+                coil.Layer,
+                Finite(1e6 * coil.CopperArea),
+                Finite(1e-6 * coil.CurrentDensity),
+                Finite(coil.HeatPerMetre()),
+                Finite(coil.HeatPerMetre(o.Setup.Celsius))))],
+            [.. o.Stray.Select(s => new StraySection(Finite(1e3 * s.Level), Finite(s.Distance), s.IsBound))]);
     }
 }

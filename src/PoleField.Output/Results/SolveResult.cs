@@ -53,6 +53,12 @@ public sealed record SolveResult
     /// <summary>The case's requirements, checked.</summary>
     public IReadOnlyList<RequirementResult> Requirements { get; init; } = [];
 
+    /// <summary>Materials of the parts, each once.</summary>
+    public IReadOnlyList<Materials.Material> Materials { get; init; } = [];
+
+    /// <summary>Heat, pull, energy and stray field; null when it was not worked out.</summary>
+    public OperationReport? Operation { get; init; }
+
     /// <summary>What the numbers cannot know and what to mind around the magnet.</summary>
     public IReadOnlyList<string> Cautions { get; init; } = [];
 

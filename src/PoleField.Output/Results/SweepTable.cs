@@ -45,12 +45,12 @@ public static class SweepTable
     }
 
     /// <summary>Writes a file of a sweep as JSON in the manner of the result file.</summary>
-    public static void WriteJson<T>(T file, Stream stream) => AnalysisJson.Write(file, stream);
+    public static void WriteJson<T>(T file, Stream stream) => JsonText.Write(file, stream);
 
     /// <summary>Reads a file of a sweep.</summary>
     /// <exception cref="JsonException">It is not in that form.</exception>
     public static T ReadJson<T>(ReadOnlySpan<byte> bytes) =>
-        JsonSerializer.Deserialize<T>(bytes, ResultJson.Options) ?? throw new JsonException("The file holds null.");
+        JsonSerializer.Deserialize<T>(bytes, JsonText.Options) ?? throw new JsonException("The file holds null.");
 
     /// <summary>Writes the table as RFC 4180: one header row with the units, CRLF, empty cells where there is no value.</summary>
     public static void WriteCsv(SweepTableFile table, Stream stream)
@@ -60,7 +60,7 @@ public static class SweepTable
         string[]? names = null;
         foreach (SweepRow row in table.Rows.Count > 0 ? table.Rows : [new SweepRow(0, [], null, string.Empty)])
         {
-            JsonObject cells = JsonSerializer.SerializeToNode(row, ResultJson.Options)!.AsObject();
+            JsonObject cells = JsonSerializer.SerializeToNode(row, JsonText.Options)!.AsObject();
             if (names is null)
             {
                 names = [.. cells.Select(c => c.Key).Where(k => k is not ("point" or "values"))];

@@ -29,13 +29,20 @@ public sealed record SolveOptions
 
 /// <summary>One line of progress: what is being done and how far it is.</summary>
 /// <param name="What">"mesh", "solve", "estimate", ...</param>
-/// <param name="AdaptiveStep">Number of the mesh, from 1.</param>
+/// <param name="AdaptiveStep">Number of the mesh, from 1; 0 where there is none.</param>
 /// <param name="Unknowns">Unknowns, 0 while unknown.</param>
 /// <param name="NewtonStep">Newton step within the solve.</param>
 /// <param name="Residual">Relative size of the last Newton step; not a number before the first.</param>
 /// <param name="Accuracy">Relative error bar of the last mesh; not a number before the first.</param>
 public readonly record struct SolveProgress(
-    string What, int AdaptiveStep, int Unknowns, int NewtonStep, double Residual, double Accuracy);
+    string What, int AdaptiveStep, int Unknowns, int NewtonStep, double Residual, double Accuracy)
+{
+    /// <summary>Progress of something that is no solve.</summary>
+    public static SolveProgress Of(string what) => new(what, 0, 0, 0, double.NaN, double.NaN);
+
+    /// <summary>The same as part of something larger.</summary>
+    public SolveProgress Within(string whole) => this with { What = $"{whole}: {What}" };
+}
 
 /// <summary>A solved magnet: the field everywhere, the beam's field and the report.</summary>
 /// <param name="Solution">Finite-element solution.</param>

@@ -22,6 +22,9 @@ public static class StrayField
     private const int Directions = 48;
     private const int Halvings = 12;
 
+    /// <summary>The smallest distance that is told: half the diagonal of the box around the magnet, metres.</summary>
+    public static double Nearest(Box bounds) => 0.5 * bounds.Diagonal;
+
     /// <summary>
     /// Distance from the middle of the box beyond which the field stays below a level, metres, a thousandth more rather than
     /// less; at least the circle around the box. Null when the field outside is not known or stays above the level up to 30 m.
@@ -31,7 +34,7 @@ public static class StrayField
     /// <param name="level">Flux density, T, positive.</param>
     public static double? Reach(Func<Point, double?> fieldAt, Box bounds, double level)
     {
-        double start = 0.5 * bounds.Diagonal;
+        double start = Nearest(bounds);
         double above = double.NaN;
         double? strongest = null;
         for (double radius = start; radius < Farthest; radius *= Growth)

@@ -25,6 +25,8 @@ public sealed class CaseReaderTests
         Assert.Null(file.Surroundings.RimLayer);
         Assert.Equal(new BeamRectangle(new Point(0, 0.0036), 0.003, 0.0003), file.Beam);
         Assert.Equal(0.2, file.Length);
+        Assert.Equal(60, file.Operation.Celsius, 1e-9);
+        Assert.Equal([5e-4, 3e-3], file.Operation.StrayLevels);
         Assert.Equal(1e-5, file.Accuracy);
         Assert.Equal(["gradient_min", "spread_max", "iron_field_max"], file.Require.Select(r => r.Name));
         Assert.Equal([300, 0.02, 1.9], file.Require.Select(r => r.Bound));

@@ -2,6 +2,7 @@
 using System.CommandLine;
 using PoleField.Cli.Commands;
 using PoleField.Cli.Tests.Doubles;
+using PoleField.Cli.Text;
 
 namespace PoleField.Cli.Tests.Commands;
 
@@ -26,7 +27,7 @@ public sealed class AnalysisVerbTests
 
         Run run = await Run.Of(With(met: true), "probe", folder.CasePath, "-o", folder["new.folder"]);
 
-        Assert.Equal((0, "probed 2\n"), (run.Status, run.Out));
+        Assert.Equal((0, "Small\n\n  - probed 2\n"), (run.Status, run.Out));
         Assert.Equal([.. Before.Take(1), Path.Combine("new.folder", "magnet.probe.csv"), Path.Combine("new.folder", "magnet.probe.json"), "poles.dxf"], folder.Names);
     }
 
@@ -78,12 +79,14 @@ public sealed class AnalysisVerbTests
             {
                 int value = request.Arguments.GetValue(depth);
                 return new Analysis(
-                    (writer, _) => writer.WriteLine(FormattableString.Invariant($"probed {value}")),
+                    new Answer("Probe", [], [FormattableString.Invariant($"probed {value}")]),
                     [
                         stream => stream.Write(System.Text.Encoding.UTF8.GetBytes(FormattableString.Invariant($"{{ \"depth\": {value} }}"))),
                         stream => stream.Write("y,z\n"u8),
-                    ],
-                    met);
+                    ])
+                {
+                    Met = met,
+                };
             },
         };
         return Steps.Sound with { Analyses = [step] };

@@ -14,7 +14,7 @@ public sealed class MaterialsVerbTests
         Run json = await Run.Of(Steps.Sound, "materials", "--json");
 
         Assert.Contains("pure-iron  Invented iron (invented)", text.Out, StringComparison.Ordinal);
-        Assert.Equal(["air", "pure-iron"], JsonDocument.Parse(json.Out).RootElement.EnumerateArray().Select(m => m.GetProperty("name").GetString()));
+        Assert.Equal(["air", "pure-iron"], JsonDocument.Parse(json.Out).RootElement.GetProperty("materials").EnumerateArray().Select(m => m.GetProperty("name").GetString()));
     }
 
     [Fact]
@@ -32,7 +32,7 @@ public sealed class MaterialsVerbTests
     {
         Run run = await Run.Of(Steps.Sound, "materials", "pure-iron", "--json");
 
-        foreach (JsonElement row in JsonDocument.Parse(run.Out).RootElement.GetProperty("curve").EnumerateArray())
+        foreach (JsonElement row in JsonDocument.Parse(run.Out).RootElement.GetProperty("materials")[0].GetProperty("curve").EnumerateArray())
         {
             Assert.Equal(row.GetProperty("B_T").GetDouble() / (1.25663706127e-6 * 5000), row.GetProperty("H_A_per_m").GetDouble(), 9);
         }

@@ -19,5 +19,11 @@ internal sealed class CaseFolder : IDisposable
     public IReadOnlyList<string> Names =>
         [.. _folder.GetFiles("*", SearchOption.AllDirectories).Select(f => Path.GetRelativePath(_folder.FullName, f.FullName)).Order(StringComparer.Ordinal)];
 
-    public void Dispose() => _folder.Delete(recursive: true);
+    // Every JSON file a test leaves behind keeps its published schema.
+    public void Dispose()
+    {
+        string[] faults = [.. _folder.GetFiles("*.json", SearchOption.AllDirectories).Select(f => Schemas.Faults(File.ReadAllText(f.FullName)))];
+        _folder.Delete(recursive: true);
+        Assert.All(faults, f => Assert.Equal(string.Empty, f));
+    }
 }

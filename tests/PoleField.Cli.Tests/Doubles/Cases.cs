@@ -71,6 +71,8 @@ internal static class Cases
 
         [magnet]
         length = "200 mm"
+        coil_temperature = "60 degC"
+        stray_levels = ["3 mT", "5 G"]
 
         [accuracy]
         relative = 1e-5

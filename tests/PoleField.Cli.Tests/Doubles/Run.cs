@@ -16,6 +16,7 @@ internal sealed record Run(int Status, string Out, string Error)
         using var error = new StringWriter { NewLine = "\n" };
         var terminal = new Terminal(output, error);
         int status = await CommandLine.RunAsync(args, terminal, pipeline, cancellation);
+        Assert.Equal(string.Empty, Schemas.Faults(output.ToString())); // whatever a test prints as JSON keeps its published schema
         return new Run(status, output.ToString(), error.ToString());
     }
 }

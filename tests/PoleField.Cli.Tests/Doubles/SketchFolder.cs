@@ -19,5 +19,11 @@ internal sealed class SketchFolder : IDisposable
         return folder;
     }
 
-    public void Dispose() => _folder.Delete(recursive: true);
+    // Every JSON file a test leaves behind keeps its published schema.
+    public void Dispose()
+    {
+        string[] faults = [.. _folder.GetFiles("*.json", SearchOption.AllDirectories).Select(f => Schemas.Faults(File.ReadAllText(f.FullName)))];
+        _folder.Delete(recursive: true);
+        Assert.All(faults, f => Assert.Equal(string.Empty, f));
+    }
 }

@@ -1,4 +1,5 @@
 using PoleField.Beam;
+using PoleField.Cli.Files;
 using PoleField.Drawing;
 using PoleField.Geometry;
 using PoleField.Materials;
@@ -17,8 +18,7 @@ internal static class Steps
         ReadMaterial = (_, name) => new Material(name, new LinearLaw(1000), "Table", "table", "as given"),
         Solve = (_, _, options, _, _) => Solved(options),
         FieldOf = _ => place => 1e-3 / (place.SquaredLength * 100),
-        WriteResult = (stream, result) =>
-            stream.Write(System.Text.Encoding.UTF8.GetBytes($"{{ \"format\": \"polefield-result/1\", \"title\": \"{result.Case.Case!.Title}\" }}\n")),
+        Page = solved => ReportOutput.PageOf(ResultOutput.FileOf(solved)),
     };
 
     public static Sketch Sketch(string name, LengthUnit? unit) =>
@@ -33,7 +33,7 @@ internal static class Steps
         return new SectionReading
         {
             Section = sound
-                ? new CrossSection([.. outline.Curves.Select(c => c.Start)], edges, [new Region(-1, double.PositiveInfinity, box), new Region(0, 4e-4, box)], request.PartLayers, false)
+                ? new CrossSection([.. outline.Curves.Select(c => c.Start)], edges, [new Region(-1, double.PositiveInfinity, box), new Region(0, 4e-4, box), new Region(1, 6e-4, box)], request.PartLayers, false)
                 : null,
             Parts = [.. request.PartLayers.Select(l => new PartShape(l, 1, 4e-4, box))],
             IgnoredLayers = [("NOTES", 3)],
@@ -70,7 +70,7 @@ internal static class Steps
                 Layer = "COIL", Kind = "coil", Material = "copper", Area = 6e-4, Outlines = 1, AmpereTurns = 2500, CurrentDensity = 6.94e6,
             },
         ],
-        Circuit = new CircuitReport(2500, 2300, 200, 14.2, 4.5e-6),
+        Circuit = new CircuitReport(2500, 2300, 200, 14.2, 4.5e-6) { GapPullPerMetre = 1150 },
         Findings = [],
     };
 }

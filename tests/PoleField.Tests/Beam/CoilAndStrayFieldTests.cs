@@ -43,6 +43,26 @@ public sealed class CoilAndStrayFieldTests
     }
 
     [Fact]
+    public void OverTheLengthIsPerMetreTimesTheLength()
+    {
+        Magnet bare = new Drawn().Rectangle("COIL", 0, 0, 20, 10).Part("COIL", Material.Air, 1000).Magnet();
+        Magnet magnet = bare with { Roles = [bare.Roles[0] with { Fill = 0.5 }] };
+        var circuit = new CircuitReport(1000, 900, 100, 14, 4.5e-6);
+        OperationSetup setup = OperationSetup.Default with { Length = 0.2, Celsius = 50, StrayLevels = [1e-3, 1e3] };
+
+        var operation = OperationReport.Of(magnet, circuit, p => 1e-3 / (100 * p.SquaredLength), setup);
+
+        Assert.Equal(172.4138 * 0.2, operation.OverLength(operation.ColdHeatPerMetre)!.Value, 1e-4);
+        Assert.Equal(1 + (0.00393 * 30), operation.WarmHeatPerMetre!.Value / operation.ColdHeatPerMetre!.Value, 1e-9);
+        Assert.Equal(4.5e-3, operation.LinkagePerMetre!.Value, 1e-12);                 // 4.5 µH/m times 1000 A
+        Assert.InRange(operation.Stray[0].Distance!.Value, 0.1, 0.1001);              // 1e-3/(100 r²) = 1e-3 at 0.1 m
+        Assert.False(operation.Stray[0].IsBound);
+        Assert.Equal((0.5 * magnet.Section.Bounds.Diagonal, true), (operation.Stray[1].Distance!.Value, operation.Stray[1].IsBound));
+        Assert.Null((operation with { Setup = OperationSetup.Default }).OverLength(14));
+        Assert.Empty(OperationReport.Of(magnet with { AppliedField = new Point(0, 1e-3) }, circuit, _ => 1e-3, setup).Stray);
+    }
+
+    [Fact]
     public void HeatIsThatOfEvenCurrentInCopper()
     {
         Magnet bare = new Drawn()

@@ -61,12 +61,11 @@ public sealed class FigureTests
     [Fact]
     public void TheExcitationCurveMarksItsOnset()
     {
-        ExcitationPoint[] points = [new(1000, 0.5, 100), new(2000, 0.99, 195), new(3000, 1.3, 250)];
-
-        string svg = FigureWriter.SvgText(ExcitationFigure.Draw(points, 2400, "Onset at 2 %."));
+        string svg = FigureWriter.SvgText(ExcitationFigure.Draw(SampleRamp.Make(), "Onset at 2 %."));
 
         Assert.Contains("onset of saturation at 2.4 kA", svg, StringComparison.Ordinal);
         Assert.Contains("ampere-turns (kA)", svg, StringComparison.Ordinal);
+        Assert.Contains("k = aG/B", svg, StringComparison.Ordinal);
     }
 
     [Fact]

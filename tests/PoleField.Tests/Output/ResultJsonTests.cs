@@ -43,7 +43,7 @@ public sealed class ResultJsonTests
         string[] expected =
         [
             "format", "title", "case_sha256", "sketch_sha256", "program_version", "beam", "aperture", "parts", "circuit",
-            "mesh", "run", "require", "cautions", "warnings",
+            "mesh", "run", "require", "cautions", "warnings", "materials", "operation",
         ];
         Assert.Equal(expected, document.RootElement.EnumerateObject().Select(p => p.Name));
     }
@@ -95,30 +95,11 @@ public sealed class ResultJsonTests
     [Fact]
     public void AnotherFormatIsRefusedByItsName()
     {
-        string text = ResultJson.Text(ResultJson.ToFile(SampleResult.Make())).Replace("polefield-result/1", "polefield-result/9", StringComparison.Ordinal);
+        string text = JsonText.Of(ResultJson.ToFile(SampleResult.Make())).Replace("polefield-result/1", "polefield-result/9", StringComparison.Ordinal);
 
         InputException e = Assert.Throws<InputException>(() => ResultJson.Read(new MemoryStream(Encoding.UTF8.GetBytes(text))));
 
         Assert.Contains("polefield-result/9", e.Findings[0].Text, StringComparison.Ordinal);
-    }
-
-    [Fact]
-    public void ThePublishedSchemaIsTheOneTheTypesMake()
-    {
-        string file = Path.Combine(RepositoryRoot(), "src", "PoleField.Output", "Schemas", "polefield-result-1.json");
-
-        Assert.Equal(ResultSchema.Json, File.ReadAllText(file));
-    }
-
-    internal static string RepositoryRoot()
-    {
-        string? folder = AppContext.BaseDirectory;
-        while (folder is not null && !File.Exists(Path.Combine(folder, "PoleField.sln")))
-        {
-            folder = Path.GetDirectoryName(folder);
-        }
-
-        return folder ?? throw new InvalidOperationException("The tests run outside the repository.");
     }
 
     private static JsonDocument Write() => JsonDocument.Parse(Bytes(ResultJson.ToFile(SampleResult.Make())));
@@ -126,7 +107,7 @@ public sealed class ResultJsonTests
     private static byte[] Bytes(ResultFile file)
     {
         using MemoryStream stream = new();
-        ResultJson.Write(file, stream);
+        JsonText.Write(file, stream);
         return stream.ToArray();
     }
 }

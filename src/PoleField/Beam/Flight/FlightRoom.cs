@@ -42,6 +42,7 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
         try
         {
             BeamField field = FieldOver(solved, room) ?? SolvedOver(magnet, room, settings);
+            settings.Progress?.Invoke(SolveProgress.Of("fly the beam"));
             return new FlightRoom(FlightField.Over(room, field.At, settings.Options.Threads), margin);
         }
         catch (MeshingException e)
@@ -54,7 +55,7 @@ internal sealed record FlightRoom(FlightField Field, double Margin)
     {
         SolveOptions options = settings.Options with { Accuracy = Math.Max(Accuracy, settings.Options.Accuracy) };
         Aperture wide = Aperture.Rectangle(room.Centre, room.Width, room.Height);
-        return MagnetSolver.Solve(magnet, wide, options, settings.Progress, settings.Cancellation).Field;
+        return MagnetSolver.Solve(magnet, wide, options, p => settings.Progress?.Invoke(p.Within("field around the beam")), settings.Cancellation).Field;
     }
 
     // Each side moves out as far as its own clearance surely allows, again and again.

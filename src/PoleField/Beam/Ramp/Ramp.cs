@@ -20,12 +20,13 @@ public sealed class Ramp
     private readonly RunSettings _run;
     private readonly bool _otherSources;
     private double? _halfSpacing;
+    private string _now = "straight start";
 
     private Ramp(SolvedMagnet full, RampSettings settings, RunSettings run)
     {
         _full = full;
         _settings = settings;
-        _run = run;
+        _run = run with { Progress = p => run.Progress?.Invoke(p.Within(_now)) };
         Magnet magnet = full.Solution.Magnet;
         _otherSources = magnet.AppliedField != default || magnet.Roles.Any(r => r.Remanence != default);
     }
@@ -62,6 +63,7 @@ public sealed class Ramp
         double lastFactor = StartFactor;
         foreach (double factor in _settings.Factors)
         {
+            _now = FormattableString.Invariant($"excitation {steps.Count + 1} of {_settings.Factors.Count}");
             bool own = false;
             last = factor == 1.0 ? _full : SolveAt(factor, (lastFactor, last), out own);
             lastFactor = factor;
@@ -69,6 +71,7 @@ public sealed class Ramp
             near.Add(last);
         }
 
+        _now = "onset of saturation";
         return new RampReport
         {
             Steps = steps,

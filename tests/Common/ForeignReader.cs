@@ -1,6 +1,6 @@
 using System.Diagnostics;
 
-namespace PoleField.Cli.Tests.Doubles;
+namespace PoleField.Tests.Common;
 
 /// <summary>Runs Python scripts that read our files with other people's libraries.</summary>
 internal static class ForeignReader
@@ -15,7 +15,7 @@ internal static class ForeignReader
     {
         string interpreter = InterpreterWith(module) ?? throw new InvalidOperationException($"No Python with {module}.");
         (int exitCode, string output, string errors) = Start(interpreter, ["-c", script, .. arguments])!.Value;
-        Assert.True(exitCode == 0, errors);
+        Xunit.Assert.True(exitCode == 0, errors);
         return output.Split('\n', StringSplitOptions.RemoveEmptyEntries | StringSplitOptions.TrimEntries);
     }
 
@@ -39,7 +39,7 @@ internal static class ForeignReader
 
 /// <summary>A fact that needs a Python library; skipped with the reason when it is not there.</summary>
 [AttributeUsage(AttributeTargets.Method)]
-public sealed class ForeignReaderFactAttribute : FactAttribute
+public sealed class ForeignReaderFactAttribute : Xunit.FactAttribute
 {
     public ForeignReaderFactAttribute(string module)
     {
