@@ -102,6 +102,17 @@ public sealed class ResultJsonTests
         Assert.Contains("polefield-result/9", e.Findings[0].Text, StringComparison.Ordinal);
     }
 
+    internal static string RepositoryRoot()
+    {
+        string? folder = AppContext.BaseDirectory;
+        while (folder is not null && !File.Exists(Path.Combine(folder, "PoleField.sln")))
+        {
+            folder = Path.GetDirectoryName(folder);
+        }
+
+        return folder ?? throw new InvalidOperationException("The tests run outside the repository.");
+    }
+
     private static JsonDocument Write() => JsonDocument.Parse(Bytes(ResultJson.ToFile(SampleResult.Make())));
 
     private static byte[] Bytes(ResultFile file)
