@@ -83,10 +83,14 @@ internal sealed class FieldEquations
         }
     }
 
-    /// <summary>Energy W and residual ∂W/∂A (by node; zero on fixed nodes) at a potential.</summary>
-    public FieldState Evaluate(double[] potential)
+    /// <summary>
+    /// Energy W and residual ∂W/∂A (by node; zero on fixed nodes) at a potential; <paramref name="spent"/> is a state no
+    /// longer needed, whose memory is used.
+    /// </summary>
+    public FieldState Evaluate(double[] potential, FieldState? spent = null)
     {
-        var residual = new double[potential.Length];
+        double[] residual = spent?.Residual ?? new double[potential.Length];
+        Array.Clear(residual);
         (double energy, double product) = _linear.AddResidual(potential, residual);
         (double energy2, double product2) = _nonlinear.AddResidual(potential, residual);
         energy += energy2;

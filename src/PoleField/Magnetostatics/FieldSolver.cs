@@ -46,29 +46,34 @@ internal static class FieldSolver
         CancellationToken cancellation = default)
     {
         var history = new List<NewtonStep>();
-        double[] potential = start ?? LinearStart(equations, cancellation);
-        FieldState state = equations.Evaluate(potential);
         TangentSystem? tangent = null;
+        double[] potential = start ?? LinearStart(equations, out tangent, cancellation);
+        var now = new Iterate(potential, equations.Evaluate(potential));
+        Iterate? spent = null;
         for (int k = 1; k <= MostSteps; k++)
         {
             cancellation.ThrowIfCancellationRequested();
-            bool kept = tangent is not null && MayKeepTangent(history);
-            tangent = kept ? tangent! : equations.TangentAt(potential, tangent);
-            double[] direction = tangent.Solve(state.Residual);
-            double slope = -Dot(state.Residual, direction);
-            double decrement = Math.Sqrt(Math.Max(0, -slope) / Math.Max(state.FieldProduct, double.Epsilon));
+            bool kept = history.Count > 0 && MayKeepTangent(history);
+            tangent = kept ? tangent! : equations.TangentAt(now.Potential, tangent);
+            double[] direction = tangent.Solve(now.State.Residual);
+            double slope = -Dot(now.State.Residual, direction);
+            double decrement = Math.Sqrt(Math.Max(0, -slope) / Math.Max(now.State.FieldProduct, double.Epsilon));
             if (!double.IsFinite(slope))
             {
                 throw new FieldNotConvergedException(history);
             }
 
-            (potential, state, double length) = Step(equations, potential, state, direction, slope);
-            history.Add(new NewtonStep(state.Energy, decrement, length, kept));
+            (Iterate next, double length) = Step(equations, now, spent, direction, slope);
+            history.Add(new NewtonStep(next.State.Energy, decrement, length, kept));
             step?.Invoke(k, history[^1]);
             if (!equations.IsNonlinear || IsConverged(history))
             {
-                return (potential, history);
+                return (next.Potential, history);
             }
+
+            // The start is the caller's.
+            spent = k > 1 ? now : null;
+            now = next;
         }
 
         throw new FieldNotConvergedException(history);
@@ -101,8 +106,11 @@ internal static class FieldSolver
     private static double Reduction(List<NewtonStep> history) =>
         history.Count < 2 ? 1.0 : Math.Min(1.0, history[^1].Decrement / history[^2].Decrement);
 
-    private static double[] LinearStart(FieldEquations equations, CancellationToken cancellation)
+    // The tangent is no longer needed, but its memory is.
+    private static double[] LinearStart(
+        FieldEquations equations, out TangentSystem? tangent, CancellationToken cancellation)
     {
+        tangent = null;
         cancellation.ThrowIfCancellationRequested();
         double[] potential = equations.FixedPotential();
         if (!equations.IsNonlinear)
@@ -111,25 +119,28 @@ internal static class FieldSolver
         }
 
         double[] residual = equations.Evaluate(potential).Residual;
-        double[] direction = equations.LinearTangent(StartPermeability).Solve(residual);
+        tangent = equations.LinearTangent(StartPermeability);
+        double[] direction = tangent.Solve(residual);
         Subtract(potential, 1.0, direction);
         return potential;
     }
 
-    private static (double[] Potential, FieldState State, double Length) Step(
-        FieldEquations equations, double[] potential, FieldState state, double[] direction, double slope)
+    private static (Iterate Next, double Length) Step(
+        FieldEquations equations, Iterate now, Iterate? spent, double[] direction, double slope)
     {
         double length = 1.0;
-        bool visible = Math.Abs(slope) > EnergyRounding * Math.Abs(state.Energy);
+        bool visible = Math.Abs(slope) > EnergyRounding * Math.Abs(now.State.Energy);
+        double[] trial = spent?.Potential ?? new double[now.Potential.Length];
+        FieldState? state = spent?.State;
         while (true)
         {
-            var trial = (double[])potential.Clone();
+            now.Potential.CopyTo(trial.AsSpan());
             Subtract(trial, length, direction);
-            FieldState next = equations.Evaluate(trial);
-            double rise = next.Energy - state.Energy;
+            state = equations.Evaluate(trial, state);
+            double rise = state.Energy - now.State.Energy;
             if (!visible || rise <= ArmijoShare * length * slope || length <= ShortestStep)
             {
-                return (trial, next, length);
+                return (new Iterate(trial, state), length);
             }
 
             // Minimum of the parabola through the old energy, its slope and the new energy, kept within bounds.
@@ -156,4 +167,6 @@ internal static class FieldSolver
 
         return sum;
     }
+
+    private sealed record Iterate(double[] Potential, FieldState State);
 }

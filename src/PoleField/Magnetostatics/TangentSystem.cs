@@ -1,3 +1,4 @@
+using System.Buffers;
 using PoleField.Numerics;
 
 namespace PoleField.Magnetostatics;
@@ -31,16 +32,20 @@ internal sealed class TangentSystem
     /// <summary>Solutions for several right sides at once.</summary>
     public double[][] Solve(IReadOnlyList<double[]> rightSides)
     {
-        var packed = new double[rightSides.Count * _unknowns];
-        for (int k = 0; k < rightSides.Count; k++)
+        int length = rightSides.Count * _unknowns;
+        double[] packed = ArrayPool<double>.Shared.Rent(length);
+        double[][] solutions = [.. rightSides.Select(_ => new double[_space.NodeCount])];
+        for (int k = 0; k < solutions.Length; k++)
         {
-            double[] skeleton = rightSides[k].AsSpan(0, _space.SkeletonCount).ToArray();
+            // Until it holds the solution it holds the condensed right side.
+            double[] skeleton = solutions[k];
+            rightSides[k].AsSpan(0, _space.SkeletonCount).CopyTo(skeleton);
             for (int e = 0; e < _space.ElementCount; e++)
             {
                 Condensation.ReduceRightSide(e, _space.NodesOf(e), rightSides[k], skeleton);
             }
 
-            for (int node = 0; node < skeleton.Length; node++)
+            for (int node = 0; node < _unknownOfNode.Length; node++)
             {
                 if (_unknownOfNode[node] >= 0)
                 {
@@ -49,32 +54,27 @@ internal sealed class TangentSystem
             }
         }
 
-        CholeskyFactor.Solve(packed, rightSides.Count);
-        var solutions = new double[rightSides.Count][];
-        for (int k = 0; k < rightSides.Count; k++)
+        CholeskyFactor.Solve(packed.AsSpan(0, length), rightSides.Count);
+        for (int k = 0; k < solutions.Length; k++)
         {
-            solutions[k] = Expand(packed.AsSpan(k * _unknowns, _unknowns), rightSides[k]);
+            Expand(packed.AsSpan(k * _unknowns, _unknowns), rightSides[k], solutions[k]);
         }
 
+        ArrayPool<double>.Shared.Return(packed);
         return solutions;
     }
 
-    private double[] Expand(ReadOnlySpan<double> unknowns, double[] rightSide)
+    private void Expand(ReadOnlySpan<double> unknowns, double[] rightSide, double[] solution)
     {
-        var solution = new double[_space.NodeCount];
         for (int node = 0; node < _unknownOfNode.Length; node++)
         {
-            if (_unknownOfNode[node] >= 0)
-            {
-                solution[node] = unknowns[_unknownOfNode[node]];
-            }
+            int unknown = _unknownOfNode[node];
+            solution[node] = unknown >= 0 ? unknowns[unknown] : 0.0;
         }
 
         for (int e = 0; e < _space.ElementCount; e++)
         {
             Condensation.Recover(e, _space.NodesOf(e), rightSide, solution);
         }
-
-        return solution;
     }
 }
