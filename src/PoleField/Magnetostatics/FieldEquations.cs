@@ -33,7 +33,7 @@ internal sealed class FieldEquations
         ElementKernel[] kernels = Kernels(problem, threads);
         _linear = new ElementSweep(problem, Background, linear, kernels);
         _nonlinear = new ElementSweep(problem, Background, nonlinear, kernels);
-        Analysis = CholeskyAnalysis.Analyse(Pattern, UnknownPlaces());
+        Analysis = CholeskyAnalysis.Analyse(Pattern, threads);
         _linearEntries = new double[Pattern.EntryCount];
         _linearCondensation = new Condensation(problem.Space);
         _linear.AssembleTangent(null, null, _linearCondensation, _scatter, _linearEntries);
@@ -254,37 +254,6 @@ internal sealed class FieldEquations
         SymmetricPattern pattern = SymmetricPattern.FromElements(UnknownCount, start, unknowns);
         scatter = pattern.ScatterMap();
         return pattern;
-    }
-
-    // Unknowns of the second disc are unfolded to where they are in space, so that cuts of the plane separate them too.
-    private double[] UnknownPlaces()
-    {
-        FiniteElementSpace space = Problem.Space;
-        var places = new double[2 * UnknownCount];
-        var outer = new bool[space.SkeletonCount];
-        for (int e = 0; e < space.ElementCount; e++)
-        {
-            if (space.Mesh.Regions[e] == Mesh.Exterior)
-            {
-                foreach (int node in space.NodesOf(e)[..space.Reference.BoundaryCount])
-                {
-                    outer[node] = true;
-                }
-            }
-        }
-
-        for (int node = 0; node < _unknownOfNode.Length; node++)
-        {
-            int unknown = _unknownOfNode[node];
-            if (unknown >= 0)
-            {
-                Geometry.Point p = outer[node] ? Kelvin.Invert(space.Mesh.Circle!, space.Places[node]) : space.Places[node];
-                places[2 * unknown] = p.Y;
-                places[(2 * unknown) + 1] = p.Z;
-            }
-        }
-
-        return places;
     }
 }
 

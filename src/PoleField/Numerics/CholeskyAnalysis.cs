@@ -55,21 +55,11 @@ public sealed class CholeskyAnalysis
 
     internal FactorizationPlan Plan { get; }
 
-    /// <summary>
-    /// Orders and analyses a pattern. <paramref name="places"/> (y, z of unknown i at [2i], [2i + 1]) may be given; the
-    /// present ordering looks at the graph alone.
-    /// </summary>
-    /// <exception cref="ArgumentException">There are places, but not two numbers for every unknown.</exception>
-    public static CholeskyAnalysis Analyse(SymmetricPattern pattern, ReadOnlySpan<double> places = default)
+    /// <summary>Orders and analyses a pattern; the result is the same on any number of threads.</summary>
+    public static CholeskyAnalysis Analyse(SymmetricPattern pattern, int threads = 1)
     {
-        if (!places.IsEmpty && places.Length != 2 * pattern.Size)
-        {
-            throw new ArgumentException(FormattableString.Invariant(
-                $"Need two coordinates for each of {pattern.Size} unknowns, got {places.Length} numbers."));
-        }
-
         CompressedGraph compressed = CompressedGraph.Of(pattern);
-        int[] order = NestedDissection.Order(compressed.Graph);
+        int[] order = NestedDissection.Order(compressed.Graph, threads);
         return new CholeskyAnalysis(pattern, Supernodes.Of(compressed, EliminationTree.Of(compressed.Graph, order)));
     }
 

@@ -13,34 +13,39 @@ internal sealed class NestedDissection
     // Parts of at most this many vertices are ordered by minimum degree.
     private const int LargestLeaf = 100;
 
+    // Smaller parts are not worth another thread.
+    private const int LeastToShare = 2000;
+
+    private readonly WeightedGraph _graph;
     private readonly MinimumDegree _leaves;
     private readonly GraphBisection _bisection;
     private readonly int[] _order;
     private readonly int[] _localOf;
 
-    private NestedDissection(WeightedGraph graph)
+    private NestedDissection(WeightedGraph graph, int largestPart, int[] order)
     {
+        _graph = graph;
         _leaves = new MinimumDegree(graph);
-        _bisection = new GraphBisection(graph.Count);
-        _order = new int[graph.Count];
-        _localOf = new int[graph.Count];
+        _bisection = new GraphBisection(largestPart);
+        _order = order;
+        _localOf = new int[largestPart];
     }
 
-    /// <summary>Vertices in the order of their elimination.</summary>
-    public static int[] Order(WeightedGraph graph)
+    /// <summary>Vertices in the order of their elimination, the same on any number of threads.</summary>
+    public static int[] Order(WeightedGraph graph, int threads = 1)
     {
-        var dissection = new NestedDissection(graph);
+        var order = new int[graph.Count];
         for (int v = 0; v < graph.Count; v++)
         {
-            dissection._order[v] = v;
+            order[v] = v;
         }
 
-        dissection.Dissect(graph, 0);
-        return dissection._order;
+        new NestedDissection(graph, graph.Count, order).Dissect(graph, 0, threads);
+        return order;
     }
 
     // Orders the part whose vertices are in _order from `first` on, in the numbering of `part`.
-    private void Dissect(WeightedGraph part, int first)
+    private void Dissect(WeightedGraph part, int first, int threads)
     {
         Span<int> own = _order.AsSpan(first, part.Count);
         if (part.Count <= LargestLeaf)
@@ -65,8 +70,17 @@ internal sealed class NestedDissection
         Sort(own, side, sizes);
         int second = sizes[0];
         WeightedGraph left = Extract(part, side, 0, sizes[0]), right = Extract(part, side, 1, sizes[1]);
-        Dissect(left, first);
-        Dissect(right, first + second);
+        if (threads < 2 || part.Count < LeastToShare)
+        {
+            Dissect(left, first, 1);
+            Dissect(right, first + second, 1);
+            return;
+        }
+
+        var other = new NestedDissection(_graph, right.Count, _order);
+        Parallel.Invoke(
+            () => Dissect(left, first, (threads + 1) / 2),
+            () => other.Dissect(right, first + second, threads / 2));
     }
 
     // Side 0, side 1, separator; each in the order it has.
