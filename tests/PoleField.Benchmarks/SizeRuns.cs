@@ -14,7 +14,7 @@ internal static class SizeRuns
     private const int Order = 2;
 
     /// <summary>Factors on the mesh sizes that give about 10k, 50k, 200k and 1M unknowns.</summary>
-    public static IReadOnlyList<double> Factors { get; } = [1.0, 0.45, 0.22, 0.0965];
+    public static IReadOnlyList<double> Factors { get; } = [1.35, 0.39, 0.094, 0.0247];
 
     public static void Print(TextWriter writer, double largestUnknowns)
     {
@@ -42,8 +42,8 @@ internal static class SizeRuns
 
     private static Row Measure(double factor)
     {
-        (Mesh mesh, double meshing) = Best.Of(factor < 0.2 ? 1 : 2, () => ModelProblem.Mesh(factor));
-        int runs = factor < 0.2 ? 2 : 4;
+        (Mesh mesh, double meshing) = Best.Of(factor < 0.05 ? 1 : 2, () => ModelProblem.Mesh(factor));
+        int runs = factor < 0.05 ? 2 : 4;
         (FieldEquations one, double setUp) = Best.Of(Math.Min(2, runs), () => Equations(mesh, 1));
         FieldEquations two = Equations(mesh, 2);
         double analysis = Best.Time(Math.Min(2, runs), () => _ = CholeskyAnalysis.Analyse(one.Pattern));
