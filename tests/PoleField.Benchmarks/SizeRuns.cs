@@ -37,8 +37,8 @@ internal static class SizeRuns
     }
 
     /// <summary>The equations of the model problem on the mesh with the given factor.</summary>
-    public static FieldEquations Equations(Mesh mesh, int threads) => new(
-        FieldProblem.Create(ModelProblem.Magnet, FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), Order)), threads);
+    public static FieldEquations Equations(Mesh mesh, int threads, int order = Order) => new(
+        FieldProblem.Create(ModelProblem.Magnet, FiniteElementSpace.Create(mesh, MeshEdges.Of(mesh), order)), threads);
 
     private static Row Measure(double factor)
     {

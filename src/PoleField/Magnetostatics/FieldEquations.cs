@@ -1,4 +1,3 @@
-using PoleField.Meshing;
 using PoleField.Numerics;
 
 namespace PoleField.Magnetostatics;
