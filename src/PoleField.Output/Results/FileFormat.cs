@@ -111,7 +111,9 @@ public sealed record FileFormat(string Name, string Holds, Type Shape)
         }
         else if (Words.TryGetValue(property.Name, out string[]? words))
         {
-            node["enum"] = new JsonArray([.. words.Select(w => (JsonNode)w)]);
+            IEnumerable<JsonNode?> allowed = words.Select(w => (JsonNode?)w);
+            bool mayBeNull = node["type"] is JsonArray types && types.Any(t => (string?)t == "null");
+            node["enum"] = new JsonArray([.. mayBeNull ? allowed.Append(null) : allowed]);
         }
         else if (Lengths.TryGetValue(property.Name, out int length))
         {
