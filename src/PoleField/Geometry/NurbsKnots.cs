@@ -31,11 +31,11 @@ internal sealed record NurbsKnots(int Degree, double[] Knots, NurbsControl[] Con
         if (weights is not null && weights.Count != controls.Count)
         {
             throw new ArgumentException(FormattableString.Invariant(
-                $"A spline cannot be made: it has {weights.Count} weights for {controls.Count} control points."));
+                $"it has {weights.Count} weights for {controls.Count} control points"));
         }
 
         NurbsKnots data = new(degree, [.. knots], [.. controls.Select((c, i) => new NurbsControl(c, weights?[i] ?? 1.0))]);
-        return data.Fault() is { } fault ? throw new ArgumentException($"A spline cannot be made: {fault}.") : data;
+        return data.Fault() is { } fault ? throw new ArgumentException(fault) : data;
     }
 
     /// <summary>Start of the curve's parameter range: knot [degree].</summary>
@@ -71,7 +71,7 @@ internal sealed record NurbsKnots(int Degree, double[] Knots, NurbsControl[] Con
 
         if (Controls.FirstOrDefault(c => !(c.Weight >= 1 / LargestWeight) || !(c.Weight <= LargestWeight), new(default, 1)) is { Weight: not 1.0 and double weight })
         {
-            return FormattableString.Invariant($"a weight is {weight}; {1 / LargestWeight} to {LargestWeight} is allowed");
+            return FormattableString.Invariant($"a weight is {weight}; {1 / LargestWeight:g3} to {LargestWeight:g3} is allowed");
         }
 
         for (int i = 0; i < Knots.Length; i++)

@@ -59,8 +59,7 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
 
             if (item is DxfOther)
             {
-                (string reason, string cure, _) = DxfWords.NotRead(item.Kind);
-                Skip(layer, item.Kind, reason + "; cure: " + cure);
+                Skip(layer, item.Kind, DxfWords.NotRead(item.Kind).Why);
             }
             else if (item.Problem is { } problem)
             {
@@ -157,7 +156,7 @@ internal sealed class DxfExpansion(DxfDocument document, DxfReport report, DxfLi
                 if (++_copies > limits.BlockCopies)
                 {
                     throw Limit(insert, FormattableString.Invariant(
-                        $"Block {DxfReport.Shown(block.Name)} is within more than {limits.BlockCopies} copies of blocks; limit reached at {Path()}."));
+                        $"The drawing shows more than {limits.BlockCopies} copies of blocks; limit reached at {Path()}."));
                 }
 
                 Point shift = (column * columnShift) + (row * rowShift);

@@ -77,6 +77,6 @@ internal static class DxfForeign
         }
 
         string shown = DxfReport.Shown(Encoding.Latin1.GetString(text[..Math.Min(24, text.Length)]));
-        return $"unknown (it begins with \"{shown}\")";
+        return $"of an unknown kind (it begins with \"{shown}\")";
     }
 }

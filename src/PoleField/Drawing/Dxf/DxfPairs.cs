@@ -54,7 +54,7 @@ internal abstract class DxfPairs(DxfReport report, DxfLimits limits)
     /// <summary>The fault of a file that ends too early.</summary>
     public InputException Truncated(string what) => report.Stop(
         "truncated",
-        $"The file ends {what}{Where}: it is cut short.",
+        $"The file ends{Where}, {what}: it is cut short.",
         "Export or copy the drawing again.",
         new DxfPlace(Line));
 }

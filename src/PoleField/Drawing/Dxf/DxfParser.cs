@@ -39,10 +39,10 @@ internal sealed class DxfParser(DxfPairs pairs, DxfReport report, DxfLimits limi
 
     private void Section()
     {
-        int line = pairs.Line;
+        string from = pairs.Line > 0 ? $" (from line {pairs.Line})" : string.Empty;
         Move("inside a section");
         string name = pairs.Code == 2 ? pairs.Text : string.Empty;
-        _inside = $"inside section {DxfReport.Shown(name)}, which begins at line {line},";
+        _inside = $"inside section {DxfReport.Shown(name)}{from}";
         switch (name)
         {
             case "HEADER":
@@ -72,7 +72,7 @@ internal sealed class DxfParser(DxfPairs pairs, DxfReport report, DxfLimits limi
         {
             throw report.Stop(
                 "truncated",
-                $"The file has lost a part {_inside} before line {pairs.Line}: the section has no end mark.",
+                $"The file has lost a part {_inside}: the section has no end mark (0, ENDSEC).",
                 "Export or copy the drawing again.",
                 new DxfPlace(pairs.Line));
         }
@@ -220,7 +220,7 @@ internal sealed class DxfParser(DxfPairs pairs, DxfReport report, DxfLimits limi
                 "block-twice",
                 $"Block {DxfReport.Shown(block.Name)} is defined twice; the first definition counts.",
                 "Rename one of them.",
-                head.Place);
+                new DxfPlace(head.Line));
         }
 
         Entities(block.Items, "ENDBLK");

@@ -113,7 +113,7 @@ internal sealed class DxfPolyline
         {
             return _shape with
             {
-                Problem = ("bad-curve", $"POLYLINE on layer {DxfReport.Shown(_shape.Layer)}: {e.Message}", "Draw it anew."),
+                Problem = ("bad-curve", $"POLYLINE on layer {DxfReport.Shown(_shape.Layer)}: {e.Message.TrimEnd('.')}.", "Draw it anew."),
             };
         }
     }

@@ -64,7 +64,7 @@ public static class DxfReader
         if (options.Unit is { } told)
         {
             string also = stated is not null && stated.Metres != told.Metres ? $"; the drawing's $INSUNITS says {stated.Name}" : string.Empty;
-            report.Note("unit", $"The drawing unit is {told.Name}, as the case states{also}.", "Nothing.");
+            report.Note("unit", $"Unit of the drawing: {told.Name}, as the case states{also}.", "Nothing to do.");
             return (told, UnitOrigin.CaseFile);
         }
 
@@ -72,7 +72,7 @@ public static class DxfReader
         {
             bool disagree = document.Measurement is { } m && (m == 0) != DxfUnits.IsImperial((int)code);
             string also = disagree ? $"; $MEASUREMENT={document.Measurement} disagrees and does not count" : string.Empty;
-            report.Note("unit", FormattableString.Invariant($"The drawing unit is {stated.Name}, from $INSUNITS={code}{also}."), "Nothing.");
+            report.Note("unit", FormattableString.Invariant($"Unit of the drawing: {stated.Name}, from $INSUNITS={code}{also}."), "Nothing to do.");
             return (stated, UnitOrigin.InsertUnits);
         }
 
@@ -81,7 +81,7 @@ public static class DxfReader
         if (document.Measurement == 1)
         {
             Action<string, string, string, DxfPlace> tell = code != 0 ? report.Warn : report.Note;
-            tell("unit", $"{unknown}The drawing unit is mm, from $MEASUREMENT=1.", state, default);
+            tell("unit", $"{unknown}Unit of the drawing: mm, from $MEASUREMENT=1.", state, default);
             return (LengthUnit.Millimetre, UnitOrigin.Measurement);
         }
 
@@ -121,7 +121,7 @@ public static class DxfReader
         string which = FormattableString.Invariant($"{skipped.Count} {skipped.Kind} on layer {DxfReport.Shown(skipped.Layer)}");
         if (skipped.Why == DxfExpansion.NoLength)
         {
-            report.Note("no-length", $"{which}: pieces without length were dropped.", "Nothing.", place);
+            report.Note("no-length", $"{which}: pieces without length were dropped.", "Nothing to do.", place);
         }
         else if (skipped.Why.StartsWith(DxfExpansion.CentreLine, StringComparison.Ordinal))
         {
@@ -131,7 +131,7 @@ public static class DxfReader
         {
             report.Warn("external", $"{which} not read: {skipped.Why}.", "Bind the reference and export again.", place);
         }
-        else if (skipped.Why.Contains("; cure: ", StringComparison.Ordinal) && DxfWords.NotRead(skipped.Kind) is { MayBeOutline: true } words)
+        else if (DxfWords.NotRead(skipped.Kind) is { MayBeOutline: true } words && skipped.Why == words.Why)
         {
             report.Warn("not-read", $"{which} not read: {words.Why}.", words.Cure, place);
         }

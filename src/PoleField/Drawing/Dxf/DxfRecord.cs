@@ -87,10 +87,12 @@ internal sealed class DxfRecord(DxfReport report, DxfLimits limits)
     {
         foreach ((int code, int line, string text) in _bad)
         {
+            bool comma = text.Contains(',', StringComparison.Ordinal);
+            string number = code is >= 60 and <= 79 ? "whole number" : comma ? "number" : "finite number";
             report.Fault(
                 "bad-number",
-                $"\"{DxfReport.Shown(text)}\" is not a {(code is >= 60 and <= 79 ? "whole" : "finite")} number ({Kind} on layer {DxfReport.Shown(Layer)}, {DxfWords.Meaning(Kind, code)}).",
-                text.Contains(',', StringComparison.Ordinal) ? "Export with a decimal point." : "Export the drawing again.",
+                $"\"{DxfReport.Shown(text)}\" is not a {number} ({Kind} on layer {DxfReport.Shown(Layer)}, {DxfWords.Meaning(Kind, code)}).",
+                comma ? "Export with a decimal point." : "Export the drawing again.",
                 new DxfPlace(line, Layer, Handle));
         }
 
@@ -131,10 +133,11 @@ internal sealed class DxfRecord(DxfReport report, DxfLimits limits)
         if (count != 1)
         {
             IsIncomplete = true;
-            string how = count == 0 ? "has no" : FormattableString.Invariant($"has {count} times");
+            string meaning = DxfWords.Meaning(Kind, code);
+            string has = count == 0 ? $"has no {meaning}" : FormattableString.Invariant($"has {meaning} {count} times");
             report.Fault(
                 "missing-value",
-                $"{Kind} on layer {DxfReport.Shown(Layer)} {how} {DxfWords.Meaning(Kind, code)} (group {code}); it must be there once.",
+                $"{Kind} on layer {DxfReport.Shown(Layer)} {has} (group {code}); it must be there once.",
                 "The entity is damaged; export the drawing again or draw it anew.",
                 Place);
             return double.NaN;

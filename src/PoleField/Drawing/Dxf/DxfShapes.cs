@@ -38,7 +38,7 @@ internal static class DxfShapes
         {
             return With(record, []) with
             {
-                Problem = record.IsIncomplete ? null : ("bad-curve", $"{record.Kind} on layer {DxfReport.Shown(record.Layer)}: {e.Message}", "Draw it anew."),
+                Problem = record.IsIncomplete ? null : ("bad-curve", $"{record.Kind} on layer {DxfReport.Shown(record.Layer)}: {e.Message.TrimEnd('.')}.", "Draw it anew."),
             };
         }
     }
@@ -82,7 +82,7 @@ internal static class DxfShapes
     private static DxfShape Circle(DxfRecord record, DxfFrame frame)
     {
         Point centre = record.RequiredPoint(10);
-        double radius = record.Required(40);
+        double radius = RequiredPositive(record, 40);
         return radius == 0.0
             ? Dropped(record)
             : With(record, [frame.Place(new CircularArc(centre, radius, 0, Math.Tau))], record.Real(30, 0));
@@ -91,7 +91,7 @@ internal static class DxfShapes
     private static DxfShape Arc(DxfRecord record, DxfFrame frame)
     {
         Point centre = record.RequiredPoint(10);
-        double radius = record.Required(40);
+        double radius = RequiredPositive(record, 40);
         double from = record.Required(50) % 360.0;
         double to = record.Required(51);
         double turn = to - record.Real(50, 0);
@@ -111,7 +111,7 @@ internal static class DxfShapes
     {
         Point centre = record.RequiredPoint(10);
         Point major = record.RequiredPoint(11);
-        double ratio = record.Required(40);
+        double ratio = RequiredPositive(record, 40);
         double from = record.Real(41, 0);
         double turn = record.Real(42, Math.Tau) - from;
         if (Differ(0, record.Real(31, 0), major.Length))
@@ -133,6 +133,15 @@ internal static class DxfShapes
 
         // Centres of ellipses are given in drawing coordinates already, heights too.
         return With(record, [curve], sense * record.Real(30, 0));
+    }
+
+    // Zero passes: it is a piece without length, or flat.
+    private static double RequiredPositive(DxfRecord record, int code)
+    {
+        double value = record.Required(code);
+        return value < 0.0
+            ? throw new ArgumentException(FormattableString.Invariant($"its {DxfWords.Meaning(record.Kind, code)} is {value}; it must be positive"))
+            : value;
     }
 
     private static DxfShape Dropped(DxfRecord record) => With(record, []) with { Dropped = 1 };

@@ -41,6 +41,9 @@ internal static class DxfWords
         ("INSERT", 41) => "x scale",
         ("INSERT", 42) => "y scale",
         ("INSERT", 50) => "rotation",
+        ("INSERT", 70) => "number of columns",
+        ("INSERT", 71) => "number of rows",
+        (_, 70) => "flags",
         (_, 210 or 220 or 230) => "extrusion direction",
         _ => FormattableString.Invariant($"value of group {code}"),
     };
@@ -57,12 +60,12 @@ internal static class DxfWords
         "VIEWPORT" => ("a view of the sheet " + NotOutline, "Nothing.", false),
         "IMAGE" or "WIPEOUT" or "OLE2FRAME" or "OLEFRAME" or "PDFUNDERLAY" or "DWFUNDERLAY" or "DGNUNDERLAY" =>
             ("a picture " + NotOutline, "Trace it with lines and arcs.", false),
-        "HATCH" or "MPOLYGON" => ("a hatch fills an outline and is none", "Draw its boundary (recreate the boundary as polylines).", true),
-        "SOLID" or "TRACE" or "3DFACE" => ("a filled face is not read", "Draw its boundary as a closed polyline.", true),
+        "HATCH" or "MPOLYGON" => ("it fills an outline and is none", "Draw its boundary (recreate the boundary as polylines).", true),
+        "SOLID" or "TRACE" or "3DFACE" => ("it is a filled face", "Draw its boundary as a closed polyline.", true),
         "REGION" or "3DSOLID" or "BODY" or "SURFACE" or "EXTRUDEDSURFACE" or "REVOLVEDSURFACE" or "PLANESURFACE" or "LOFTEDSURFACE" or "SWEPTSURFACE" =>
             ("solids and regions are stored in a closed format", "Explode it to lines and arcs, or export its section.", true),
-        "MLINE" => ("a multiple line is not read", "Explode it to lines and arcs.", true),
-        "HELIX" or "MESH" or "POLYFACE" => ("a body in space is not read", "Draw its section in the plane.", true),
+        "MLINE" => ("it is a multiple line", "Explode it to lines and arcs.", true),
+        "HELIX" or "MESH" or "POLYFACE" => ("it is a body in space", "Draw its section in the plane.", true),
         "ACAD_PROXY_ENTITY" => ("it belongs to a program extension", "Explode it, or export without extensions.", true),
         "ACAD_TABLE" => ("a table " + NotOutline, "Nothing.", false),
         "SHAPE" => ("a symbol of a font " + NotOutline, "Nothing, unless it was meant as one.", false),

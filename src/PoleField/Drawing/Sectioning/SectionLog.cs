@@ -28,7 +28,7 @@ internal sealed class SectionLog(Sketch sketch)
             List<Finding> all = [.. _findings];
             if (_faults > MostFaults)
             {
-                all.Add(new Finding(Severity.Note, "more-faults", Invariant($"{_faults - MostFaults} more faults are not shown."), "Mend these first."));
+                all.Add(new Finding(Severity.Note, "more-faults", Invariant($"{_faults - MostFaults} more faults are not shown."), "Mend these first.") { File = sketch.Name });
             }
 
             foreach ((string layer, int count) in _tiny)
@@ -98,10 +98,10 @@ internal sealed class SectionLog(Sketch sketch)
     public string Place(Point metres)
     {
         Point d = ToDrawing(metres);
-        string text = Invariant($"({d.Y:0.######}, {d.Z:0.######}) {sketch.Unit.Name}");
+        string text = Pair(d) + " " + sketch.Unit.Name;
         return sketch.Unit.Metres == LengthUnit.Millimetre.Metres
             ? text
-            : text + Invariant($" = ({metres.Y * 1e3:0.######}, {metres.Z * 1e3:0.######}) mm");
+            : $"{text} = {Pair(1e3 * metres)} mm";
     }
 
     /// <summary>"LINE near line 212", "ARC, handle 3F"; empty when nothing is known.</summary>
@@ -109,6 +109,13 @@ internal sealed class SectionLog(Sketch sketch)
     {
         SketchCurve c = sketch.Curves[source];
         return c.Line > 0 ? Invariant($"{c.Kind} near line {c.Line}") : c.Handle is null ? c.Kind : $"{c.Kind}, handle {c.Handle}";
+    }
+
+    /// <summary>"LINE near line 212; LINE near line 340", "both of LWPOLYLINE near line 15".</summary>
+    public string Entities(int a, int b)
+    {
+        (string first, string second) = (Entity(a), Entity(b));
+        return first == second && first != sketch.Curves[a].Kind ? $"both of {first}" : $"{first}; {second}";
     }
 
     /// <summary>A length with a readable unit.</summary>
@@ -130,6 +137,9 @@ internal sealed class SectionLog(Sketch sketch)
         double Scaled(double x) => whole ? x * perMetre : x / sketch.Unit.Metres;
         return new Point(Scaled(metres.Y), Scaled(metres.Z));
     }
+
+    // Adding zero turns a rounded -0 into 0.
+    private static string Pair(Point p) => Invariant($"({Math.Round(p.Y, 6) + 0.0:0.######}, {Math.Round(p.Z, 6) + 0.0:0.######})");
 
     private static string Invariant(FormattableString text) => FormattableString.Invariant(text);
 }

@@ -28,7 +28,7 @@ internal static class SectionMessages
     public static Finding SelfCrossing(SectionLog log, Point at, Piece a, Piece b) => new(
         Severity.Fault,
         "self-crossing",
-        $"Curves of one layer cross at {log.Place(at)} ({log.Entity(a.Source)}; {log.Entity(b.Source)}).",
+        $"Curves of one layer cross at {log.Place(at)} ({log.Entities(a.Source, b.Source)}).",
         "Trim them, or put the outlines on layers of their own.");
 
     public static Finding Overlap(SectionLog log, string a, string b, double area, Point at) => new(
@@ -48,8 +48,8 @@ internal static class SectionMessages
     public static Finding OpenOutline(SectionLog log, string layer, (Point A, Point B) ends, (int A, int B) sources, double join) => new(
         Severity.Fault,
         "open-outline",
-        FormattableString.Invariant($"An outline is open on layer {layer}: ends {log.Place(ends.A)} and {log.Place(ends.B)} are {SectionLog.Length(ends.A.DistanceTo(ends.B))} apart (join tolerance {SectionLog.Length(join)}; {log.Entity(sources.A)}; {log.Entity(sources.B)})."),
-        "Draw the missing piece, or raise the join tolerance if the gap is meant to be closed.")
+        FormattableString.Invariant($"An outline is open on layer {layer}: ends {log.Place(ends.A)} and {log.Place(ends.B)} are {SectionLog.Length(ends.A.DistanceTo(ends.B))} apart (join tolerance {SectionLog.Length(join)}; {log.Entities(sources.A, sources.B)})."),
+        "Draw the missing piece, or raise the join tolerance ([sketch] join) if the gap is meant to be closed.")
     { Layer = layer, Size = ends.A.DistanceTo(ends.B) };
 
     public static Finding LooseCurve(SectionLog log, string layer, Point at, int source) => new(

@@ -2,7 +2,7 @@ using System.Buffers.Binary;
 using System.Globalization;
 using System.Text;
 using PoleField.Drawing;
-using Xunit;
+using Assert = Xunit.Assert;
 
 namespace PoleField.Tests.Drawing.Dxf;
 
