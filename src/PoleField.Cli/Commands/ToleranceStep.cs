@@ -14,6 +14,7 @@ namespace PoleField.Cli.Commands;
 internal static class ToleranceStep
 {
     private const double Loosest = 200e-6; // metres; common practice: what any mill keeps without asking
+    private const double UsualAllowance = 0.005; // of the gradient; common practice
 
     public static AnalysisStep Create()
     {
@@ -51,17 +52,16 @@ internal static class ToleranceStep
         int threads = request.Options.Threads;
         request.Progress(SolveProgress.Of("sensitivities"));
         var budget = ToleranceBudget.Of(Sensitivity.Of(solved.Solved, threads), TolerancesOf(section));
-        IReadOnlyList<FormAllowance> allowances = section.AllowGradient is { } share
-            ? budget.Allowances(1, share * Math.Abs(budget.Derivatives[1].Value), Loosest)
-            : [];
+        double share = section.AllowGradient ?? UsualAllowance;
+        var allowances = new FormAllowances(share, budget.Allowances(1, share * Math.Abs(budget.Derivatives[1].Value), Loosest));
         ToleranceTrial? trial = draws == 0
             ? null
             : ToleranceTrial.Run(budget, solved.Solved.Field.Aperture, new TrialOptions(draws, threads), Solved, request.Cancellation);
         var answer = new ToleranceAnswer(budget, allowances, trial);
         return new Analysis(
-            ToleranceText.Of(answer, section.AllowGradient, Loosest), [s => AnalysisJson.Write(ResultOutput.HeadOf(solved), answer, s)])
+            ToleranceText.Of(answer, Loosest), [s => AnalysisJson.Write(ResultOutput.HeadOf(solved), answer, s)])
         {
-            Pictures = [new ReportPicture(ToleranceFigure.Draw(budget))],
+            Pictures = [new ReportPicture(ToleranceFigure.Draw(budget, allowances))],
         };
 
         void Solved(int magnets) => request.Progress(SolveProgress.Of(FormattableString.Invariant($"magnet {magnets} of {draws} with random errors")));

@@ -6,39 +6,35 @@ namespace PoleField.Cli.Text;
 /// <summary>Tells a tolerance budget.</summary>
 internal static class ToleranceText
 {
-    private const double TooFarFromLinear = 0.2; // of the deviation found, from which on a remark says so
+    private static readonly string[] Names = ["field", "gradient", "spread", "mean gradient", "rms"];
+    private static readonly string[] Columns = [">field", ">gradient", ">spread, points", ">mean", ">rms, points"];
 
     /// <summary>The budget in words.</summary>
     /// <param name="answer">Budget, allowances and trial.</param>
-    /// <param name="allowed">What the gradient is allowed to be off by; null when no allowances were asked for.</param>
     /// <param name="loosest">Form error that is not exceeded in allowances, metres.</param>
-    public static Answer Of(ToleranceAnswer answer, double? allowed, double loosest)
+    public static Answer Of(ToleranceAnswer answer, double loosest)
     {
         ToleranceBudget budget = answer.Budget;
         List<AnswerTable> tables =
         [
             new(
                 "Tolerance budget, one sigma",
-                ["what is off", ">assumed", ">field", ">gradient", ">spread, points"],
+                ["what is off", ">assumed", .. Columns],
                 [
                     .. budget.Contributions.Select(c => (string[])[c.Name, c.Assumed, .. Effects(budget, c.OneSigma)]),
                     ["together (root of squares)", string.Empty, .. Effects(budget, budget.Total)],
                     ["all at one sigma, worst signs", string.Empty, .. Effects(budget, budget.Worst)],
                 ]),
-        ];
-        if (answer.Allowances.Count > 0)
-        {
-            tables.Add(new AnswerTable(
-                $"Loosest form, one sigma, that keeps the gradient within {Percent(allowed!.Value)}",
+            new(
+                $"Loosest form, one sigma, that keeps the gradient within {Percent(answer.Allowances.Gradient)}",
                 ["face", ">from y, z, mm", ">to y, z, mm", ">form, um"],
-                [.. Stretches(answer, loosest)]));
-        }
-
+                [.. Stretches(answer, loosest)]),
+        ];
         if (answer.Trial is { } trial)
         {
             tables.Add(new AnswerTable(
                 FormattableString.Invariant($"{trial.Draws} magnets with random errors, solved anew"),
-                ["one sigma", ">field", ">gradient", ">spread, points"],
+                ["one sigma", .. Columns],
                 [
                     ["of the budget", .. Effects(budget, trial.Predicted)],
                     ["found", .. Effects(budget, trial.Found)],
@@ -54,12 +50,14 @@ internal static class ToleranceText
         Percent(effects[0] / Math.Abs(budget.Derivatives[0].Value)),
         Percent(effects[1] / Math.Abs(budget.Derivatives[1].Value)),
         Percent(effects[2]),
+        Percent(effects[3] / Math.Abs(budget.Derivatives[3].Value)),
+        Percent(effects[4]),
     ];
 
     // Neighbouring stretches of one face with the same rounded allowance are one row.
     private static IEnumerable<string[]> Stretches(ToleranceAnswer answer, double loosest)
     {
-        IReadOnlyList<FormAllowance> all = answer.Allowances;
+        IReadOnlyList<FormAllowance> all = answer.Allowances.Stretches;
         int k = 0;
         while (k < all.Count)
         {
@@ -93,7 +91,7 @@ internal static class ToleranceText
     {
         List<string> remarks =
         [
-            "Each row moves field and gradient at the beam, and the spread of the gradient over the aperture, by this much at one sigma; rows are taken as independent.",
+            "Each row moves field and gradient at the beam, and spread, mean and rms of the gradient over the aperture, by this much at one sigma; rows are taken as independent.",
         ];
         if (trial is null)
         {
@@ -101,14 +99,11 @@ internal static class ToleranceText
         }
 
         remarks.Add($"Sampling error of what was found: {Percent(trial.SamplingError)} of it.");
-        if (Enumerable.Range(0, 2).Any(q => trial.Residual[q] > TooFarFromLinear * trial.Found[q]))
+        string[] beyond = [.. Names.Where((_, q) => trial.IsBeyondLinear(q) || trial.Disagrees(q))];
+        if (beyond.Length > 0)
         {
-            remarks.Add("The errors are too large for the linear budget; take the figures found.");
-        }
-
-        if (trial.Residual[2] > TooFarFromLinear * trial.Found[2])
-        {
-            remarks.Add("The spread does not follow the linear budget (in a symmetric magnet it grows with a shift of either sign); take the figures found.");
+            remarks.Add($"The linear budget is not enough for {string.Join(", ", beyond)}: take the figures found. "
+                + "(Spread and rms of a symmetric magnet grow with a shift of either sign, which no derivative knows.)");
         }
 
         return remarks;

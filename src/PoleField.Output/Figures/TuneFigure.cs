@@ -24,12 +24,12 @@ public static class TuneFigure
             {
                 Name = Name,
                 Title = "Tuned pole faces",
-                Caption = "Above: the faces as they were (dashed) and tuned"
+                Caption = "Above: the faces as they were (dashed) and tuned, z drawn larger than y"
                     + (times > 1 ? FormattableString.Invariant($", the move drawn {times:g3} times as large as it is. ") : ". ")
                     + "Below: outward move of the face where it was; positive where iron is added.",
                 Key = [new("tuned", FigureStyle.Main), new("before", FigureStyle.Reference)],
             },
-            new PlotRoom(620, 400, Left: 84, Right: 84));
+            new PlotRoom(620, 400, Left: 84, Right: 84, Bottom: 62));
         var panels = new Panels(figure.Model, columns: Math.Max(1, faces.Length), rows: 2);
         for (int c = 0; c < faces.Length; c++)
         {

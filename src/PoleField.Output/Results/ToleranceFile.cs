@@ -7,9 +7,14 @@ namespace PoleField.Output.Results;
 
 /// <summary>A tolerance budget with what was worked out beside it.</summary>
 /// <param name="Budget">Budget.</param>
-/// <param name="Allowances">Loosest form tolerances, empty when none were asked for.</param>
+/// <param name="Allowances">Loosest form tolerances.</param>
 /// <param name="Trial">Trial by re-solved magnets, if there was one.</param>
-public sealed record ToleranceAnswer(ToleranceBudget Budget, IReadOnlyList<FormAllowance> Allowances, ToleranceTrial? Trial);
+public sealed record ToleranceAnswer(ToleranceBudget Budget, FormAllowances Allowances, ToleranceTrial? Trial);
+
+/// <summary>Loosest form tolerances that together keep the gradient.</summary>
+/// <param name="Gradient">Relative one sigma of the gradient at the beam that they keep.</param>
+/// <param name="Stretches">Every stretch of the faces.</param>
+public sealed record FormAllowances(double Gradient, IReadOnlyList<FormAllowance> Stretches);
 
 internal sealed class ToleranceFile(AnalysisHead head, ToleranceAnswer answer) : AnalysisFile(Name, head)
 {
@@ -27,8 +32,11 @@ internal sealed class ToleranceFile(AnalysisHead head, ToleranceAnswer answer) :
     [JsonPropertyName("faces"), Description("Where on the faces an error matters.")]
     public IReadOnlyList<SensitiveFaceSection> Faces { get; } = [.. answer.Budget.Faces.Select((_, i) => new SensitiveFaceSection(answer.Budget, i))];
 
-    [JsonPropertyName("form_allowances"), Description("Loosest form error along each stretch that keeps the gradient within what the case allows; empty when it allows nothing.")]
-    public IReadOnlyList<AllowanceSection> Allowances { get; } = [.. answer.Allowances.Select(a => new AllowanceSection(answer.Budget, a))];
+    [JsonPropertyName("allowed_gradient_rel"), Description("Relative one sigma of G that the form allowances keep together: what the case allows, or 0.005.")]
+    public double? AllowedGradient { get; } = Finite(answer.Allowances.Gradient);
+
+    [JsonPropertyName("form_allowances"), Description("Loosest form error along each stretch that keeps the gradient within what is allowed.")]
+    public IReadOnlyList<AllowanceSection> Allowances { get; } = [.. answer.Allowances.Stretches.Select(a => new AllowanceSection(answer.Budget, a))];
 
     [JsonPropertyName("trial"), Description("Magnets with random errors, solved anew; null when none were asked for.")]
     public TrialSection? Trial { get; } = answer.Trial is { } trial ? new(answer.Budget, trial) : null;
@@ -50,10 +58,19 @@ internal sealed class ContributionSection(ToleranceBudget budget, ToleranceContr
 
     [JsonPropertyName("spread_abs"), Description("Change of the gradient's spread.")]
     public double? Spread { get; } = Finite(c.OneSigma[2]);
+
+    [JsonPropertyName("gradient_mean_rel"), Description("Relative change of the mean gradient over the aperture.")]
+    public double? Mean { get; } = EffectSection.Relative(budget, 3, c.OneSigma);
+
+    [JsonPropertyName("rms_abs"), Description("Change of the gradient's rms deviation over the aperture, relative to its mean.")]
+    public double? Rms { get; } = Finite(c.OneSigma[4]);
 }
 
 internal sealed class EffectSection(ToleranceBudget budget, IReadOnlyList<double> effects)
 {
+    /// <summary>Names of the members, in the order of <see cref="ToleranceBudget.Quantities"/>.</summary>
+    public static readonly IReadOnlyList<string> Members = ["field_rel", "gradient_rel", "spread_abs", "gradient_mean_rel", "rms_abs"];
+
     [JsonPropertyName("field_rel"), Description("Relative change of B at the beam.")]
     public double? Field { get; } = Relative(budget, 0, effects);
 
@@ -62,6 +79,12 @@ internal sealed class EffectSection(ToleranceBudget budget, IReadOnlyList<double
 
     [JsonPropertyName("spread_abs"), Description("Change of the gradient's spread.")]
     public double? Spread { get; } = Finite(effects[2]);
+
+    [JsonPropertyName("gradient_mean_rel"), Description("Relative change of the mean gradient over the aperture.")]
+    public double? Mean { get; } = Relative(budget, 3, effects);
+
+    [JsonPropertyName("rms_abs"), Description("Change of the gradient's rms deviation over the aperture, relative to its mean.")]
+    public double? Rms { get; } = Finite(effects[4]);
 
     public static double? Relative(ToleranceBudget budget, int quantity, IReadOnlyList<double> effects) =>
         Finite(effects[quantity] / Math.Abs(budget.Derivatives[quantity].Value));
@@ -130,4 +153,7 @@ internal sealed class TrialSection(ToleranceBudget budget, ToleranceTrial trial)
 
     [JsonPropertyName("beyond_linear"), Description("Deviation of what was found from the linear prediction, magnet by magnet.")]
     public EffectSection Residual { get; } = new(budget, trial.Residual);
+
+    [JsonPropertyName("linear_not_enough_for"), Description("Quantities for which the linear budget is not enough, named as the members above.")]
+    public IReadOnlyList<string> NotLinear { get; } = [.. EffectSection.Members.Where((_, q) => trial.IsBeyondLinear(q) || trial.Disagrees(q))];
 }

@@ -34,16 +34,16 @@ internal sealed class FaceFreedoms : ShapeFreedoms
     public override double[] AsDrawn => new double[Count];
 
     public override CrossSection SectionAt(double[] values) =>
-        MovedSection.Of(_section, _faces, (face, s) => MoveAt(face, s, values), _modes.Min(m => m.Spacing) / 2);
+        MovedSection.Of(_section, _faces, p => MoveAt(p.Face, p.ArcLength, values), _modes.Min(m => m.Spacing) / 2);
 
     public override BoundaryVelocities VelocitiesAt(double[] values, CrossSection section) => new FaceVelocities(
         _section,
-        MovedSection.MotionOf(_section, _faces, (face, s) => MoveAt(face, s, values)),
+        MovedSection.MotionOf(_section, _faces, p => MoveAt(p.Face, p.ArcLength, values)),
         [.. Enumerable.Range(0, Count).Select(k =>
         {
             var unit = new double[Count];
             unit[k] = 1;
-            return MovedSection.MotionOf(_section, _faces, (face, s) => MoveAt(face, s, unit));
+            return MovedSection.MotionOf(_section, _faces, p => MoveAt(p.Face, p.ArcLength, unit));
         })]);
 
     public override bool NeedsSmallerTool(CrossSection section)

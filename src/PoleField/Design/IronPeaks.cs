@@ -28,7 +28,9 @@ internal sealed class IronPeaks
         var peaks = new PriorityQueue<(int Element, int Point, double Field), double>();
         for (int e = 0; e < space.ElementCount; e++)
         {
-            if (solution.Problem.PhysicsOf(e).Law.SaturationPolarisation <= 0)
+            int region = space.Mesh.Regions[e];
+            int part = region < 0 ? -1 : solution.Magnet.Section.Regions[region].Part;
+            if (part < 0 || solution.Magnet.Roles[part].Kind != "iron")
             {
                 continue;
             }

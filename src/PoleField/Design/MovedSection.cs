@@ -10,8 +10,8 @@ internal static class MovedSection
     private const int MostPoints = 600;
     private const double TangentStep = 1e-6;
 
-    /// <summary>Outward move of a face at an arc length, metres.</summary>
-    public delegate double Move(Face face, double arcLength);
+    /// <summary>Outward move at a place of a face, metres.</summary>
+    public delegate double Move(FacePlace place);
 
     /// <summary>The section with its faces moved along their normals.</summary>
     /// <param name="section">Section.</param>
@@ -33,9 +33,16 @@ internal static class MovedSection
             }
         }
 
-        return BoundaryMotion.Of(section, (e, t) => edges[e] is not { } own
-            ? null
-            : move(own.Face, own.Edge.ArcLengthAt(t)) is not 0.0 and double by ? by * own.Edge.OutwardAt(t) : default(Point));
+        return BoundaryMotion.Of(section, (e, t) =>
+        {
+            if (edges[e] is not { } own)
+            {
+                return null;
+            }
+
+            var place = new FacePlace(own.Face, own.Edge.ArcLengthAt(t), section.Edges[e].Curve.At(t), own.Edge.OutwardAt(t));
+            return move(place) * place.Outward;
+        });
     }
 
     private static CrossSection Of(CrossSection section, BoundaryMotion motion, double spacing)
@@ -95,3 +102,10 @@ internal static class MovedSection
 
     private static double Angle(Point a, Point b) => Math.Atan2(a.Cross(b), a.Dot(b));
 }
+
+/// <summary>A place on a face, seen from one of its curves: at a corner the normal is that of the curve asked.</summary>
+/// <param name="Face">Face.</param>
+/// <param name="ArcLength">Length along the face, metres.</param>
+/// <param name="At">Place, metres.</param>
+/// <param name="Outward">Unit normal out of the iron.</param>
+internal readonly record struct FacePlace(Face Face, double ArcLength, Point At, Point Outward);

@@ -29,9 +29,13 @@ public sealed class ToleranceBudget
         ];
     }
 
-    /// <summary>The quantities of every list of effects: field and gradient at the beam, spread of the gradient.</summary>
+    /// <summary>
+    /// The quantities of every list of effects: field and gradient at the beam, spread, mean and rms of the gradient over the aperture.
+    /// </summary>
     public static IReadOnlyList<DesignQuantity> Quantities { get; } =
-        [DesignQuantity.Field, DesignQuantity.Gradient, DesignQuantity.GradientSpread];
+    [
+        DesignQuantity.Field, DesignQuantity.Gradient, DesignQuantity.GradientSpread, DesignQuantity.GradientMean, DesignQuantity.GradientRms,
+    ];
 
     /// <summary>The magnet.</summary>
     public Magnet Magnet => _magnet;

@@ -12,8 +12,19 @@ namespace PoleField.Design;
 public sealed record ToleranceTrial(
     int Draws, IReadOnlyList<double> Predicted, IReadOnlyList<double> Found, IReadOnlyList<double> Residual)
 {
+    private const double TooFar = 0.2; // of the deviation found
+
     /// <summary>Relative sampling error of a standard deviation found from so many draws, one sigma.</summary>
     public double SamplingError => 1 / Math.Sqrt(2.0 * (Draws - 1));
+
+    /// <summary>True when the linear budget of a quantity is not enough: what it leaves out is a good part of what was found.</summary>
+    /// <param name="quantity">Index into <see cref="ToleranceBudget.Quantities"/>.</param>
+    public bool IsBeyondLinear(int quantity) => Residual[quantity] > TooFar * Found[quantity];
+
+    /// <summary>True when budget and solves differ by more than three sampling errors.</summary>
+    /// <param name="quantity">Index into <see cref="ToleranceBudget.Quantities"/>.</param>
+    public bool Disagrees(int quantity) =>
+        Math.Abs(Found[quantity] - Predicted[quantity]) > 3 * SamplingError * Math.Max(Found[quantity], Predicted[quantity]);
 
     /// <summary>
     /// Draws errors of form, place, current, material and beam, and solves each magnet anew. Faces and places without a share in
@@ -131,18 +142,12 @@ internal sealed class TrialDraw
     /// <summary>The magnet with these errors; parts move with their joints closed.</summary>
     public Magnet Of(Magnet magnet, ToleranceBudget budget)
     {
-        double Move(Face face, double s)
+        double Move(FacePlace place)
         {
-            (Point shift, double turn) = _places[face.Part];
-            double form = _form[IndexOf(budget, face)](s);
-            if (shift == default && turn == 0)
-            {
-                return form;
-            }
-
-            (Point at, Point outward) = face.At(s);
-            Point pivot = budget.Derivatives[0].Parts[face.Part].Pivot;
-            return form + (shift + (turn * (at - pivot).Perpendicular)).Dot(outward);
+            int part = place.Face.Part;
+            (Point shift, double turn) = _places[part];
+            Point pivot = budget.Derivatives[0].Parts[part].Pivot;
+            return _form[IndexOf(budget, place.Face)](place.ArcLength) + (shift + (turn * (place.At - pivot).Perpendicular)).Dot(place.Outward);
         }
 
         double spacing = budget.Tolerances.FormSize > 0 ? budget.Tolerances.FormLength / 3 : double.PositiveInfinity;

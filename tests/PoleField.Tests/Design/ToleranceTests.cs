@@ -90,10 +90,11 @@ public class ToleranceTests
         ToleranceTrial trial = ToleranceTrial.Run(budget, Beam, new TrialOptions(12, 1));
 
         // The spread of a symmetric magnet has a kink there: it grows with a shift of either sign.
-        for (int q = 0; q < 2; q++)
+        foreach (int q in new[] { 0, 1, 3 })
         {
             Assert.InRange(trial.Residual[q] / trial.Found[q], 0, 0.05);
             Assert.InRange(trial.Found[q] / trial.Predicted[q], 1 - (3 * trial.SamplingError), 1 + (3 * trial.SamplingError));
+            Assert.False(trial.IsBeyondLinear(q) || trial.Disagrees(q));
         }
     }
 

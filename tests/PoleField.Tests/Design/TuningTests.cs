@@ -19,7 +19,7 @@ public class TuningTests
     public void ACircleMovedOutwardsIsALargerCircle()
     {
         Magnet magnet = Cylinder();
-        CrossSection moved = MovedSection.Of(magnet.Section, Face.Of(magnet), (_, _) => 1e-3, 1e-3);
+        CrossSection moved = MovedSection.Of(magnet.Section, Face.Of(magnet), _ => 1e-3, 1e-3);
 
         Region iron = moved.Regions.Single(r => r.Part == 0);
         Assert.Equal(1.0, iron.Area / (Math.PI * 121e-6), 1e-6);
@@ -31,9 +31,25 @@ public class TuningTests
     public void CornersGoWhereBothFacesWantThem()
     {
         Magnet magnet = new Drawn().Rectangle("IRON", 0, 0, 10, 6).Linear("IRON", 100).Magnet();
-        CrossSection moved = MovedSection.Of(magnet.Section, Face.Of(magnet), (_, _) => 1e-3, 1e-3);
+        CrossSection moved = MovedSection.Of(magnet.Section, Face.Of(magnet), _ => 1e-3, 1e-3);
 
         Assert.Equal(12e-3 * 8e-3, moved.Regions[1].Area, 1e-12);
+    }
+
+    [Fact]
+    public void FacesMovedByTheNormalPartOfAShiftAreShiftedWithTheirCorners()
+    {
+        Magnet magnet = new Drawn().Rectangle("IRON", 0, 0, 10, 6).Linear("IRON", 100).Magnet();
+        var shift = new Point(2e-5, -3e-5);
+        CrossSection moved = MovedSection.Of(magnet.Section, Face.Of(magnet), p => shift.Dot(p.Outward), 1e-3);
+
+        foreach ((SectionEdge before, SectionEdge after) in magnet.Section.Edges.Zip(moved.Edges).Where(e => e.First.Left > 0 || e.First.Right > 0))
+        {
+            for (double t = 0; t <= 1; t += 1.0 / 16)
+            {
+                Assert.InRange(after.Curve.DistanceTo(before.Curve.At(t) + shift), 0, 1e-12);
+            }
+        }
     }
 
     [Fact]
