@@ -14,9 +14,9 @@ public static class SketchFigure
     // Shade and dash together keep layers apart on a grey print.
     private static IReadOnlyList<Pen> LayerPens { get; } =
     [
-        new(FigureStyle.Ink, 1.6), new(OxyColor.FromRgb(0x1f, 0x5a, 0x99), 1.6, 6, 2.5), new(OxyColor.FromRgb(0xa8, 0x55, 0x0a), 1.6, 2.5, 2),
-        new(OxyColor.FromRgb(0x5a, 0x62, 0x6b), 1.6, 8, 2.5, 1.5, 2.5), new(OxyColor.FromRgb(0x2f, 0x7d, 0x7a), 2.2),
-        new(OxyColor.FromRgb(0x7a, 0x6a, 0x9a), 2.2, 4, 2), new(OxyColor.FromRgb(0x8a, 0x8f, 0x96), 1.8, 1.2, 1.8),
+        new(FigureStyle.Ink, 1.6), new(OxyColor.FromRgb(0x1f, 0x5a, 0x99), 1.6, 3, 1.5), new(OxyColor.FromRgb(0xa8, 0x55, 0x0a), 1.6, 2, 2),
+        new(OxyColor.FromRgb(0x5a, 0x62, 0x6b), 1.6, 4, 1.5, 1, 1.5), new(OxyColor.FromRgb(0x2f, 0x7d, 0x7a), 2.2),
+        new(OxyColor.FromRgb(0x7a, 0x6a, 0x9a), 2.2, 2, 1), new(OxyColor.FromRgb(0x8a, 0x8f, 0x96), 1.8, 1.2, 1.8),
     ];
 
     /// <summary>Draws a sketch and what was found in it.</summary>
@@ -57,7 +57,10 @@ public static class SketchFigure
                 .. sketch.Curves.Where(c => c.Layer == layers[i])
                     .Select(c => (IReadOnlyList<Point>)[.. SectionDrawing.Flatten(c.Curve, tolerance).Select(toMetres.Apply)]),
             ];
-            figure.Model.Annotations.Add(new Strokes(lines, LayerPens[i % LayerPens.Count], rim: 0));
+            // A thin whole line below the dashes: a gap in the picture is a gap in the drawing.
+            Pen pen = LayerPens[i % LayerPens.Count];
+            figure.Model.Annotations.Add(new Strokes(lines, new Pen(pen.Colour, 0.6), rim: 0));
+            figure.Model.Annotations.Add(new Strokes(lines, pen, rim: 0));
         }
 
         (int, Severity, Point)[] places =
