@@ -20,8 +20,9 @@ internal static class SizeRuns
     {
         writer.WriteLine("One solve with second-order elements, seconds; (2) on two threads");
         writer.WriteLine(
-            "unknowns   mesh  set-up  order+symbolic  Newton  residual  assemble (2)    factor    (2)   GFLOP  GFLOP/s  entries of L  solve    all (2)  peak MB");
+            "unknowns   mesh  set-up  order+symbolic  Newton  residual  assemble (2)    factor    (2)   GFLOP  GFLOP/s  entries of L  solve    all (2)  peak MB so far");
         var times = new List<(double Unknowns, double Seconds)>();
+        _ = Measure(Factors[0]); // compiled by now
         foreach (double factor in Factors)
         {
             Row row = Measure(factor);
@@ -33,7 +34,12 @@ internal static class SizeRuns
             }
         }
 
-        writer.WriteLine(FormattableString.Invariant($"all grows like unknowns to the power {Exponent(times):f2}\n"));
+        if (times.Count > 1)
+        {
+            writer.WriteLine(FormattableString.Invariant($"all grows like unknowns to the power {Exponent(times):f2}"));
+        }
+
+        writer.WriteLine();
     }
 
     /// <summary>The equations of the model problem on the mesh with the given factor.</summary>

@@ -11,9 +11,10 @@ internal static class WholeRuns
 
     public static void Print(TextWriter writer, double largestUnknowns)
     {
+        // First, so that the memory told with each size is not that of another table.
+        SizeRuns.Print(writer, largestUnknowns);
         PrintAccuracies(writer);
         PrintMeshing(writer);
-        SizeRuns.Print(writer, largestUnknowns);
     }
 
     private static void PrintAccuracies(TextWriter writer)
